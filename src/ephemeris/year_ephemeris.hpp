@@ -1,0 +1,65 @@
+#pragma once
+
+#include <Eigen/Dense>
+#include <array>
+#include <memory>
+#include <string_view>
+
+#include "base/angle.hpp"
+#include "base/time.hpp"
+
+namespace duskleaf {
+
+enum class Body { sun, moon, mercury, venus, mars, jupiter, saturn, uranus, neptune };
+inline constexpr std::array planets = {Body::mercury, Body::venus,  Body::mars,   Body::jupiter,
+                                       Body::saturn,  Body::uranus, Body::neptune};
+std::string_view body_name(Body);  // "sun", "moon", "mercury" ... as the tables spell it
+
+struct EquatorialPlace {
+  Angle right_ascension;  // [0, 360) degrees
+  Angle declination;
+  double distance_au;
+};
+
+/// Apparent geocentric places over a span of time, as Chebyshev tables: computed once (each body when first asked for),
+/// then constant and shared by all sites and threads. True equator and equinox of date (IAU 2006/2000B), with light-time,
+/// aberration and, for planets, the Sun's light deflection.
+/// Asking for a time outside [from, to] throws std::out_of_range.
+class YearEphemeris {
+ public:
+  YearEphemeris(Tt from, Tt to);
+  ~YearEphemeris();
+  YearEphemeris(const YearEphemeris&) = delete;
+  YearEphemeris& operator=(const YearEphemeris&) = delete;
+
+  Tt from() const;
+  Tt to() const;
+
+  /// Apparent geocentric position, au, true equator and equinox of date.
+  Eigen::Vector3d apparent(Body, Tt) const;
+  EquatorialPlace place(Body, Tt) const;
+  /// Geometric distance of the centres of Earth and body, au; Sun and Moon only (apsides).
+  double geometric_distance_au(Body, Tt) const;
+  /// Apparent geocentric ecliptic longitude and latitude, true ecliptic and equinox of date.
+  Angle ecliptic_longitude(Body, Tt) const;
+  Angle ecliptic_latitude(Body, Tt) const;
+  /// Distance of a planet (or of the Earth, for Body::sun) from the Sun, au.
+  double heliocentric_distance_au(Body, Tt) const;
+
+  /// Greenwich apparent sidereal time.
+  Angle apparent_sidereal_time(Ut) const;
+  Angle true_obliquity(Tt) const;
+  /// Rotation from ICRS to the true equator and equinox of date (bias, precession, nutation).
+  Eigen::Matrix3d icrs_to_date(Tt) const;
+  /// Barycentric velocity of the Earth in units of the speed of light, ICRS axes (aberration of stars).
+  Eigen::Vector3d earth_velocity(Tt) const;
+
+ private:
+  struct Impl;
+  std::unique_ptr<Impl> impl_;
+};
+
+/// Right ascension, declination and length of a vector.
+EquatorialPlace to_equatorial(const Eigen::Vector3d&);
+
+}  // namespace duskleaf
