@@ -21,10 +21,10 @@ struct EquatorialPlace {
   double distance_au;
 };
 
-/// Apparent geocentric places over a span of time, as Chebyshev tables: computed once (each body when first asked for),
-/// then constant and shared by all sites and threads. True equator and equinox of date (IAU 2006/2000B), with light-time,
-/// aberration and, for planets, the Sun's light deflection.
-/// Asking for a time outside [from, to] throws std::out_of_range.
+/// Apparent geocentric places over a span of time, as Chebyshev tables: computed once (each body
+/// when first asked for), then constant and shared by all sites and threads. True equator and
+/// equinox of date (IAU 2006/2000B), with light-time, aberration and, for planets, the Sun's light
+/// deflection. Asking for a time outside [from, to] throws std::out_of_range.
 class YearEphemeris {
  public:
   YearEphemeris(Tt from, Tt to);
@@ -51,7 +51,8 @@ class YearEphemeris {
   Angle true_obliquity(Tt) const;
   /// Rotation from ICRS to the true equator and equinox of date (bias, precession, nutation).
   Eigen::Matrix3d icrs_to_date(Tt) const;
-  /// Barycentric velocity of the Earth in units of the speed of light, ICRS axes (aberration of stars).
+  /// Barycentric velocity of the Earth in units of the speed of light, ICRS axes (aberration of
+  /// stars).
   Eigen::Vector3d earth_velocity(Tt) const;
 
  private:
