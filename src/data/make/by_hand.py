@@ -1,0 +1,2 @@
+BY_HAND = {}
+ASTERISMS = {}
