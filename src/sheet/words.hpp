@@ -20,7 +20,7 @@ class Words {
 
   /// The text of a key, such as "dome.facing-south"; throws std::out_of_range for a key that the language lacks.
   const std::string& operator()(std::string_view key) const;
-  /// The same with {name} replaced. "{{" stays a brace.
+  /// The same with each {name} replaced; throws std::out_of_range for a name that is not given.
   std::string operator()(std::string_view key, std::initializer_list<std::pair<std::string_view, std::string>>) const;
   bool has(std::string_view key) const;
 
@@ -32,7 +32,7 @@ class Words {
   std::string weekday_short(std::chrono::weekday) const;      // two or three letters
   std::string day_month(Date) const;                          // 15 March
   std::string night_of(Date evening) const;                   // night of 2-3 March
-  /// One of 16 directions as a word ("south-west"), or its short form ("SW").
+  /// One of 8 directions as a word ("south-west"); one of 16 in short form ("SSW").
   std::string direction(Angle azimuth) const;
   std::string direction_short(Angle azimuth) const;
   /// Decimal number with the language's mark and a true minus sign.
