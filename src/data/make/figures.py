@@ -133,8 +133,9 @@ def find(word, home, stars):
         where, _, letter = word.rpartition(":")
         where = where or home
         found = [s for s in stars if s["designated"] == where and s["charted"] and letter in (s["bayer"], s["flamsteed"])]
-    if len(found) != 1 or not found[0]["charted"]:
-        raise ValueError(f"{home} {word}: {[(s['hr'], s['charted']) for s in found]}")
+    found.sort(key=lambda s: s["v"])
+    if not found or not found[0]["charted"] or len(found) > 1 and found[1]["v"] < found[0]["v"] + 2:
+        raise ValueError(f"{home} {word}: {[(s['hr'], s['charted'], s['v']) for s in found]}")
     return found[0]["hr"]
 
 
