@@ -83,6 +83,12 @@ struct Site {
   Location where;
 };
 
+/// Something that is not wrong, but looks so.
+struct Doubt {
+  Location where;
+  std::string text;
+};
+
 struct Order {
   std::string path;                 // as given
   std::string folder;               // that holds it
@@ -93,18 +99,15 @@ struct Order {
   std::vector<Publication> publications;
   std::vector<Site> sites;          // those of the order, then those of sites_from
   struct Fonts {
-    std::string regular, bold, italic;
+    std::string regular, bold, italic;  // paths; empty: the built-in faces
   } fonts;
-};
-
-/// Something that is not wrong, but looks so.
-struct Doubt {
-  Location where;
-  std::string text;
+  std::vector<Doubt> noticed;       // while reading: keys that nothing prints yet
 };
 
 /// Reads and checks an order (and its sites_from). Throws OrderError at the first mistake, FileError when a file cannot be read.
 Order read_order(const std::string& path);
+/// The same from text that is not in a file yet; `path` is its name in messages and tells its folder.
+Order parse_order(std::string_view text, const std::string& path);
 /// Warnings: a zone more than three hours from the longitude's, a site at 0, 0, keys that nothing prints yet.
 std::vector<Doubt> doubts(const Order&);
 
