@@ -8,6 +8,7 @@
 #include <erfa.h>
 #include <mutex>
 #include <stdexcept>
+#include <vector>
 
 #include "ephemeris/chebyshev.hpp"
 #include "ephemeris/constants.hpp"
@@ -24,9 +25,9 @@ constexpr std::size_t bodies = 9;
 std::size_t index_of(Body body) { return static_cast<std::size_t>(body); }
 
 // Days and nodes of the pieces, chosen by measurement: see tests/ephemeris/tables_test.cpp.
-constexpr double rotation_piece = 8.0, earth_piece = 16.0, moon_piece = 8.0, apparent_piece = 8.0,
+constexpr double rotation_piece = 16.0, earth_piece = 32.0, moon_piece = 8.0, apparent_piece = 8.0,
                  planet_piece = 16.0;
-constexpr int rotation_nodes = 12, earth_nodes = 14, moon_nodes = 13, apparent_nodes = 13,
+constexpr int rotation_nodes = 14, earth_nodes = 18, moon_nodes = 13, apparent_nodes = 13,
               planet_nodes = 13;
 // Relative error at which a piece of a planet's apparent places is halved.
 constexpr double planet_tolerance = 0.0005 * arcsecond;
@@ -63,10 +64,12 @@ struct YearEphemeris::Impl {
     rotation = ChebyshevTable(PieceLayout::covering(begin, end, rotation_piece, rotation_nodes),
                               [](double t) { return nutation_and_origins(Tt(Days(t))); });
     const PieceLayout layout = PieceLayout::covering(begin, end, earth_piece, earth_nodes);
-    std::vector<Vector> positions, barycentres, velocities;
-    for (double t : layout.node_times())
-      earth_state(Tt(Days(t)), positions.emplace_back(), barycentres.emplace_back(),
-                  velocities.emplace_back());
+    std::vector<Vector> positions, velocities;
+    for (double t : layout.node_times()) {
+      const EarthState state = earth_state(Tt(Days(t)));
+      positions.push_back(state.from_sun);
+      velocities.push_back(state.velocity);
+    }
     earth_from_sun = ChebyshevTable(layout, positions);
     earth_velocity = ChebyshevTable(layout, velocities);
   }
