@@ -1,0 +1,119 @@
+#pragma once
+
+#include <functional>
+#include <optional>
+#include <span>
+#include <string>
+#include <vector>
+
+#include "sheet/block.hpp"
+#include "sheet/label_placer.hpp"
+
+namespace duskleaf {
+
+/// Diameter in mm of a star's dot. Area follows brightness, but not in full proportion, which no
+/// page could hold: area goes with the 0.7th power of it. Sirius 2.2 mm, magnitude 5 0.28 mm.
+double star_dot_mm(double magnitude);
+
+/// The faintest stars that a chart of this size shows, whatever the sky is like.
+inline constexpr double chart_limit = 5.0;
+
+/// The stars that charts can need, brightest first: charted ones down to the chart's limit and
+/// those of figures.
+std::span<const int> chart_stars();
+
+/// How a curve across a chart is drawn.
+struct GuideStyle {
+  double width_mm;
+  Ink ink;
+  std::vector<double> dash_mm;
+  double label_cost_per_mm;  // what a label pays for lying across it
+};
+
+/// A chart being made: stars, figures, curves, bodies and labels gather here, then `finish` finds
+/// room for the labels, lets the lines make way for them and draws all in order.
+class SkyChart {
+ public:
+  /// `outline` bounds what is drawn, `labels` (somewhat smaller) where labels may stand; `clip` is
+  /// the outline as a path.
+  SkyChart(const BlockContext&, const LabelRegion& outline, const LabelRegion& labels, Path clip);
+
+  /// Places every star of chart_stars(); `project` gives nothing for a star that the chart's plane
+  /// cannot hold.
+  void add_stars(double faintest, const std::function<std::optional<Point>(int star)>& project);
+  /// Lines of the figures of which at least two stars are drawn. A chart that closes on itself
+  /// gives its period in mm.
+  void add_figures(double period_mm = 0);
+  /// Names of constellations that `wanted` lets through, near their figures.
+  void name_constellations(const std::function<bool(int figure)>& wanted, double size_pt,
+                           double importance);
+  /// Names of the brightest named stars, at most `most` and none fainter than `faintest`; `always`
+  /// ones whatever comes.
+  void name_stars(double faintest, std::size_t most, std::span<const int> always_hr);
+  void name_asterisms();
+
+  /// A curve, given as the stretches of it that the chart holds. A label is set along it where
+  /// there is room.
+  void add_guide(const std::vector<std::vector<Point>>& stretches, const GuideStyle&,
+                 const std::string& label = {});
+  /// A label that interrupts a line, on the first free one of these points.
+  void label_on_line(const std::string& words, const std::vector<Point>& places);
+
+  void add_planet(Point, double magnitude, const std::string& name);
+  void add_moon(Point, double lit, Angle bright_limb_from_up, const std::string& name,
+                double radius_mm = 2.1);
+  void add_sun(Point, const std::string& name);
+  /// Any other mark; its dot-like extent keeps labels away.
+  void add_mark(Mark, Point centre, double diameter_mm);
+  void add_mark(Mark mark) { bodies_.push_back(std::move(mark)); }
+  void wish(LabelRequest request) { wishes_.push_back(std::move(request)); }
+
+  bool holds(Point p) const;
+  const BlockContext& context() const { return context_; }
+  LabelPlacer& placer() { return placer_; }
+  /// Where a star stands; nothing when it is not drawn.
+  std::optional<Point> drawn_star(int index) const;
+
+  /// Draws everything after the ground. Labels that found no room are counted in the tally.
+  void finish(std::vector<Mark>& out);
+
+  /// After finish: all labels, those along curves too, as boxes.
+  const std::vector<PlacedLabel>& labels() const { return labels_; }
+  const std::vector<Box>& label_boxes() const { return placer_.reserved(); }
+
+ private:
+  struct Guide {
+    std::vector<std::vector<Point>> stretches;
+    GuideStyle style;
+    std::string label;
+  };
+  void label_guide(const Guide&, std::vector<Mark>& texts);
+  LabelForm plain(std::string words) const;
+
+  const BlockContext& context_;
+  LabelRegion outline_;
+  Path clip_;
+  LabelPlacer placer_;
+  std::vector<std::optional<Point>> at_;  // by star index
+  std::vector<std::uint8_t> drawn_;       // by star index
+  Dots dots_;
+  std::vector<Guide> guides_;
+  std::vector<std::vector<Point>> figure_lines_;
+  std::vector<Mark> bodies_;
+  std::vector<LabelRequest> wishes_;
+  std::vector<PlacedLabel> labels_;
+};
+
+/// A direction in the horizon frame from hour angle and declination at a latitude.
+Horizontal horizontal_of(Angle hour_angle, Angle declination, Angle latitude);
+/// The inverse: hour angle (-180..180 degrees) and declination.
+std::pair<Angle, Angle> equatorial_of(const Horizontal&, Angle latitude);
+/// Right ascension and declination of the ecliptic at a longitude, mean obliquity of J2000 (good to
+/// 0.02 degrees, 1900-2100).
+std::pair<Angle, Angle> ecliptic_point(Angle longitude);
+/// Direction from one point of a sphere to another, counterclockwise from the sphere's pole side as
+/// seen from inside with the first coordinate growing to the left (`from` and `to` as longitude,
+/// latitude).
+Angle direction_to(std::pair<Angle, Angle> from, std::pair<Angle, Angle> to);
+
+}  // namespace duskleaf
