@@ -58,9 +58,13 @@ struct Place {
   double ra, dec, distance_km;
 };
 inline Place place(double ut, int body) {
-  double xx[6];
-  calc(tt_of(ut), body, SEFLG_EQUATORIAL, xx);
-  return {xx[0] * degree, xx[1] * degree, xx[2] * au_km};
+  double xx[6], true_xx[6];
+  const double tt = tt_of(ut);
+  calc(tt, body, SEFLG_EQUATORIAL, xx);
+  // The distance with light-time counts in the Solar System's frame, in which the Earth runs 40 km
+  // before the Moon's light arrives; the parallax wants that between the centres.
+  calc(tt, body, SEFLG_EQUATORIAL | SEFLG_TRUEPOS, true_xx);
+  return {xx[0] * degree, xx[1] * degree, true_xx[2] * au_km};
 }
 
 // Greenwich apparent sidereal time, radians.
