@@ -46,13 +46,13 @@ enum class Face : std::uint8_t { regular, bold, italic, light, condensed, conden
 struct Stroke {
   Path path;
   double width_mm;
-  Ink ink;
-  std::vector<double> dash_mm;  // empty: solid
+  Ink ink{};
+  std::vector<double> dash_mm{}; // empty: solid
   bool round = false;           // caps and joins
 };
 struct Fill {
   Path path;
-  Ink ink;
+  Ink ink{};
   bool even_odd = false;
 };
 /// Round dots of one ink: stars.
@@ -62,14 +62,14 @@ struct Dots {
     double diameter_mm;
   };
   std::vector<Dot> dots;
-  Ink ink;
+  Ink ink{};
 };
 struct Text {
   Point start;                 // left end of the baseline
   std::string words;           // UTF-8, one line
   Face face = Face::regular;
   double size_pt = 8.5;
-  Ink ink;
+  Ink ink{};
   double tracking_em = 0;      // extra space after each character; keep below 0.09 so that words stay words
   double turn_degrees = 0;     // counterclockwise about `start`
 };
@@ -77,7 +77,8 @@ struct Text {
 struct Image {
   Box box;
   std::shared_ptr<const std::string> png;
-  std::string description;
+  std::string description{};
+  bool grey = false;           // draw its colours as greys
 };
 struct Link {
   Box box;
