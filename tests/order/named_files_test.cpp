@@ -127,8 +127,9 @@ INSTANTIATE_TEST_SUITE_P(
                ":3:7: latitude is '91'; expected degrees from -90 to 90, or such as 54 10 48 N"},
         CsvRow{"unknown column", "id,nme,latitude\na,b,1\n",
                ":1:4: unknown key 'nme' in a site; did you mean 'name'?"},
-        CsvRow{"unknown nested column", "id,masthead.grup\na,b\n",
-               ":1:4: unknown key 'masthead.grup'"},
+        CsvRow{"unknown nested column",
+               "id,name,latitude,longitude,time_zone,masthead.grup\na,A,1,2,UTC,G\n",
+               ":1:38: unknown key 'grup' in a masthead; did you mean 'group'?"},
         CsvRow{"a column twice", "id,id\n", ":1:4: column 'id' is given twice; keep one"},
         CsvRow{"a row too short", header + "a,A\n",
                ":2:1: the row has 2 cells; expected 6, as in the header"},
@@ -142,8 +143,19 @@ INSTANTIATE_TEST_SUITE_P(
         CsvRow{"no name", header + "a,,1,2,UTC,\n",
                ":1:4: 'name' has no value; this key is needed"},
         CsvRow{"not UTF-8", "id,n\xE9\n",
-               ":1:5: byte 0xE9 is not UTF-8; save the file as UTF-8 text"},
-        CsvRow{"duplicate id", header + "a,A,1,2,UTC,\na,B,1,2,UTC,\n", ""}));
+               ":1:5: byte 0xE9 is not UTF-8; save the file as UTF-8 text"}));
+
+TEST(SitesCsv, DuplicateIdNamesBothPlaces) {
+  const ScratchFolder folder;
+  const std::string csv = folder.write("s.csv", header + "a,A,1,2,UTC,\nA,B,1,2,UTC,\n");
+  const std::string path = folder.write(
+      "o.yaml", "year: 2027\npublications: [{ template: monthly-handout }]\nsites_from: s.csv\n");
+  EXPECT_EQ(
+      error_of(path),
+      fmt::format(
+          "{0}:3:1: the site id 'A' is used twice; expected another (the first stands at {0}:2:1)",
+          csv));
+}
 
 TEST(SitesCsv, MissingFileIsToldWhereItIsNamed) {
   const ScratchFolder folder;
