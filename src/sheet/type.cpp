@@ -35,6 +35,14 @@ bool is_invisible(char32_t c) {
 bool is_control(char32_t c) {
   return c < 0x20 || (c >= 0x7F && c < 0xA0) || c == 0x2028 || c == 0x2029;
 }
+/// Width of a space of another kind as a part of the plain one; 0 for other characters. From
+/// memory.
+double part_of_space(char32_t c) {
+  if (c == 0xA0) return 1;
+  if (c == 0x2006 || c == 0x2009 || c == 0x202F) return 0.7;
+  return c == 0x200A ? 0.4 : 0;
+}
+bool is_special(char32_t c) { return is_control(c) || is_invisible(c) || part_of_space(c) > 0; }
 
 /// Reads the character at `at` and moves behind it; a byte that is not UTF-8 reads as a question
 /// mark.
@@ -83,6 +91,17 @@ struct TypeSet::Impl {
     return other ? *fallback : *faces[static_cast<std::size_t>(face)];
   }
 
+  std::vector<Row> fallback_rows = std::vector<Row>(table_size);
+
+  Impl() {
+    const std::vector<bool> has = fallback->coverage(table_size);
+    for (char32_t c = 0; c < table_size; ++c) {
+      if (!has[c]) continue;
+      if (const auto glyph = fallback->glyph(c))
+        fallback_rows[c] = {glyph->advance, glyph->id, -1, true, c};
+    }
+  }
+
   Row look_up(const Font& face, char32_t character) const {
     if (is_control(character)) character = U' ';
     if (is_invisible(character)) return {};
@@ -90,13 +109,10 @@ struct TypeSet::Impl {
       return {own->advance, own->id, static_cast<std::int16_t>(Font::kern_slot(character)), false,
               character};
     // Spaces of other widths: the face's own space, so that the line stays in one font.
-    const auto space = [&](double part) {
-      const auto plain = face.glyph(U' ');
-      return Row{plain->advance * part, plain->id, -1, false, character};
-    };
-    if (character == 0xA0) return space(1);
-    if (character == 0x202F || character == 0x2009 || character == 0x2006) return space(0.7);
-    if (character == 0x200A) return space(0.4);
+    if (const double part = part_of_space(character); part > 0) {
+      const auto space = face.glyph(U' ');
+      return {space->advance * part, space->id, -1, false, character};
+    }
     if (const auto other = fallback->glyph(character))
       return {other->advance, other->id, -1, true, character};
     return look_up(face, replacement);
@@ -104,9 +120,16 @@ struct TypeSet::Impl {
 
   void fill(std::size_t index) {
     const Font& face = *faces[index];
+    const std::vector<bool> own = face.coverage(table_size);
+    const Row unknown = look_up(face, replacement);
     std::vector<Row>& table = rows[index];
     table.resize(table_size);
-    for (char32_t c = 0; c < table_size; ++c) table[c] = look_up(face, c);
+    for (char32_t c = 0; c < table_size; ++c) {
+      if (own[c] || is_special(c))
+        table[c] = look_up(face, c);
+      else
+        table[c] = fallback_rows[c].character != 0 ? fallback_rows[c] : unknown;
+    }
     const auto digits = std::span(table).subspan(U'0', 10);
     const double widest = std::ranges::max_element(digits, {}, &Row::advance)->advance;
     for (Row& digit : digits) digit.advance = widest;

@@ -165,6 +165,15 @@ std::optional<Font::Glyph> Font::glyph(char32_t character) const {
   return Glyph{id, hb_font_get_glyph_h_advance(font_.get(), id) * per_mille_};
 }
 
+std::vector<bool> Font::coverage(char32_t end) const {
+  std::vector<bool> has(end);
+  const std::unique_ptr<hb_set_t, decltype(&hb_set_destroy)> all(hb_set_create(), &hb_set_destroy);
+  hb_face_collect_unicodes(face_.get(), all.get());
+  for (hb_codepoint_t c = HB_SET_VALUE_INVALID; hb_set_next(all.get(), &c) != 0 && c < end;)
+    has[c] = true;
+  return has;
+}
+
 double Font::kern(char32_t left, char32_t right) const {
   const std::array<std::uint32_t, 2> pair{left, right};
   unsigned count = 0;

@@ -6,6 +6,7 @@
 #include <optional>
 #include <string>
 #include <string_view>
+#include <vector>
 
 struct hb_face_t;
 struct hb_font_t;
@@ -30,6 +31,8 @@ class Font {
   };
   /// Digits come as the font's equal-width lining ones where it has such.
   std::optional<Glyph> glyph(char32_t) const;
+  /// For each character below `end`: whether the font has it.
+  std::vector<bool> coverage(char32_t end) const;
   /// What to add between two characters that both have glyphs here.
   double kern(char32_t left, char32_t right) const;
   /// The same for characters of `kern_slot`; remembered, about 2 ns when warm.
