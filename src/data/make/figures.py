@@ -65,14 +65,14 @@ def cross(a, b, c, d):
 
 
 def joined(a, b, lines):
-    seen, todo = {a}, [a]
-    while todo:
-        x = todo.pop()
+    seen, reached = {a}, [a]
+    while reached:
+        x = reached.pop()
         for p, q in lines:
             for y, z in ((p, q), (q, p)):
                 if y == x and z not in seen:
                     seen.add(z)
-                    todo.append(z)
+                    reached.append(z)
     return b in seen
 
 
