@@ -24,7 +24,15 @@ struct EquatorialPlace {
 /// Apparent geocentric places over a span of time, as Chebyshev tables: computed once (each body
 /// when first asked for), then constant and shared by all sites and threads. True equator and
 /// equinox of date (IAU 2006/2000B), with light-time, aberration and, for planets, the Sun's light
-/// deflection. Asking for a time outside [from, to] throws std::out_of_range.
+/// deflection. ELP/MPP02, VSOP87B and, for the Earth, ERFA's eraEpv00.
+///
+/// Largest errors of place against JPL DE431 over 1900-2100, in 20,000 random dates for each body:
+///   Sun 0.016", Moon 0.104" (rms 0.021"), Mercury 0.34", Venus 0.11", Mars 0.37", Jupiter 0.43",
+///   Saturn 0.33", Uranus 1.5", Neptune 2.2"
+/// (Mercury's behind the Sun's disc; 0.04" elsewhere). The tables add less than 0.0002" for Sun and
+/// Moon, 0.001" for planets. Beyond 1900-2100 the errors grow slowly; nothing is checked there. TT
+/// stands for TDB: 2 ms at most.
+/// Asking for a time outside [from, to] throws std::out_of_range.
 class YearEphemeris {
  public:
   YearEphemeris(Tt from, Tt to);
