@@ -49,7 +49,8 @@ struct TimeSpan {
   Ut from, to;
 };
 
-/// One night, from 12:00 civil time of its date to 12:00 of the next. Times are empty when they do not happen in it.
+/// One night, from 12:00 civil time of its date to 12:00 of the next (the next that the zone has; a skipped date's night is
+/// empty). Times are empty when they do not happen in it; the first dusk and the last dawn where a graze gives more.
 struct Night {
   Date date;
   Ut from, to;
@@ -58,6 +59,7 @@ struct Night {
   std::vector<Ut> moonrises, moonsets;     // within the night's 24 hours, in order
   bool moon_up_at_start;                   // at the night's first moment (12:00)
   Presence sun;                            // over the 24 hours
+  std::vector<TimeSpan> sun_down;          // Sun below -50', in order; all of the night where the Sun does not rise
   Presence moon;                           // between sunset and sunrise (over the 24 hours where the Sun does neither)
   bool moon_up_at_dusk;                    // at sunset; at the darkest moment where there is none
   double moon_lit;                         // fraction at the night's middle
@@ -66,18 +68,19 @@ struct Night {
   std::vector<TimeSpan> dark;              // Sun below -18 degrees and the Moon down, in order
   Angle dark_limit;                        // Sun's altitude that `dark_or_darkest` uses: -18, or -12, -6 where the month has none
   std::vector<TimeSpan> dark_or_darkest;   // as dark, with dark_limit
-  std::vector<Event> events;               // every instant of the night, in order (a graze can set twice)
+  std::vector<Event> events;               // every instant of the night, global ones too, in order (a graze can set twice)
   std::vector<std::string> notes;          // keys: see note_keys below
 };
 // Note keys, each a word of words/LANG.yaml: sun-up-all-night, sun-down-all-day, no-civil-dark (never below -6),
 // no-nautical-dark (never below -12), no-astronomical-dark (never below -18), moon-up-all-night, moon-down-all-night,
-// no-moonrise, no-moonset, two-moonrises, two-moonsets, clock-change, short-date (the zone skipped a date)
+// no-moonrise, no-moonset, two-moonrises, two-moonsets (in the 24 hours), clock-change, short-date (the zone skipped this date).
+// Of the first and the three lacks of darkness only the greatest is given.
 
 /// Civil days, for daily tables of Sun and Moon.
 struct CivilDay {
   Date date;
   bool skipped = false;           // the zone skipped this date
-  std::vector<Event> events;      // those whose civil minute, rounded, falls on this date; in order
+  std::vector<Event> events;      // those (global ones too) whose civil minute, rounded, falls on this date; in order
 };
 
 enum class FigureState { up, partly_up, below };
@@ -132,19 +135,20 @@ struct EveningSky {
   std::vector<ChartFit> fits;     // when this same sky stands there through the month, in order of date
 };
 
-/// The Moon as it leans in the site's sky at a moment.
+/// The Moon as it leans in the site's sky: at the evening's clock time if it is up then, else at its highest while the Sun is
+/// down that night, else at its highest in the night's 24 hours.
 struct MoonLook {
   Ut at;
   double lit;
   Angle bright_limb_from_zenith;  // position angle of the bright limb's middle, counterclockwise from the zenith as the observer faces it
-  bool up;
+  bool up;                        // at the evening's clock time; false: `at` is another moment
 };
 
 struct SiteYear {
   Place place;
   Span span;
   std::vector<Event> global;      // in the local span, ±1 month at its ends
-  std::vector<Event> local;       // sorted
+  std::vector<Event> local;       // the site's, clock changes too; sorted; a day more at both ends of the span
   std::vector<ClockChange> clock_changes;
   std::vector<CivilDay> days;
   std::vector<Night> nights;      // one for each date of the span
