@@ -6,6 +6,7 @@
 #include <variant>
 #include <vector>
 
+#include "almanac/best_nights.hpp"
 #include "almanac/site_year.hpp"
 
 namespace duskleaf {
@@ -31,7 +32,6 @@ class OrderError : public std::exception {
 enum class InkMode { colour, grey };
 enum class Binding { none, edge, top };
 enum class FileSplit { months, year };
-enum class Aim { any, dark, moon };
 
 struct Publication {
   std::string template_name;        // one of ours, or a path as written
@@ -95,6 +95,7 @@ struct Order {
   Span span;
   bool starts_in_january;           // `year:` rather than `start:`
   std::string language = "en";
+  Location language_at;             // where it is named; the order's beginning when it is not
   bool clock_12 = false;
   std::vector<Publication> publications;
   std::vector<Site> sites;          // those of the order, then those of sites_from
