@@ -60,7 +60,7 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
   double right = area.right();
   if (!c.site.masthead.link.empty()) {
     const Box square{right - height, area.y, height, height};
-    draw_qr_code(c.site.masthead.link, square, c.theme.black, out);
+    out.push_back(Fill{qr_code(c.site.masthead.link, square), c.theme.black});
     out.push_back(Link{square, c.site.masthead.link});
     right -= height + 3;
   }
