@@ -52,7 +52,7 @@ async function moon () {
   const w1 = [...moonHeader.slice(1), '# Mean longitude of the Moon, W1 = sum of w1_rad * T^power, radians, T = Julian centuries (TDB) since J2000.',
     'power,w1_rad', ...m.W1.map((x, k) => `${k},${x}`)]
   writeFileSync(join(target, 'elp_mpp02_w1.csv'), w1.join('\n') + '\n')
-  report('moon', m, rows, 1, (r) => r.slice(2).map(Number), [1, 1, 1])
+  report('moon', m, rows, 1)
 }
 
 // semi-major axis in au and the least distance from the Earth: how much a heliocentric error is seen enlarged
@@ -80,7 +80,7 @@ async function planet (name) {
       }
     }
   }
-  const cut = report(name, m, rows, 0.1, (r) => r.slice(2).map(Number), [axis])
+  const cut = report(name, m, rows, 0.1)
   const header = [
     `# ${name[0].toUpperCase() + name.slice(1)}: VSOP87B, heliocentric, dynamical ecliptic and equinox J2000; ${rows.length} terms of the package's ${all}.`,
     '# source: P. Bretagnon & G. Francou 1988, "Planetary theories in rectangular and spherical variables", A&A 202, 309; as carried by npm',
@@ -93,9 +93,9 @@ async function planet (name) {
 }
 
 /** Largest difference of the whole and the shortened series at 401 instants. */
-function report (name, m, rows, span, numbers, _) {
+function report (name, m, rows, span) {
   const moonSeries = name === 'moon'
-  const parsed = rows.map((r) => r.split(',')).map((r) => [r[0], Number(r[1]), ...numbers(r)])
+  const parsed = rows.map((r) => r.split(',')).map((r) => [r[0], Number(r[1]), ...r.slice(2).map(Number)])
   const term = (t, p, a, f) => {
     let x = 0
     for (let k = f.length - 1; k >= 0; k--) x = x * t + f[k]
