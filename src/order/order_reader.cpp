@@ -49,6 +49,7 @@ void read_span(const MapReader& map, Order& order) {
 void read_habits(const MapReader& map, Order& order) {
   static const std::vector<std::string_view> languages = {"en", "es", "fr", "de",
                                                           "pt", "it", "el", "uk"};
+  order.language_at = map.where("language");
   if (const YamlValue* language = map.find("language"))
     order.language = languages[read_choice(*language, "language", languages)];
   order.clock_12 =
