@@ -29,10 +29,10 @@ struct EquatorialPlace {
 /// Largest errors of place against JPL DE431 over 1900-2100, in 20,000 random dates for each body:
 ///   Sun 0.016", Moon 0.104" (rms 0.021"), Mercury 0.34", Venus 0.11", Mars 0.37", Jupiter 0.43",
 ///   Saturn 0.33", Uranus 1.5", Neptune 2.2"
-/// (Mercury's behind the Sun's disc; 0.04" elsewhere). The tables add less than 0.0002" for Sun and
-/// Moon, 0.001" for planets. Beyond 1900-2100 the errors grow slowly; nothing is checked there. TT
-/// stands for TDB: 2 ms at most.
-/// Asking for a time outside [from, to] throws std::out_of_range.
+/// (Mercury's behind the Sun's disc; below 0.05" elsewhere). The tables add less than 0.0002" for
+/// Sun and Moon, 0.001" for planets. Beyond 1900-2100 the errors grow slowly; nothing is checked
+/// there. TT stands for TDB: 2 ms at most. Asking for a time outside [from, to] throws
+/// std::out_of_range.
 class YearEphemeris {
  public:
   YearEphemeris(Tt from, Tt to);
@@ -51,7 +51,7 @@ class YearEphemeris {
   /// Apparent geocentric ecliptic longitude and latitude, true ecliptic and equinox of date.
   Angle ecliptic_longitude(Body, Tt) const;
   Angle ecliptic_latitude(Body, Tt) const;
-  /// Distance of a planet (or of the Earth, for Body::sun) from the Sun, au.
+  /// Distance of a planet, the Moon, or the Earth (for Body::sun) from the Sun, au.
   double heliocentric_distance_au(Body, Tt) const;
 
   /// Greenwich apparent sidereal time.
