@@ -100,7 +100,8 @@ void LabelPlacer::add_dot(Point centre, double diameter_mm, bool hard) {
   const auto index = static_cast<std::uint32_t>(dots_.size());
   const double r = diameter_mm / 2;
   dots_.push_back({centre, r, hard});
-  for_cells({centre.x - r, centre.y - r, 2 * r, 2 * r},
+  largest_dot_ = std::max(largest_dot_, r);
+  for_cells({centre.x, centre.y, 0, 0},
             [&](std::size_t cell) { cells_[cell].dots.push_back(index); });
 }
 
@@ -116,6 +117,7 @@ void LabelPlacer::add_line(Point from, Point to, double cost_per_mm) {
     const Point a = at(i), b = at(i + 1);
     const auto index = static_cast<std::uint32_t>(lines_.size());
     lines_.push_back({a, b, cost_per_mm});
+    line_seen_.push_back(0);
     for_cells({std::min(a.x, b.x), std::min(a.y, b.y), std::abs(a.x - b.x), std::abs(a.y - b.y)},
               [&](std::size_t cell) { cells_[cell].lines.push_back(index); });
   }
@@ -127,36 +129,39 @@ void LabelPlacer::reserve(const Box& box) {
   for_cells(box, [&](std::size_t cell) { cells_[cell].boxes.push_back(index); });
 }
 
-std::optional<double> LabelPlacer::cost_of(const Box& box) const {
+std::optional<double> LabelPlacer::cost_of(const Box& box, double limit) const {
   const Box padded = grown(box, padding_mm);
   if (!region_.contains(padded)) return std::nullopt;
-  bool free = true;
+  bool stands = true;
   for_cells(padded, [&](std::size_t cell) {
-    for (const auto i : cells_[cell].boxes) free = free && !overlap(padded, boxes_[i]);
+    for (const auto i : cells_[cell].boxes) stands = stands && !overlap(padded, boxes_[i]);
   });
-  if (!free) return std::nullopt;
+  if (!stands) return std::nullopt;
 
   double cost = 0;
-  std::vector<std::uint32_t> met_dots, met_lines;
-  for_cells(padded, [&](std::size_t cell) {
-    met_dots.insert(met_dots.end(), cells_[cell].dots.begin(), cells_[cell].dots.end());
-    met_lines.insert(met_lines.end(), cells_[cell].lines.begin(), cells_[cell].lines.end());
+  constexpr double hard_margin = 0.25, soft_margin = 0.1;
+  for_cells(grown(box, largest_dot_ + hard_margin), [&](std::size_t cell) {
+    for (const auto i : cells_[cell].dots) {
+      const Dot& dot = dots_[i];
+      const double reach = dot.radius + (dot.hard ? hard_margin : soft_margin);
+      const double dx = std::max({box.x - dot.centre.x, 0.0, dot.centre.x - box.right()});
+      const double dy = std::max({box.y - dot.centre.y, 0.0, dot.centre.y - box.bottom()});
+      if (dx * dx + dy * dy >= reach * reach) continue;
+      stands = stands && !dot.hard;
+      cost += 1.0 + 6.0 * dot.radius;
+    }
   });
-  for (auto* met : {&met_dots, &met_lines}) {
-    std::sort(met->begin(), met->end());
-    met->erase(std::unique(met->begin(), met->end()), met->end());
-  }
-  for (const auto i : met_dots) {
-    const Dot& dot = dots_[i];
-    const double reach = dot.radius + (dot.hard ? 0.25 : 0.1);
-    const double dx = std::max({box.x - dot.centre.x, 0.0, dot.centre.x - box.right()});
-    const double dy = std::max({box.y - dot.centre.y, 0.0, dot.centre.y - box.bottom()});
-    if (dx * dx + dy * dy >= reach * reach) continue;
-    if (dot.hard) return std::nullopt;
-    cost += 1.0 + 6.0 * dot.radius;
-  }
-  for (const auto i : met_lines)
-    cost += lines_[i].cost_per_mm * length_inside(lines_[i].from, lines_[i].to, padded);
+  if (!stands || cost > limit) return std::nullopt;
+  ++question_;
+  for_cells(padded, [&](std::size_t cell) {
+    for (const auto i : cells_[cell].lines) {
+      if (line_seen_[i] == question_) continue;
+      line_seen_[i] = question_;
+      const Line& line = lines_[i];
+      cost += line.cost_per_mm * length_inside(line.from, line.to, padded);
+    }
+  });
+  if (cost > limit) return std::nullopt;
   return cost;
 }
 
@@ -206,7 +211,7 @@ std::optional<PlacedLabel> LabelPlacer::seat(const LabelRequest& request) const 
     const auto consider = [&](double x, double y, double extra) {
       if (extra >= least) return;
       const Box box{x, y, size.width, size.height};
-      const auto cost = cost_of(box);
+      const auto cost = cost_of(box, least - extra);
       if (!cost || *cost + extra >= least) return;
       least = *cost + extra;
       best = box;

@@ -61,9 +61,9 @@ class LabelPlacer {
   /// Places all requests; those that find no room are left out.
   std::vector<PlacedLabel> place(const std::vector<LabelRequest>&);
 
-  /// What a box would cover; nullopt where it cannot stand. Labels of another make (turned ones)
-  /// ask and then reserve.
-  std::optional<double> cost_of(const Box&) const;
+  /// What a box would cover; nullopt where it cannot stand or where that comes to more than
+  /// `limit`. Labels of another make (turned ones) ask and then reserve.
+  std::optional<double> cost_of(const Box&, double limit = 1e9) const;
   void reserve(const Box&);
   const std::vector<Box>& reserved() const { return boxes_; }
 
@@ -81,7 +81,8 @@ class LabelPlacer {
     double cost_per_mm;
   };
   struct Cell {
-    std::vector<std::uint32_t> dots, lines, boxes;
+    std::vector<std::uint32_t> dots;          // by their centres
+    std::vector<std::uint32_t> lines, boxes;  // by all cells that they touch
   };
   template <class Visit>
   void for_cells(const Box&, Visit) const;
@@ -95,6 +96,10 @@ class LabelPlacer {
   std::vector<Dot> dots_;
   std::vector<Line> lines_;
   std::vector<Box> boxes_;
+  double largest_dot_ = 0;
+  mutable std::vector<std::uint32_t>
+      line_seen_;  // the last question that met a line, so that none counts twice
+  mutable std::uint32_t question_ = 0;
 };
 
 /// The pieces of a polyline that lie outside all the boxes grown by `gap_mm`: lines make way for

@@ -14,8 +14,8 @@
 namespace duskleaf {
 namespace {
 
-constexpr double dot_at_zero_mm = 1.379;      // so that Sirius (-1.46) has 2.2 mm
-constexpr double dot_per_magnitude = -0.139;  // log10 of the diameter
+constexpr double dot_at_zero_mm = 1.5;       // so that Sirius (-1.46) has 2.4 mm
+constexpr double dot_per_magnitude = -0.14;  // log10 of the diameter
 
 std::vector<int> find_chart_stars() {
   const auto all = stars();
@@ -115,11 +115,11 @@ LabelForm SkyChart::plain(std::string words) const {
 }
 
 void SkyChart::add_guide(const std::vector<std::vector<Point>>& stretches, const GuideStyle& style,
-                         const std::string& label) {
+                         const std::string& label, bool first) {
   for (const auto& stretch : stretches)
     for (std::size_t i = 0; i + 1 < stretch.size(); ++i)
       placer_.add_line(stretch[i], stretch[i + 1], style.label_cost_per_mm);
-  guides_.push_back({stretches, style, label});
+  guides_.push_back({stretches, style, label, first});
 }
 
 void SkyChart::label_on_line(const std::string& words, const std::vector<Point>& places) {
@@ -134,7 +134,7 @@ void SkyChart::label_on_line(const std::string& words, const std::vector<Point>&
 }
 
 void SkyChart::add_planet(Point p, double magnitude, const std::string& name) {
-  const double diameter = std::max(star_dot_mm(magnitude), 1.25);
+  const double diameter = std::clamp(star_dot_mm(magnitude), 1.3, 2.3);
   // A ring, so that a planet differs from a star under any light.
   bodies_.push_back(Fill{Path::circle(p, diameter / 2 + 0.25), context_.theme.paper});
   bodies_.push_back(
@@ -156,13 +156,15 @@ void SkyChart::add_mark(Mark mark, Point centre, double diameter_mm) {
 }
 
 void SkyChart::finish(std::vector<Mark>& out) {
+  std::vector<Mark> texts;
+  for (const Guide& guide : guides_)
+    if (!guide.label.empty() && guide.first) label_guide(guide, texts);
   labels_ = placer_.place(wishes_);
   context_.tally.labels_left_out += static_cast<int>(wishes_.size() - labels_.size());
-  std::vector<Mark> texts;
   for (const PlacedLabel& label : labels_)
     for (const Text& text : label.texts) texts.push_back(text);
   for (const Guide& guide : guides_)
-    if (!guide.label.empty()) label_guide(guide, texts);
+    if (!guide.label.empty() && !guide.first) label_guide(guide, texts);
 
   auto group = std::make_shared<ClipGroup>();
   group->clip = clip_;
@@ -182,7 +184,7 @@ void SkyChart::finish(std::vector<Mark>& out) {
     for (const auto& piece : break_at(line, placer_.reserved(), 0.3))
       figure_path.move(piece.front()).line(piece.back());
   if (!figure_path.verbs.empty())
-    group->marks.push_back(Stroke{figure_path, 0.17, context_.theme.figure, {}, false});
+    group->marks.push_back(Stroke{figure_path, 0.18, context_.theme.figure, {}, false});
   if (!dots_.dots.empty()) group->marks.push_back(dots_);
   out.push_back(group);
   out.insert(out.end(), bodies_.begin(), bodies_.end());
@@ -208,7 +210,7 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
       Point a = stretch[i], b = stretch[j];
       if (a.x > b.x) std::swap(a, b);
       const double turn = std::atan2(a.y - b.y, b.x - a.x);  // counterclockwise, y runs down
-      if (std::abs(turn) > 1.2) continue;
+      if (std::abs(turn) > 1.45) continue;
       const double c = std::cos(turn), s = std::sin(turn);
       // How far the curve bows above its chord: the label stands clear of that.
       double bow = 0;
@@ -229,7 +231,7 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
             x0 = std::min(x0, x), x1 = std::max(x1, x), y0 = std::min(y0, y), y1 = std::max(y1, y);
           }
         boxes.push_back({x0, y0, x1 - x0, y1 - y0});
-        cost += placer_.cost_of(boxes.back()).value_or(1e9);
+        cost += placer_.cost_of(boxes.back(), least).value_or(1e9);
       }
       if (cost >= least) continue;
       least = cost;

@@ -12,7 +12,7 @@
 namespace duskleaf {
 
 /// Diameter in mm of a star's dot. Area follows brightness, but not in full proportion, which no
-/// page could hold: area goes with the 0.7th power of it. Sirius 2.2 mm, magnitude 5 0.28 mm.
+/// page could hold: area goes with the 0.7th power of it. Sirius 2.4 mm, magnitude 5 0.3 mm.
 double star_dot_mm(double magnitude);
 
 /// The faintest stars that a chart of this size shows, whatever the sky is like.
@@ -45,23 +45,26 @@ class SkyChart {
   /// gives its period in mm.
   void add_figures(double period_mm = 0);
   /// Names of constellations that `wanted` lets through, near their figures.
-  void name_constellations(const std::function<bool(int figure)>& wanted, double size_pt,
+  void name_constellations(const std::function<bool(int figure)>& wanted, Face face, double size_pt,
                            double importance);
   /// Names of the brightest named stars, at most `most` and none fainter than `faintest`; `always`
-  /// ones whatever comes.
-  void name_stars(double faintest, std::size_t most, std::span<const int> always_hr);
+  /// ones whatever comes. Where the name finds no room, its Greek letter may stand (`letters`).
+  void name_stars(double faintest, std::size_t most, std::span<const int> always_hr, bool letters);
   void name_asterisms();
 
   /// A curve, given as the stretches of it that the chart holds. A label is set along it where
-  /// there is room.
+  /// there is room, before all other labels (`first`) or after them.
   void add_guide(const std::vector<std::vector<Point>>& stretches, const GuideStyle&,
-                 const std::string& label = {});
+                 const std::string& label = {}, bool first = false);
   /// A label that interrupts a line, on the first free one of these points.
   void label_on_line(const std::string& words, const std::vector<Point>& places);
 
   void add_planet(Point, double magnitude, const std::string& name);
   void add_moon(Point, double lit, Angle bright_limb_from_up, const std::string& name,
                 double radius_mm = 2.1);
+  /// A small Moon with its date; the one of the chart's own evening is larger and bold.
+  void add_passing_moon(Point, double lit, Angle bright_limb_from_up, const std::string& date,
+                        bool own_evening);
   void add_sun(Point, const std::string& name);
   /// Any other mark; its dot-like extent keeps labels away.
   void add_mark(Mark, Point centre, double diameter_mm);
@@ -86,6 +89,7 @@ class SkyChart {
     std::vector<std::vector<Point>> stretches;
     GuideStyle style;
     std::string label;
+    bool first;
   };
   void label_guide(const Guide&, std::vector<Mark>& texts);
   LabelForm plain(std::string words) const;

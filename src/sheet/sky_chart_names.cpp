@@ -56,8 +56,8 @@ std::vector<std::string> words_of(std::string_view text) {
 
 }  // namespace
 
-void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted, double size_pt,
-                                   double importance) {
+void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted, Face face,
+                                   double size_pt, double importance) {
   for (std::size_t f = 0; f < figures().size(); ++f) {
     const Figure& figure = figures()[f];
     if (!wanted(static_cast<int>(f))) continue;
@@ -76,7 +76,7 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
     if (!figure.part.empty()) part = capitals(figure.part);
     LabelRequest request;
     const auto form = [&](std::vector<std::string> lines) {
-      request.forms.push_back({std::move(lines), Face::regular, size_pt, 0.06});
+      request.forms.push_back({std::move(lines), face, size_pt, 0.06});
     };
     if (part.empty()) {
       form({name});
@@ -96,7 +96,8 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
   }
 }
 
-void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int> always_hr) {
+void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int> always_hr,
+                          bool letters) {
   std::size_t named = 0;
   for (const int index : chart_stars()) {
     const Star& star = stars()[static_cast<std::size_t>(index)];
@@ -107,7 +108,7 @@ void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int
     ++named;
     LabelRequest request;
     request.forms = {plain(std::string(star.name))};
-    if (!star.bayer.empty()) request.forms.push_back(plain(std::string(star.bayer)));
+    if (letters && !star.bayer.empty()) request.forms.push_back(plain(std::string(star.bayer)));
     const bool bright = star.magnitude < 1.65 || always;
     request.importance = (bright ? 800 : 400) - 10 * star.magnitude;
     request.point = *p;
@@ -148,6 +149,20 @@ void SkyChart::add_moon(Point p, double lit, Angle bright_limb_from_up, const st
   request.point = p;
   request.clearance_mm = radius_mm + 0.2;
   request.cost_limit = 14;
+  request.ink = context_.theme.black;
+  wish(std::move(request));
+}
+
+void SkyChart::add_passing_moon(Point p, double lit, Angle bright_limb_from_up,
+                                const std::string& date, bool own_evening) {
+  const double radius = own_evening ? 1.7 : 1.15;
+  add_moon(p, lit, bright_limb_from_up, {}, radius);
+  LabelRequest request;
+  request.forms = {{{date}, own_evening ? Face::bold : Face::regular, context_.theme.label_pt, 0}};
+  request.importance = own_evening ? 1100 : 860;
+  request.point = p;
+  request.clearance_mm = radius + 0.1;
+  request.cost_limit = 9;
   request.ink = context_.theme.black;
   wish(std::move(request));
 }

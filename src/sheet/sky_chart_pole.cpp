@@ -85,10 +85,10 @@ void add_pole(SkyChart& chart, const DomeView& view) {
                     theme.label_pt,
                     0}};
     turns.importance = 940;
-    for (const double dy : {3.6, 4.6, -4.2, 5.8})
-      for (const double dx : {0.0, -4.0, 4.0, -9.0, 9.0})
+    for (const double dy : {-4.8, -5.6, -4.0, 3.8, 5.0, 6.4})
+      for (const double dx : {0.0, -2.0, 2.0, -6.0, 6.0})
         turns.places.push_back({pole->x + dx, pole->y + radius + dy});
-    turns.cost_limit = 12;
+    turns.cost_limit = 22;
     turns.ink = theme.blue;
     chart.wish(std::move(turns));
   }

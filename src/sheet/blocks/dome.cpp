@@ -24,8 +24,13 @@ void draw_ground(const DomeView& view, const Theme& theme, std::vector<Mark>& ou
 
 void draw_frame(const DomeView& view, const BlockContext& context, std::vector<Mark>& out) {
   const Theme& theme = context.theme;
-  out.push_back(Stroke{view.outline_path(), 0.4, theme.blue, {}, true});
   const Point m = view.middle();
+  // The ground is the firmest line of the page.
+  out.push_back(Stroke{Path::arc(m, view.radius(), 0, 180), 0.3, theme.blue, {}, false});
+  Path ground;
+  ground.move({m.x - view.radius() - 0.15, m.y + 0.3})
+      .line({m.x + view.radius() + 0.15, m.y + 0.3});
+  out.push_back(Stroke{ground, 0.6, theme.blue, {}, false});
   const double letter_pt = theme.label_pt + 1;
   const double baseline = m.y + 1.5 + context.type.cap_height(Face::bold, letter_pt) + 0.9;
   Path ticks;
@@ -33,7 +38,7 @@ void draw_frame(const DomeView& view, const BlockContext& context, std::vector<M
     const double turn = i * 15.0;
     const auto p = view.project({Angle(), view.facing() + Angle::from_degrees(turn)});
     if (!p) continue;
-    ticks.move(*p).line({p->x, p->y + (i % 3 == 0 ? 1.5 : 0.8)});
+    ticks.move({p->x, p->y + 0.6}).line({p->x, p->y + (i % 3 == 0 ? 1.9 : 1.3)});
   }
   out.push_back(Stroke{ticks, 0.2, theme.blue, {}, false});
   const auto set = [&](std::string words, double x, double size, Face face, double tracking) {
@@ -168,8 +173,8 @@ DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const B
     const std::array<int, 3> finders = {424, 4301, 4295};  // Polaris, Dubhe, Merak
     chart.name_stars(
         2.5, 24,
-        facing == DomeFacing::pole ? std::span<const int>(finders) : std::span<const int>());
-    chart.name_constellations([](int) { return true; }, context.theme.label_pt, 600);
+        facing == DomeFacing::pole ? std::span<const int>(finders) : std::span<const int>(), true);
+    chart.name_constellations([](int) { return true; }, Face::regular, context.theme.label_pt, 600);
     chart.name_asterisms();
   }
   chart.finish(out);
