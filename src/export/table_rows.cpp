@@ -43,13 +43,16 @@ int value_decimals(EventKind kind) {
 Row instant_row(const std::string& site, const Event& event, Cell local_time) {
   const Cell value = event.value ? Cell{Number{*event.value, value_decimals(event.kind)}} : Cell{};
   const std::string_view unit = event_unit(event.kind);
-  return {site,
-          event_name(event.kind),
-          std::string(event_body(event)),
-          utc_text(event.at),
-          std::move(local_time),
-          value,
-          unit.empty() ? Cell{} : Cell{std::string(unit)}};
+  Row row;  // cell by cell, as an initializer list would copy each text
+  row.reserve(7);
+  row.emplace_back(site);
+  row.emplace_back(event_name(event.kind));
+  row.emplace_back(std::string(event_body(event)));
+  row.emplace_back(utc_text(event.at));
+  row.push_back(std::move(local_time));
+  row.push_back(value);
+  row.push_back(unit.empty() ? Cell{} : Cell{std::string(unit)});
+  return row;
 }
 
 std::vector<Event> in_table_order(std::vector<Event> events) {
@@ -151,9 +154,11 @@ std::string utc_text(Ut t) {
   const double day =
       std::floor(t.days() + 0.5 + 0.05 / 86400.0);  // that of the rounded instant, from 2000-01-01
   const auto tenths = std::max(0LL, std::llround((t.days() + 0.5 - day) * 864000.0));
-  const Date date = make_date(2000, 1, 1) + std::chrono::days(static_cast<int>(day));
-  return fmt::format("{}T{:02}:{:02}:{:02}.{}Z", iso_date(date), tenths / 36000, tenths / 600 % 60,
-                     tenths / 10 % 60, tenths % 10);
+  const std::chrono::year_month_day date(make_date(2000, 1, 1) +
+                                         std::chrono::days(static_cast<int>(day)));
+  return fmt::format("{:04}-{:02}-{:02}T{:02}:{:02}:{:02}.{}Z", static_cast<int>(date.year()),
+                     static_cast<unsigned>(date.month()), static_cast<unsigned>(date.day()),
+                     tenths / 36000, tenths / 600 % 60, tenths / 10 % 60, tenths % 10);
 }
 
 std::vector<Row> global_rows(TableName name, const std::vector<Event>& global, const Span& span) {

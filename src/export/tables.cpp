@@ -6,6 +6,7 @@
 #include <array>
 #include <cmath>
 #include <fmt/format.h>
+#include <iterator>
 #include <nlohmann/json.hpp>
 
 namespace duskleaf {
@@ -19,32 +20,36 @@ double rounded(const Number& n) {
   return std::round(n.value * scale) / scale + 0.0;  // + 0.0: no minus zero
 }
 
-std::string quoted(const std::string& text) {
-  if (text.find_first_of(",\"\r\n") == std::string::npos) return text;
-  std::string result = "\"";
-  for (char c : text) {
-    if (c == '"') result += '"';
-    result += c;
+void append_csv(std::string& out, const Cell& cell) {
+  if (const auto* text = std::get_if<std::string>(&cell)) {
+    if (text->find_first_of(",\"\r\n") == std::string::npos) {
+      out += *text;
+      return;
+    }
+    out += '"';
+    for (char c : *text) {
+      if (c == '"') out += '"';
+      out += c;
+    }
+    out += '"';
+  } else if (const auto* number = std::get_if<Number>(&cell)) {
+    fmt::format_to(std::back_inserter(out), "{:.{}f}", rounded(*number), number->decimals);
+  } else if (const auto* flag = std::get_if<bool>(&cell)) {
+    out += *flag ? "true" : "false";
   }
-  return result + '"';
 }
 
-std::string csv_cell(const Cell& cell) {
-  if (const auto* text = std::get_if<std::string>(&cell)) return quoted(*text);
-  if (const auto* number = std::get_if<Number>(&cell))
-    return fmt::format("{:.{}f}", rounded(*number), number->decimals);
-  if (const auto* flag = std::get_if<bool>(&cell)) return *flag ? "true" : "false";
-  return {};
-}
-
-nlohmann::ordered_json json_value(const Cell& cell) {
-  if (const auto* text = std::get_if<std::string>(&cell)) return *text;
-  if (const auto* flag = std::get_if<bool>(&cell)) return *flag;
-  if (const auto* number = std::get_if<Number>(&cell)) {
-    if (number->decimals == 0) return static_cast<std::int64_t>(std::llround(number->value));
-    return rounded(*number);
+void append_json(std::string& out, const Cell& cell) {
+  if (const auto* text = std::get_if<std::string>(&cell)) {
+    out += nlohmann::json(*text).dump();
+  } else if (const auto* number = std::get_if<Number>(&cell)) {
+    // The shortest text of the rounded value: a whole number has no decimals.
+    fmt::format_to(std::back_inserter(out), "{}", rounded(*number));
+  } else if (const auto* flag = std::get_if<bool>(&cell)) {
+    out += *flag ? "true" : "false";
+  } else {
+    out += "null";
   }
-  return nullptr;
 }
 
 }  // namespace
@@ -83,22 +88,23 @@ TableWriter::TableWriter(std::ostream& out, TableName name, TableFormat format)
 
 void TableWriter::add(const std::vector<Row>& rows) {
   std::string text;
+  text.reserve(rows.size() * (format_ == TableFormat::csv ? 128 : 256));
   const std::vector<std::string_view>& columns = table_columns(name_);
   for (const Row& row : rows) {
-    if (format_ == TableFormat::csv) {
-      for (std::size_t i = 0; i < row.size(); ++i) {
-        if (i > 0) text += ',';
-        text += csv_cell(row[i]);
-      }
-      text += "\r\n";
-    } else {
-      nlohmann::ordered_json object = nlohmann::ordered_json::object();
-      for (std::size_t i = 0; i < row.size(); ++i)
-        object[std::string(columns[i])] = json_value(row[i]);
-      text += any_ ? ",\n" : "\n";
-      text += object.dump();
-    }
+    if (format_ == TableFormat::json) text += any_ ? ",\n{" : "\n{";
     any_ = true;
+    for (std::size_t i = 0; i < row.size(); ++i) {
+      if (i > 0) text += ',';
+      if (format_ == TableFormat::csv) {
+        append_csv(text, row[i]);
+      } else {
+        text += '"';
+        text += columns[i];
+        text += "\":";
+        append_json(text, row[i]);
+      }
+    }
+    text += format_ == TableFormat::csv ? "\r\n" : "}";
   }
   out_.write(text.data(), static_cast<std::streamsize>(text.size()));
 }
