@@ -14,6 +14,8 @@ namespace duskleaf {
 namespace {
 
 constexpr Days sample_step(1.0 / 96.0);
+constexpr Days one_hour(1.0 / 24.0);
+constexpr Days short_night(6.0 / 24.0);
 
 // One night's sky in samples while the Sun is down, shared by the planets.
 struct NightSamples {
@@ -29,12 +31,15 @@ NightSamples sample_night(const SiteSky& sky, const SiteYear& year, const Night&
   NightSamples result;
   const ChartHour& hour =
       year.place.chart_hours[static_cast<std::size_t>(month_of(night.date) - 1)];
-  const Ut evening_ends =
-      chart_moment(sky, year.place.zone, hour, night) + Days(std::chrono::hours(1));
+  if (night.sun_down.empty()) return result;
+  const Ut down = night.sun_down.front().from, up = night.sun_down.back().to;
+  Ut evening_ends = chart_moment(sky, year.place.zone, hour, night) + one_hour;
+  if (up - down < short_night) evening_ends = std::max(evening_ends, night.darkest);
+  const Ut morning_begins = std::max(night.darkest, up - 2 * one_hour);
   for (const TimeSpan& span : night.sun_down)
     for (Ut t = span.from; t <= span.to; t = t + sample_step) {
       const SkyLight light = sky_light(sky, year.place.limiting_magnitude, t);
-      result.samples.push_back({t, light, t <= evening_ends, t >= night.darkest,
+      result.samples.push_back({t, light, t <= evening_ends, t >= morning_begins,
                                 light.sun_altitude < nautical_altitude});
     }
   return result;

@@ -8,8 +8,9 @@
 namespace duskleaf {
 
 /// Where in the night a planet is to be seen. Evening: between sunset and an hour after the chart's
-/// hour; morning: between the Sun's lowest place and sunrise; all night: at nine tenths or more of
-/// the time with the Sun below -12 degrees.
+/// hour (at least until the darkest moment where the Sun is down for less than six hours); morning:
+/// in the last two hours before sunrise, or where it is seen, but not in the evening; all night: at
+/// nine tenths or more of the time with the Sun below -12 degrees.
 enum class PlanetSight { not_visible, evening, morning, evening_and_morning, all_night };
 
 /// A planet's month at a site, as a page tells it.
