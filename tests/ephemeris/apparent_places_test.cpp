@@ -33,7 +33,8 @@ TEST(ApparentPlaces, WithinTheLimitsOfDe431) {
   const std::string text = reference_text(other ? other : "apparent_places.csv");
   const CsvTable table(text);
   ASSERT_GE(table.rows(), 9u * 60u);
-  constexpr double span = 400.0;  // days
+  // Short spans for few dates, so that little is computed that nobody asks for.
+  const double span = other ? 400.0 : 8.0;  // days
   std::map<int, std::vector<Sample>> by_span;
   for (std::size_t r = 0; r < table.rows(); ++r) {
     const Tt when = Tt::from_julian_date(table.number(r, table.column("jd_tt")));
