@@ -5,7 +5,6 @@
 #include <cerrno>
 #include <cstring>
 #include <fmt/format.h>
-#include <fstream>
 #include <unistd.h>
 
 #include "order/order.hpp"
@@ -17,39 +16,55 @@ namespace {
 void make_folders(const fs::path& folder) {
   std::error_code error;
   if (!folder.empty()) fs::create_directories(folder, error);
+  // create_directories is content with a file of that name; a file cannot hold others.
+  if (!error && !folder.empty() && !fs::is_directory(folder, error) && !error)
+    error = std::make_error_code(std::errc::not_a_directory);
   if (error)
     throw FileError(
         fmt::format("{}: the folder cannot be made ({})", folder.string(), error.message()));
 }
 
+[[noreturn]] void refuse(const fs::path& path, const std::string& reason) {
+  throw FileError(fmt::format("{}: cannot be written ({})", path.string(), reason));
+}
+
+/// The process's number keeps two runs into one folder apart.
+fs::path part_beside(const fs::path& path) {
+  return path.parent_path() / fmt::format(".{}.{}.part", path.filename().string(), ::getpid());
+}
+
 }  // namespace
 
-void write_whole(const fs::path& path, std::string_view bytes) {
-  make_folders(path.parent_path());
-  // The process's number keeps two runs into one folder apart.
-  const fs::path part =
-      path.parent_path() / fmt::format(".{}.{}.part", path.filename().string(), ::getpid());
-  std::error_code error;
+WholeFile::WholeFile(fs::path path) : path_(std::move(path)), part_(part_beside(path_)) {
+  make_folders(path_.parent_path());
+  stream_.open(part_, std::ios::binary | std::ios::trunc);
+  if (!stream_) refuse(path_, std::strerror(errno));
+}
+
+WholeFile::~WholeFile() {
+  std::error_code ignored;
+  if (!part_.empty()) fs::remove(part_, ignored);
+}
+
+void WholeFile::finish() {
   errno = 0;
-  std::ofstream file(part, std::ios::binary | std::ios::trunc);
-  file.write(bytes.data(), static_cast<std::streamsize>(bytes.size()));
-  file.close();
-  if (!file) {
-    const std::string reason = std::strerror(errno);
-    fs::remove(part, error);
-    throw FileError(fmt::format("{}: cannot be written ({})", path.string(), reason));
-  }
-  fs::rename(part, path, error);
-  if (error) {
-    const std::string reason = error.message();
-    fs::remove(part, error);
-    throw FileError(fmt::format("{}: cannot be written ({})", path.string(), reason));
-  }
+  stream_.close();
+  if (!stream_) refuse(path_, errno != 0 ? std::strerror(errno) : "the disk may be full");
+  std::error_code error;
+  fs::rename(part_, path_, error);
+  if (error) refuse(path_, error.message());
+  part_.clear();
+}
+
+void write_whole(const fs::path& path, std::string_view bytes) {
+  WholeFile file(path);
+  file.stream().write(bytes.data(), static_cast<std::streamsize>(bytes.size()));
+  file.finish();
 }
 
 void check_writable_folder(const fs::path& folder) {
   make_folders(folder);
-  const fs::path probe = folder / fmt::format(".duskleaf.{}.part", ::getpid());
+  const fs::path probe = part_beside(folder / "duskleaf");
   const bool opened = std::ofstream(probe).is_open();
   const std::string reason = std::strerror(errno);
   std::error_code ignored;

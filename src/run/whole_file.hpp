@@ -1,12 +1,31 @@
 #pragma once
 
 #include <filesystem>
+#include <fstream>
 #include <string_view>
 
 namespace duskleaf {
 
-/// Writes a file whole or not at all: into a file beside it, then renamed over it. Folders on the way are made. Throws
-/// FileError; what was begun is then removed.
+/// A file that appears whole or not at all: written beside its place, then renamed over it. What was begun and not
+/// finished is removed.
+class WholeFile {
+ public:
+  /// Folders on the way are made. Throws FileError.
+  explicit WholeFile(std::filesystem::path);
+  ~WholeFile();
+  WholeFile(const WholeFile&) = delete;
+  WholeFile& operator=(const WholeFile&) = delete;
+
+  std::ostream& stream() { return stream_; }
+  /// Puts the file in its place. Throws FileError when it, or any writing before, failed.
+  void finish();
+
+ private:
+  std::filesystem::path path_, part_;
+  std::ofstream stream_;
+};
+
+/// All at once. Throws FileError.
 void write_whole(const std::filesystem::path&, std::string_view bytes);
 
 /// Makes the folder where it is missing and tries whether a file can be made in it. Throws FileError.
