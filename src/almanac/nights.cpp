@@ -146,11 +146,11 @@ bool is_skipped(const Zone& zone, Date date) {
 }
 
 TimeSpan night_span(const Zone& zone, Date date) {
-  const Ut from = zone.instant(date, 12h);
-  if (is_skipped(zone, date)) return {from, from};
   Date next = date + std::chrono::days(1);
   while (is_skipped(zone, next)) next += std::chrono::days(1);
-  return {from, zone.instant(next, 12h)};
+  const Ut to = zone.instant(next, 12h);
+  // The night of a skipped date is empty, at the end of the one before it.
+  return {is_skipped(zone, date) ? to : zone.instant(date, 12h), to};
 }
 
 DarkestMoment darkest_moment(const SiteSky& sky, Ut from, Ut to) {
