@@ -49,7 +49,7 @@ struct PlacedLabel {
 /// boxes.
 class LabelPlacer {
  public:
-  static constexpr double padding_mm = 0.4;
+  static constexpr double padding_mm = 0.55;
 
   LabelPlacer(const TypeSet&, const LabelRegion&);
 
@@ -97,8 +97,8 @@ class LabelPlacer {
   std::vector<Line> lines_;
   std::vector<Box> boxes_;
   double largest_dot_ = 0;
-  mutable std::vector<std::uint32_t>
-      line_seen_;  // the last question that met a line, so that none counts twice
+  // The last question that met each line, so that none counts twice.
+  mutable std::vector<std::uint32_t> line_seen_;
   mutable std::uint32_t question_ = 0;
 };
 

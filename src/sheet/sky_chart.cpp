@@ -17,17 +17,18 @@ namespace {
 constexpr double dot_at_zero_mm = 1.5;       // so that Sirius (-1.46) has 2.4 mm
 constexpr double dot_per_magnitude = -0.14;  // log10 of the diameter
 
-std::vector<int> find_chart_stars() {
+std::vector<ChartStar> find_chart_stars() {
   const auto all = stars();
-  std::vector<std::uint8_t> wanted(all.size(), 0);
-  for (std::size_t i = 0; i < all.size(); ++i) wanted[i] = all[i].magnitude <= chart_limit;
+  std::vector<std::uint8_t> in_figure(all.size(), 0);
   for (const Figure& figure : figures())
-    for (const int star : figure.figure_stars) wanted[static_cast<std::size_t>(star)] = 1;
-  std::vector<int> found;
+    for (const int star : figure.figure_stars) in_figure[static_cast<std::size_t>(star)] = 1;
+  std::vector<ChartStar> found;
   for (std::size_t i = 0; i < all.size(); ++i)
-    if (wanted[i] && all[i].charted) found.push_back(static_cast<int>(i));
-  std::stable_sort(found.begin(), found.end(), [&](int a, int b) {
-    return all[static_cast<std::size_t>(a)].magnitude < all[static_cast<std::size_t>(b)].magnitude;
+    if (all[i].charted && (in_figure[i] || all[i].magnitude <= chart_limit))
+      found.push_back({static_cast<int>(i), in_figure[i] != 0});
+  std::stable_sort(found.begin(), found.end(), [&](const ChartStar& a, const ChartStar& b) {
+    return all[static_cast<std::size_t>(a.index)].magnitude <
+           all[static_cast<std::size_t>(b.index)].magnitude;
   });
   return found;
 }
@@ -38,18 +39,20 @@ double star_dot_mm(double magnitude) {
   return dot_at_zero_mm * std::pow(10.0, dot_per_magnitude * magnitude);
 }
 
-std::span<const int> chart_stars() {
-  static const std::vector<int> found = find_chart_stars();
+std::span<const ChartStar> chart_stars() {
+  static const std::vector<ChartStar> found = find_chart_stars();
   return found;
 }
 
 SkyChart::SkyChart(const BlockContext& context, const LabelRegion& outline,
-                   const LabelRegion& labels, Path clip)
+                   const LabelRegion& labels, Path clip, double dot_scale)
     : context_(context),
       outline_(outline),
       clip_(std::move(clip)),
+      dot_scale_(dot_scale),
       placer_(context.type, labels),
       at_(stars().size()),
+      bright_enough_(stars().size(), 0),
       drawn_(stars().size(), 0) {
   dots_.ink = context.theme.black;
 }
@@ -61,25 +64,27 @@ std::optional<Point> SkyChart::drawn_star(int index) const {
   return at_[static_cast<std::size_t>(index)];
 }
 
-void SkyChart::add_stars(double faintest,
+void SkyChart::add_stars(double faintest, double faintest_of_figures,
                          const std::function<std::optional<Point>(int star)>& project) {
-  const double limit = std::min(faintest, chart_limit);
-  for (const int index : chart_stars()) {
+  for (const auto& [index, in_figure] : chart_stars()) {
     const auto i = static_cast<std::size_t>(index);
     at_[i] = project(index);
     const double magnitude = stars()[i].magnitude;
-    if (!at_[i] || magnitude > limit || !holds(*at_[i])) continue;
+    const double limit = in_figure ? faintest_of_figures : faintest;
+    bright_enough_[i] = magnitude <= limit;
+    if (!at_[i] || !bright_enough_[i] || !holds(*at_[i])) continue;
     drawn_[i] = 1;
-    const double diameter = star_dot_mm(magnitude);
+    const double diameter = dot_scale_ * star_dot_mm(magnitude);
     dots_.dots.push_back({*at_[i], diameter});
     placer_.add_dot(*at_[i], diameter, magnitude < 3.0);
   }
 }
 
-void SkyChart::add_figures(double period_mm) {
+void SkyChart::add_figures() {
   // Lines stop short of the stars, the more so the greater the dot.
-  const auto gap = [](int star) {
-    return 0.5 + star_dot_mm(stars()[static_cast<std::size_t>(star)].magnitude) / 2;
+  const auto gap = [&](int star) {
+    return 0.5 * dot_scale_ * dot_scale_ +
+           dot_scale_ * star_dot_mm(stars()[static_cast<std::size_t>(star)].magnitude) / 2;
   };
   for (const Figure& figure : figures()) {
     const auto shown = std::count_if(figure.figure_stars.begin(), figure.figure_stars.end(),
@@ -88,11 +93,14 @@ void SkyChart::add_figures(double period_mm) {
     for (const auto& [one, other] : figure.lines) {
       const auto a = at_[static_cast<std::size_t>(one)], b = at_[static_cast<std::size_t>(other)];
       if (!a || !b) continue;
+      if (!bright_enough_[static_cast<std::size_t>(one)] ||
+          !bright_enough_[static_cast<std::size_t>(other)])
+        continue;
       Point from = *a, to = *b;
       std::vector<double> shifts = {0};
-      if (period_mm > 0 && std::abs(to.x - from.x) > period_mm / 2) {
-        to.x += to.x < from.x ? period_mm : -period_mm;
-        shifts = {0, to.x > from.x ? -period_mm : period_mm};
+      if (period_ > 0 && std::abs(to.x - from.x) > period_ / 2) {
+        to.x += to.x < from.x ? period_ : -period_;
+        shifts = {0, to.x > from.x ? -period_ : period_};
       }
       const double length = std::hypot(to.x - from.x, to.y - from.y);
       const double start = gap(one) / length, end = 1 - gap(other) / length;
@@ -195,9 +203,9 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
   const double size = context_.theme.small_pt + 0.5;
   const TypeSet& type = context_.type;
   const double width = type.width(guide.label, Face::italic, size);
-  const double drop = type.descent(Face::italic, size);
+  const double drop = 0.55 * type.descent(Face::italic, size);
   const double top = type.ascent(Face::italic, size);
-  double least = 5;
+  double least = guide.first ? 16 : 5;
   std::optional<Text> best;
   std::vector<Box> best_boxes;
   for (const auto& stretch : guide.stretches) {
@@ -210,39 +218,44 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
       Point a = stretch[i], b = stretch[j];
       if (a.x > b.x) std::swap(a, b);
       const double turn = std::atan2(a.y - b.y, b.x - a.x);  // counterclockwise, y runs down
-      if (std::abs(turn) > 1.45) continue;
       const double c = std::cos(turn), s = std::sin(turn);
-      // How far the curve bows above its chord: the label stands clear of that.
-      double bow = 0;
-      for (std::size_t k = i; k <= j; ++k)
-        bow = std::max(bow, -((stretch[k].x - a.x) * s + (stretch[k].y - a.y) * c));
-      const double lift = bow + drop * 0.55 + 0.45;
-      const Point start{a.x + 0.5 * c - lift * s, a.y - 0.5 * s - lift * c};
-      // Axis-parallel boxes along the turned line of text.
-      const int pieces = std::max(1, static_cast<int>(std::ceil(width / (0.8 * top))));
-      std::vector<Box> boxes;
-      double cost = 0;
-      for (int k = 0; k < pieces && cost < least; ++k) {
-        double x0 = 1e9, x1 = -1e9, y0 = 1e9, y1 = -1e9;
-        for (const double along : {width * k / pieces, width * (k + 1) / pieces})
-          for (const double across : {-drop * 0.55, top}) {
-            const double x = start.x + along * c - across * s;
-            const double y = start.y - along * s - across * c;
-            x0 = std::min(x0, x), x1 = std::max(x1, x), y0 = std::min(y0, y), y1 = std::max(y1, y);
-          }
-        boxes.push_back({x0, y0, x1 - x0, y1 - y0});
-        cost += placer_.cost_of(boxes.back(), least).value_or(1e9);
+      // How far the curve bows above and below its chord: the label stands clear of that.
+      double above = 0, below = 0;
+      for (std::size_t k = i; k <= j; ++k) {
+        const double off = -((stretch[k].x - a.x) * s + (stretch[k].y - a.y) * c);
+        above = std::max(above, off);
+        below = std::max(below, -off);
       }
-      if (cost >= least) continue;
-      least = cost;
-      best = Text{start,
-                  guide.label,
-                  Face::italic,
-                  size,
-                  guide.style.ink,
-                  0,
-                  turn * 180 / std::numbers::pi};
-      best_boxes = boxes;
+      for (const bool over : {true, false}) {
+        const double lift = over ? above + drop + 0.45 : -(below + top + 0.35);
+        const Point start{a.x + 0.5 * c - lift * s, a.y - 0.5 * s - lift * c};
+        // Axis-parallel boxes along the turned line of text.
+        const int pieces = std::max(1, static_cast<int>(std::ceil(width / (0.8 * top))));
+        std::vector<Box> boxes;
+        double cost = (above + below) * 0.6 + (over ? 0 : 0.5);
+        for (int k = 0; k < pieces && cost < least; ++k) {
+          double x0 = 1e9, x1 = -1e9, y0 = 1e9, y1 = -1e9;
+          for (const double along : {width * k / pieces, width * (k + 1) / pieces})
+            for (const double across : {-drop, top}) {
+              const double x = start.x + along * c - across * s;
+              const double y = start.y - along * s - across * c;
+              x0 = std::min(x0, x), x1 = std::max(x1, x);
+              y0 = std::min(y0, y), y1 = std::max(y1, y);
+            }
+          boxes.push_back({x0, y0, x1 - x0, y1 - y0});
+          cost += placer_.cost_of(boxes.back(), least).value_or(1e9);
+        }
+        if (cost >= least) continue;
+        least = cost;
+        best = Text{start,
+                    guide.label,
+                    Face::italic,
+                    size,
+                    guide.style.ink,
+                    0,
+                    turn * 180 / std::numbers::pi};
+        best_boxes = boxes;
+      }
     }
   }
   if (!best) {
@@ -271,12 +284,6 @@ std::pair<Angle, Angle> ecliptic_point(Angle longitude) {
   const Angle obliquity = Angle::from_degrees(23.4393);  // IAU 2006, J2000.0
   const double s = sin(longitude);
   return {arctan2(s * cos(obliquity), cos(longitude)).positive(), arcsin(s * sin(obliquity))};
-}
-
-Angle direction_to(std::pair<Angle, Angle> from, std::pair<Angle, Angle> to) {
-  const Angle turn = to.first - from.first;
-  return arctan2(cos(to.second) * sin(turn),
-                 sin(to.second) * cos(from.second) - cos(to.second) * cos(turn) * sin(from.second));
 }
 
 }  // namespace duskleaf

@@ -20,7 +20,11 @@ inline constexpr double chart_limit = 5.0;
 
 /// The stars that charts can need, brightest first: charted ones down to the chart's limit and
 /// those of figures.
-std::span<const int> chart_stars();
+struct ChartStar {
+  int index;  // into stars()
+  bool in_figure;
+};
+std::span<const ChartStar> chart_stars();
 
 /// How a curve across a chart is drawn.
 struct GuideStyle {
@@ -36,14 +40,18 @@ class SkyChart {
  public:
   /// `outline` bounds what is drawn, `labels` (somewhat smaller) where labels may stand; `clip` is
   /// the outline as a path.
-  SkyChart(const BlockContext&, const LabelRegion& outline, const LabelRegion& labels, Path clip);
+  SkyChart(const BlockContext&, const LabelRegion& outline, const LabelRegion& labels, Path clip,
+           double dot_scale = 1);
 
-  /// Places every star of chart_stars(); `project` gives nothing for a star that the chart's plane
-  /// cannot hold.
-  void add_stars(double faintest, const std::function<std::optional<Point>(int star)>& project);
-  /// Lines of the figures of which at least two stars are drawn. A chart that closes on itself
-  /// gives its period in mm.
-  void add_figures(double period_mm = 0);
+  /// Places the stars of chart_stars() and draws those within the outline that are bright enough,
+  /// with a limit of their own for those that figures join. `project` gives nothing for a star that
+  /// the chart's plane cannot hold.
+  void add_stars(double faintest, double faintest_of_figures,
+                 const std::function<std::optional<Point>(int star)>& project);
+  /// A chart that closes on itself says so before figures and names are added; mm.
+  void set_period(double mm) { period_ = mm; }
+  /// Lines of the figures of which at least two stars are drawn.
+  void add_figures();
   /// Names of constellations that `wanted` lets through, near their figures.
   void name_constellations(const std::function<bool(int figure)>& wanted, Face face, double size_pt,
                            double importance);
@@ -97,9 +105,12 @@ class SkyChart {
   const BlockContext& context_;
   LabelRegion outline_;
   Path clip_;
+  double dot_scale_;
+  double period_ = 0;
   LabelPlacer placer_;
-  std::vector<std::optional<Point>> at_;  // by star index
-  std::vector<std::uint8_t> drawn_;       // by star index
+  std::vector<std::optional<Point>> at_;     // by star index
+  std::vector<std::uint8_t> bright_enough_;  // by star index
+  std::vector<std::uint8_t> drawn_;          // by star index
   Dots dots_;
   std::vector<Guide> guides_;
   std::vector<std::vector<Point>> figure_lines_;
@@ -115,9 +126,4 @@ std::pair<Angle, Angle> equatorial_of(const Horizontal&, Angle latitude);
 /// Right ascension and declination of the ecliptic at a longitude, mean obliquity of J2000 (good to
 /// 0.02 degrees, 1900-2100).
 std::pair<Angle, Angle> ecliptic_point(Angle longitude);
-/// Direction from one point of a sphere to another, counterclockwise from the sphere's pole side as
-/// seen from inside with the first coordinate growing to the left (`from` and `to` as longitude,
-/// latitude).
-Angle direction_to(std::pair<Angle, Angle> from, std::pair<Angle, Angle> to);
-
 }  // namespace duskleaf

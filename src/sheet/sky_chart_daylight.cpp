@@ -32,7 +32,7 @@ std::vector<Step> way_of(const BlockContext& context, Body body, Date date) {
 
 }  // namespace
 
-void add_paths_of_day(SkyChart& chart, const DomeView& view) {
+void add_paths_of_day(SkyChart& chart, const DomeView& view, bool with_message) {
   const BlockContext& context = chart.context();
   const Theme& theme = context.theme;
   const EveningSky& evening = context.evening();
@@ -46,7 +46,7 @@ void add_paths_of_day(SkyChart& chart, const DomeView& view) {
     const GuideStyle style = sun ? GuideStyle{0.4, theme.black, {}, 0.8}
                                  : GuideStyle{0.25, theme.blue_soft, {1.6, 0.8}, 0.4};
     chart.add_guide(view.trace(curve), style,
-                    context.words(sun ? "dome.way-of-sun" : "dome.way-of-moon"));
+                    context.words(sun ? "dome.way-of-sun" : "dome.way-of-moon"), true);
     // A dot at each full hour, its civil time at every second one.
     for (std::size_t i = 0; i < way.size(); i += 4) {
       const auto p = view.project(way[i].place);
@@ -66,6 +66,14 @@ void add_paths_of_day(SkyChart& chart, const DomeView& view) {
     }
   }
 
+  const EquatorialPlace sun = context.ephemeris.place(Body::sun, to_tt(evening.moment));
+  const Horizontal now = horizontal_of(evening.local_sidereal_time - sun.right_ascension,
+                                       sun.declination, place.observer.latitude);
+  const auto p = view.project(now);
+  if (now.altitude.degrees() > 0 && p && chart.holds(*p))
+    chart.add_sun(*p, context.words("body.sun"));
+
+  if (!with_message) return;
   LabelRequest message;
   const std::string back =
       evening.stars_return

@@ -3,30 +3,18 @@
 #include <algorithm>
 #include <cmath>
 
-// Stereographic projection (Snyder 1987, Map Projections: A Working Manual, USGS Professional Paper
-// 1395, ch. 21), oblique aspect about a point of the horizon, seen from inside the sphere.
+#include "sky/projection.hpp"
+
+// The projection is sky/projection.hpp's, stereographic about the horizon's point that one faces.
 
 namespace duskleaf {
-namespace {
-
-struct Axes {
-  double forward, right, up;
-};
-
-Axes axes_of(const Horizontal& place, Angle facing) {
-  const Angle turn = place.azimuth - facing;
-  return {cos(place.altitude) * cos(turn), cos(place.altitude) * sin(turn), sin(place.altitude)};
-}
-
-}  // namespace
-
 double DomeView::unit() const { return radius_ / tan(Angle::from_degrees(reach_degrees / 2)); }
 
 std::optional<Point> DomeView::project(const Horizontal& place) const {
-  const Axes a = axes_of(place, facing_);
-  if (a.forward < -0.6428) return std::nullopt;  // cosine of 130 degrees
-  const double k = unit() / (1 + a.forward);
-  return Point{middle_.x + k * a.right, middle_.y - k * a.up};
+  if (cos(place.altitude) * cos(place.azimuth - facing_) < -0.6428)  // cosine of 130 degrees
+    return std::nullopt;
+  const Eigen::Vector2d p = unit() * FacingProjection(facing_)(place);
+  return Point{middle_.x + p.x(), middle_.y - p.y()};
 }
 
 Angle DomeView::up_at(const Horizontal& place) const {

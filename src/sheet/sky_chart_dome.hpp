@@ -49,11 +49,11 @@ enum class DomeFacing { equator, pole };
 /// the south.
 Angle dome_azimuth(DomeFacing, Angle latitude);
 
-/// Adds what only one kind of evening or dome has.
-void add_pole(SkyChart&,
-              const DomeView&);  // the pole's mark, which way the sky turns, how to find the pole
-void add_paths_of_day(
-    SkyChart&, const DomeView&);  // no stars: the Sun's and Moon's way through the day, and words
+/// The pole's mark, which way the sky turns about it, and how to find it.
+void add_pole(SkyChart&, const DomeView&);
+/// For nights without stars: the Sun's and Moon's ways through the civil day and, if asked, when
+/// stars come back.
+void add_paths_of_day(SkyChart&, const DomeView&, bool with_message);
 
 /// A dome with its direction letters and title, fitted into `area`: its labels, for checks, and the
 /// height used.

@@ -64,7 +64,10 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
     std::vector<Point> points;
     double brightest = 9;
     for (const int star : figure.figure_stars)
-      if (const auto p = drawn_star(star)) {
+      if (auto p = drawn_star(star)) {
+        // Across the seam of a closed chart a figure goes on beyond the end.
+        if (period_ > 0 && !points.empty())
+          p->x += period_ * std::round((points.front().x - p->x) / period_);
         points.push_back(*p);
         brightest = std::min(brightest, stars()[static_cast<std::size_t>(star)].magnitude);
       }
@@ -90,7 +93,10 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
     request.importance = importance - 8 * brightest +
                          0.5 * static_cast<double>(std::min<std::size_t>(points.size(), 20));
     request.places = seats_within(points);
-    request.cost_limit = 9;
+    if (period_ > 0)
+      for (Point& p : request.places) p.x -= period_ * std::floor((p.x - outline_.box.x) / period_);
+    // The brighter the figure, the more its name may cover.
+    request.cost_limit = 9 + std::max(0.0, 1.2 * (3.5 - brightest));
     request.ink = context_.theme.blue;
     wish(std::move(request));
   }
@@ -99,20 +105,22 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
 void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int> always_hr,
                           bool letters) {
   std::size_t named = 0;
-  for (const int index : chart_stars()) {
+  for (const ChartStar& candidate : chart_stars()) {
+    const int index = candidate.index;
     const Star& star = stars()[static_cast<std::size_t>(index)];
     const bool always = std::find(always_hr.begin(), always_hr.end(), star.hr) != always_hr.end();
     const auto p = drawn_star(index);
     if (!p || star.name.empty()) continue;
     if (!always && (star.magnitude > faintest || named >= most)) continue;
     ++named;
+    const bool bright = star.magnitude < 1.65 || always;
     LabelRequest request;
     request.forms = {plain(std::string(star.name))};
-    if (letters && !star.bayer.empty()) request.forms.push_back(plain(std::string(star.bayer)));
-    const bool bright = star.magnitude < 1.65 || always;
+    if (letters && bright && !star.bayer.empty())
+      request.forms.push_back(plain(std::string(star.bayer)));
     request.importance = (bright ? 800 : 400) - 10 * star.magnitude;
     request.point = *p;
-    request.clearance_mm = star_dot_mm(star.magnitude) / 2;
+    request.clearance_mm = dot_scale_ * star_dot_mm(star.magnitude) / 2;
     request.cost_limit = bright ? 7 : 4.5;
     request.ink = context_.theme.black;
     wish(std::move(request));

@@ -34,8 +34,8 @@ void arrow_head(SkyChart& chart, Point tip, double direction, Ink ink) {
     return Point{tip.x - back * std::cos(direction) - side * std::sin(direction),
                  tip.y + back * std::sin(direction) - side * std::cos(direction)};
   };
-  chart.add_mark(
-      Fill{Path::polyline({tip, at(1.9, 0.62), at(1.45, 0), at(1.9, -0.62)}, true), ink});
+  chart.add_mark(Fill{Path::polyline({tip, at(2.1, 0.75), at(1.6, 0), at(2.1, -0.75)}, true), ink},
+                 at(1, 0), 2.2);
 }
 
 /// An arc round the pole from one page angle to another, arrow at its end; degrees counterclockwise
@@ -72,20 +72,20 @@ void add_pole(SkyChart& chart, const DomeView& view) {
   cross.move({pole->x, pole->y - arm}).line({pole->x, pole->y + arm});
   chart.add_mark(Stroke{cross, 0.25, theme.blue, {}, false}, *pole, 2 * arm);
 
-  const double radius = 11.5;
+  const double radius = 12;
   if (view.middle().y - pole->y > radius + 2.5) {
     // The sky turns counterclockwise round the north pole and clockwise round the south pole.
     if (north)
-      turning_arrow(chart, *pole, radius, 200, 340);
+      turning_arrow(chart, *pole, radius, 192, 350);
     else
-      turning_arrow(chart, *pole, radius, 340, 200);
+      turning_arrow(chart, *pole, radius, 348, 190);
     LabelRequest turns;
     turns.forms = {{{context.words("dome.turns-1"), context.words("dome.turns-2")},
                     Face::italic,
                     theme.label_pt,
                     0}};
     turns.importance = 940;
-    for (const double dy : {-4.8, -5.6, -4.0, 3.8, 5.0, 6.4})
+    for (const double dy : {-5.2, -4.6, -5.8, 3.8, 5.0, 6.4})
       for (const double dx : {0.0, -2.0, 2.0, -6.0, 6.0})
         turns.places.push_back({pole->x + dx, pole->y + radius + dy});
     turns.cost_limit = 22;

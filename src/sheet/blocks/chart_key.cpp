@@ -14,7 +14,7 @@ double draw_chart_key(const BlockContext& context, const BlockOptions& options, 
   const Theme& theme = context.theme;
   const auto corner = options.values.find("corner");
   const bool right = corner != options.values.end() && corner->second == "top-right";
-  const double size = theme.label_pt, row = 4.2, sample = 6.0;
+  const double size = theme.label_pt, row = 3.9, sample = 6.0;
   const double edge = right ? area.right() : area.x;
   const auto across = [&](double from_edge) { return right ? edge - from_edge : edge + from_edge; };
   double y = area.y + 2.0;
@@ -45,11 +45,6 @@ double draw_chart_key(const BlockContext& context, const BlockOptions& options, 
     out.emplace_back(Stroke{path, width, ink, std::move(dash), false});
   };
   const std::array<std::pair<const char*, std::function<void()>>, 5> rows = {{
-      {"key.planet",
-       [&] {
-         out.emplace_back(
-             Stroke{Path::circle({across(sample / 2), y}, 0.75), 0.36, theme.black, {}, false});
-       }},
       {"key.lap",
        [&] {
          out.emplace_back(
@@ -64,6 +59,11 @@ double draw_chart_key(const BlockContext& context, const BlockOptions& options, 
       {"key.ecliptic",
        [&] {
          line(0.25, theme.blue_soft, {0.25, 0.85});
+       }},
+      {"key.planet",
+       [&] {
+         out.emplace_back(
+             Stroke{Path::circle({across(sample / 2), y}, 0.75), 0.36, theme.black, {}, false});
        }},
   }};
   for (const auto& [key, draw_sample] : rows) {

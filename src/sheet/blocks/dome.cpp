@@ -6,6 +6,7 @@
 #include "ephemeris/year_ephemeris.hpp"
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/sky_chart_dome.hpp"
+#include "sky/moon_look.hpp"
 
 // The half of the sky that one faces, as pages.md's first drawing describes it. Stars stand at
 // their true altitude; refraction, half a degree on the horizon, would move them by less than the
@@ -127,22 +128,20 @@ void add_bodies(SkyChart& chart, const DomeView& view) {
   const BlockContext& context = chart.context();
   const EveningSky& evening = context.evening();
   for (const PlanetEvening& planet : evening.planets) {
-    if (planet.place.altitude.radians() <= 0) continue;
+    if (planet.place.altitude.degrees() < 1) continue;
     if (!planet.visible && planet.magnitude > std::min(evening.faintest_star, 5.0)) continue;
     const auto p = view.project(planet.place);
     if (p && chart.holds(*p))
       chart.add_planet(*p, planet.magnitude,
                        context.words("body." + std::string(body_name(planet.planet))));
   }
-  if (evening.moon.altitude.radians() <= 0) return;
+  if (evening.moon.altitude.degrees() < 0.3) return;
   const auto p = view.project(evening.moon);
   if (!p || !chart.holds(*p)) return;
-  // The lit side faces the Sun along the great circle to it.
-  const EquatorialPlace sun = context.ephemeris.place(Body::sun, to_tt(evening.moment));
-  const Horizontal sun_place = horizontal_of(evening.local_sidereal_time - sun.right_ascension,
-                                             sun.declination, context.site.place.observer.latitude);
-  const Angle from_zenith = -direction_to({evening.moon.azimuth, evening.moon.altitude},
-                                          {sun_place.azimuth, sun_place.altitude});
+  const Observer& observer = context.site.place.observer;
+  const Angle from_zenith =
+      bright_limb_from_zenith(context.ephemeris, observer.latitude, observer.longitude,
+                              observer.elevation_m, evening.moment);
   chart.add_moon(*p, evening.moon_lit, from_zenith + view.up_at(evening.moon),
                  context.words("body.moon"));
 }
@@ -157,15 +156,16 @@ DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const B
   const EveningSky& evening = context.evening();
   draw_ground(view, context.theme, out);
   SkyChart chart(context, view.outline(), view.label_region(), view.outline_path());
-  chart.add_stars(evening.faintest_star, [&](int star) {
-    const Horizontal& place = evening.stars[static_cast<std::size_t>(star)];
-    return place.altitude.degrees() < -25 ? std::nullopt : view.project(place);
-  });
+  chart.add_stars(std::min(evening.faintest_star, chart_limit), evening.faintest_star,
+                  [&](int star) {
+                    const Horizontal& place = evening.stars[static_cast<std::size_t>(star)];
+                    return place.altitude.degrees() < -25 ? std::nullopt : view.project(place);
+                  });
   add_zenith(chart, view);
   add_bodies(chart, view);
   add_altitudes(chart, view);
   if (evening.shift == EveningShift::no_stars) {
-    add_paths_of_day(chart, view);
+    add_paths_of_day(chart, view, facing == DomeFacing::equator);
   } else {
     chart.add_figures();
     add_circles(chart, view);

@@ -7,6 +7,7 @@
 #include "ephemeris/year_ephemeris.hpp"
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/sky_chart_ribbon.hpp"
+#include "sky/moon_look.hpp"
 
 // The sky along the celestial equator, as pages.md's second drawing describes it.
 
@@ -14,7 +15,7 @@ namespace duskleaf {
 namespace {
 
 constexpr double title_mm = 4.6, months_mm = 4.4;
-constexpr double ribbon_limit = 4.5;  // faintest stars drawn: all of the band, up or not
+constexpr double ribbon_limit = 4.4;  // faintest stars drawn: all of the band, up or not
 
 void draw_ground(const RibbonView& view, const Theme& theme, std::vector<Mark>& out) {
   auto group = std::make_shared<ClipGroup>();
@@ -28,17 +29,17 @@ void draw_ground(const RibbonView& view, const Theme& theme, std::vector<Mark>& 
 void add_horizons(SkyChart& chart, const RibbonView& view) {
   const BlockContext& context = chart.context();
   const Theme& theme = context.theme;
+  for (const bool east : {true, false})
+    chart.add_guide(view.horizon(east, Angle()), {0.35, theme.blue, {}, 0.6},
+                    context.words(east ? "ribbon.rising" : "ribbon.setting"), true);
   // Two hours earlier the horizon stood 30 degrees of hour angle west of where it stands now;
   // later, east.
   for (const double hours : {-2.0, 2.0}) {
     const std::string label = context.words(hours < 0 ? "ribbon.earlier" : "ribbon.later");
     for (const bool east : {true, false})
       chart.add_guide(view.horizon(east, Angle::from_hours(-hours)),
-                      {0.15, theme.soft, {0.3, 0.9}, 0.1}, label);
+                      {0.15, theme.soft, {0.3, 0.9}, 0.1}, label, true);
   }
-  for (const bool east : {true, false})
-    chart.add_guide(view.horizon(east, Angle()), {0.35, theme.blue, {}, 0.6},
-                    context.words(east ? "ribbon.rising" : "ribbon.setting"), true);
 }
 
 void add_circles(SkyChart& chart, const RibbonView& view) {
@@ -173,13 +174,11 @@ void add_bodies(SkyChart& chart, const RibbonView& view) {
   for (int day = 1; day <= days; ++day) {
     if ((day - today) % 3 != 0) continue;
     const Ut at = evening.moment + Days(day - today);
-    const EquatorialPlace moon = where(Body::moon, at), light = where(Body::sun, at);
-    const Angle lean = direction_to({moon.right_ascension, moon.declination},
-                                    {light.right_ascension, light.declination});
-    const Angle apart = arccos(sin(moon.declination) * sin(light.declination) +
-                               cos(moon.declination) * cos(light.declination) *
-                                   cos(moon.right_ascension - light.right_ascension));
-    chart.add_passing_moon(point(moon), (1 - cos(apart)) / 2,
+    const Eigen::Vector3d moon = context.ephemeris.apparent(Body::moon, to_tt(at));
+    const Eigen::Vector3d light = context.ephemeris.apparent(Body::sun, to_tt(at));
+    const Angle lean = position_angle(moon, light, Eigen::Vector3d::UnitZ());
+    const double cosine = moon.normalized().dot(light.normalized());
+    chart.add_passing_moon(point(to_equatorial(moon)), (1 - cosine) / 2,
                            view.faces_south() ? lean : lean + Angle::from_degrees(180),
                            context.words.number(day, 0), day == today);
   }
@@ -199,14 +198,16 @@ RibbonDrawing compose_ribbon(const BlockContext& context, const Box& area, std::
   draw_ground(view, theme, out);
   SkyChart chart(context, {band, {}, 0},
                  {{band.x + 0.4, band.y + 0.4, band.width - 0.8, band.height - 0.8}, {}, 0},
-                 Path::rectangle(band));
-  chart.add_stars(ribbon_limit, [&](int star) -> std::optional<Point> {
+                 Path::rectangle(band), 0.8);
+  // Figures whole, also where a star of theirs is fainter.
+  chart.add_stars(ribbon_limit, 99, [&](int star) -> std::optional<Point> {
     const auto [hour_angle, declination] =
         equatorial_of(evening.stars[static_cast<std::size_t>(star)], latitude);
     if (std::abs(declination.degrees()) > 75) return std::nullopt;
     return view.at(hour_angle, declination);
   });
-  chart.add_figures(band.width);
+  chart.set_period(band.width);
+  chart.add_figures();
   std::vector<Mark> scales;
   add_scales(chart, view, scales);
   add_bodies(chart, view);
