@@ -7,6 +7,7 @@
 
 #include "base/civil.hpp"
 #include "cli/commands.hpp"
+#include "order/nearest_name.hpp"
 
 namespace duskleaf {
 namespace {
@@ -80,7 +81,21 @@ CLI::App* add_blocks(CLI::App& app, BlocksArguments& a) {
   return command;
 }
 
+/// CLI11 would only say that a command is missing.
+void check_command(int argc, char** argv) {
+  static const std::vector<std::string_view> names = {"new", "proof", "press", "data", "blocks"};
+  if (argc < 2)
+    throw CommandLineError("a command is needed: " + listed(names) + "\nSee: duskleaf --help");
+  const std::string_view given = argv[1];
+  if (given.starts_with('-') || std::find(names.begin(), names.end(), given) != names.end()) return;
+  const std::string near = nearest_name(given, names);
+  throw CommandLineError(fmt::format(
+      "there is no command '{}'; {}", given,
+      near.empty() ? "expected " + listed(names) : fmt::format("did you mean '{}'?", near)));
+}
+
 ExitCode dispatch(int argc, char** argv) {
+  check_command(argc, argv);
   Arguments a;
   CLI::App app("A year of the night sky, from an order file to printed sheets.", "duskleaf");
   app.set_version_flag("--version", fmt::format("duskleaf {} (time-zone data {})", version,

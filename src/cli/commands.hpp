@@ -53,8 +53,9 @@ ExitCode run_blocks(const BlocksArguments&);
 
 /// One line on standard error.
 void say(const std::string& line);
-/// Doubts as "FILE:LINE:COLUMN: warning: ..." on standard error.
-void say_doubts(const std::vector<Doubt>&);
+/// Doubts as "FILE:LINE:COLUMN: warning: ..." on standard error; those of keys that nothing prints
+/// yet where asked for.
+void say_doubts(const std::vector<Doubt>&, bool with_not_printed);
 /// To standard output; throws FileError when it cannot be written.
 void print(const std::string& text);
 

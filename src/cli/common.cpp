@@ -13,10 +13,11 @@ void say(const std::string& line) {
   std::fputc('\n', stderr);
 }
 
-void say_doubts(const std::vector<Doubt>& list) {
+void say_doubts(const std::vector<Doubt>& list, bool with_not_printed) {
   for (const Doubt& doubt : list)
-    say(fmt::format("{}:{}:{}: warning: {}", doubt.where.file, doubt.where.line, doubt.where.column,
-                    doubt.text));
+    if (with_not_printed || !doubt.not_printed)
+      say(fmt::format("{}:{}:{}: warning: {}", doubt.where.file, doubt.where.line,
+                      doubt.where.column, doubt.text));
 }
 
 void print(const std::string& text) {

@@ -60,7 +60,7 @@ ExitCode run_data(const DataArguments& arguments) {
   Order order = read_order(arguments.file);
   if (arguments.year) change_year(order, *arguments.year);
   if (arguments.site) check_site({order}, *arguments.site);
-  say_doubts(doubts(order));
+  say_doubts(doubts(order), false);
   if (arguments.out.empty()) {
     std::ios::sync_with_stdio(false);
     write_table(order, arguments.site, table, form, std::cout);

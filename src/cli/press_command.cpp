@@ -79,7 +79,7 @@ ExitCode run_press(const PressArguments& arguments) {
     if (arguments.year) change_year(orders.back(), *arguments.year);
   }
   if (options.site) check_site(orders, *options.site);
-  for (const Order& order : orders) say_doubts(doubts(order));
+  for (const Order& order : orders) say_doubts(doubts(order), false);
 
   std::signal(SIGINT, stop_at_signal);
   std::signal(SIGTERM, stop_at_signal);

@@ -63,8 +63,8 @@ ExitCode run_proof(const ProofArguments& arguments) {
       const Order order = read_order(file);
       const std::vector<Doubt> later = unprinted(order);
       print(summary(order));
-      say_doubts(doubts(order));
-      say_doubts(later);
+      say_doubts(doubts(order), true);
+      say_doubts(later, true);
     } catch (const OrderError& error) {
       say(error.what());
       code = ExitCode::bad_order;

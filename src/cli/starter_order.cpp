@@ -41,10 +41,11 @@ publications:
     ink: colour             # or grey
 
 sites:
-  - id: {id}{id_note}
+  # the id names the folder of the PDFs{place_note}
+  - id: {id}
     name: {name}
-    latitude: {latitude}{place_note}
-    longitude: {longitude}
+    latitude: {latitude}          # degrees, north positive; "54 10 48 N" also reads
+    longitude: {longitude}          # degrees, east positive
     time_zone: {zone}
     chart_hour: "21:30"     # civil time of the evening charts; or dusk; or a list of twelve
     # elevation: 35 m
@@ -82,13 +83,11 @@ std::string id_from_name(const std::string& name) {
 std::string starter_order(const StarterPlace& place) {
   return fmt::format(
       fmt::runtime(text_form), fmt::arg("year", place.year),
-      fmt::arg("id", id_from_name(place.name)),
-      fmt::arg("id_note", "             # names the folder of its PDFs"),
-      fmt::arg("name", quoted(place.name)), fmt::arg("latitude", number_or_quoted(place.latitude)),
+      fmt::arg("id", id_from_name(place.name)), fmt::arg("name", quoted(place.name)),
+      fmt::arg("latitude", number_or_quoted(place.latitude)),
       fmt::arg("longitude", number_or_quoted(place.longitude)),
       fmt::arg("zone", quoted(place.time_zone)),
-      fmt::arg("place_note",
-               place.invented ? "           # an invented place: put yours here" : ""));
+      fmt::arg("place_note", place.invented ? "; this place is invented: put yours here" : ""));
 }
 
 std::string trouble_with(const StarterPlace& place) {

@@ -1,5 +1,5 @@
-// What is allowed and yet looks like a slip. The Sun's mean time at a longitude is longitude / 15 hours from Greenwich's;
-// civil clocks seldom stray three hours from it (common practice).
+// What is allowed and yet looks like a slip. The Sun's mean time at a longitude is longitude / 15
+// hours from Greenwich's; civil clocks seldom stray three hours from it (common practice).
 #include <algorithm>
 #include <cmath>
 #include <fmt/format.h>
@@ -59,17 +59,10 @@ void doubt_dates(const Site& site, const Span& span, std::vector<Doubt>& out) {
 
 std::vector<Doubt> doubts(const Order& order) {
   std::vector<Doubt> list = order.noticed;
-  const auto first_with = [&](auto&& has) {
-    return std::find_if(order.sites.begin(), order.sites.end(), has);
-  };
-  if (const auto site = first_with([](const Site& s) { return !s.place.skyline.empty(); });
-      site != order.sites.end())
-    list.push_back({site->where, site->place.id + ": the skyline is not printed yet"});
-  if (const auto site = first_with([](const Site& s) { return !s.dates.empty(); });
-      site != order.sites.end())
-    list.push_back(
-        {site->where,
-         site->place.id + ": the site's own dates are not printed yet (the school calendar will)"});
+  const auto site = std::find_if(order.sites.begin(), order.sites.end(),
+                                 [](const Site& s) { return !s.place.skyline.empty(); });
+  if (site != order.sites.end())
+    list.push_back({site->where, site->place.id + ": the skyline is not printed yet", true});
   for (const Site& site : order.sites) {
     doubt_place(site, order.span, list);
     doubt_dates(site, order.span, list);

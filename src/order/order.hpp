@@ -87,6 +87,7 @@ struct Site {
 struct Doubt {
   Location where;
   std::string text;
+  bool not_printed = false;         // a key that nothing prints yet; pressing need not repeat it
 };
 
 struct Order {

@@ -125,10 +125,10 @@ Publication read_publication(const YamlValue& value, std::vector<PairMention>& m
   read_pairs(map, publication, mentions);
   if (publication.large_print)
     noticed.push_back({map.where("large_print"),
-                       "large_print is not printed yet: the sheet comes in its usual size"});
+                       "large_print is not printed yet: the sheet comes in its usual size", true});
   if (publication.binding != Binding::none)
     noticed.push_back(
-        {map.where("binding"), "binding is not printed yet: the margins are the usual ones"});
+        {map.where("binding"), "binding is not printed yet: the margins are the usual ones", true});
   return publication;
 }
 

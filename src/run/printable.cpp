@@ -24,14 +24,16 @@ std::vector<Doubt> unprinted(const Order& order) {
   if (!has_words(order.language))
     list.push_back(
         {order.language_at,
-         fmt::format("the language '{}' is not printed yet by this version", order.language)});
+         fmt::format("the language '{}' is not printed yet by this version", order.language),
+         true});
   for (const Publication& publication : order.publications) {
     if (is_printed(publication))
       check_template(order, publication);
     else
-      list.push_back(
-          {publication.where, fmt::format("the template {} is not printed yet by this version",
-                                          publication.template_name)});
+      list.push_back({publication.where,
+                      fmt::format("the template {} is not printed yet by this version",
+                                  publication.template_name),
+                      true});
   }
   return list;
 }
