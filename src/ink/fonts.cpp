@@ -17,9 +17,9 @@ using Object = QPDFObjectHandle;
 
 constexpr unsigned first_ascii = 0x20, last_ascii = 0x7E;
 
-Object packed_stream(QPDF& pdf, std::string packed) {
+Object packed_stream(QPDF& pdf, const std::string& packed) {
   Object stream = Object::newStream(&pdf);
-  stream.replaceStreamData(std::move(packed), Object::newName("/FlateDecode"), Object::newNull());
+  stream.replaceStreamData(packed, Object::newName("/FlateDecode"), Object::newNull());
   return stream;
 }
 

@@ -2,7 +2,7 @@
 // (ISO/IEC 15948) is read by libpng; rows keep PNG's "up" filter, which suits logos' flat areas.
 #include "ink/pictures.hpp"
 
-#include <algorithm>
+#include <cmath>
 #include <cstdint>
 #include <mutex>
 #include <png.h>
@@ -60,7 +60,8 @@ std::string pack_rows(const std::vector<std::uint8_t>& samples, long width, long
 
 /// Luma of ITU-R BT.709 on the coded values: near enough for a picture in greys.
 std::uint8_t grey_of(const std::uint8_t* rgb) {
-  return static_cast<std::uint8_t>(0.2126 * rgb[0] + 0.7152 * rgb[1] + 0.0722 * rgb[2] + 0.5);
+  return static_cast<std::uint8_t>(
+      std::lround(0.2126 * rgb[0] + 0.7152 * rgb[1] + 0.0722 * rgb[2]));
 }
 
 QPDFObjectHandle image_object(QPDF& pdf, long width, long height, bool grey,
