@@ -90,16 +90,19 @@ std::vector<Row> nights(const SiteYear& year) {
         night.dark.begin(), night.dark.end(),
         [](const TimeSpan& a, const TimeSpan& b) { return a.to - a.from < b.to - b.from; });
     const bool dark = longest != night.dark.end();
+    const bool skipped = night.from == night.to;  // the zone has no such date
     const std::string notes = fmt::format("{}", fmt::join(night.notes, " "));
-    rows.push_back(
-        {year.place.id, iso_date(night.date), local(zone, night.sunset),
-         local(zone, night.civil_dusk), local(zone, night.nautical_dusk),
-         local(zone, night.astronomical_dusk), local(zone, night.astronomical_dawn),
-         local(zone, night.nautical_dawn), local(zone, night.civil_dawn),
-         local(zone, night.sunrise), local_list(zone, of_the_night(night.moonrises)),
-         local_list(zone, of_the_night(night.moonsets)), Number{100.0 * night.moon_lit, 1},
-         dark ? local(zone, longest->from) : Cell{}, dark ? local(zone, longest->to) : Cell{},
-         Number{length(night.dark).count() * 1440.0, 0}, notes.empty() ? Cell{} : Cell{notes}});
+    rows.push_back({year.place.id, iso_date(night.date), local(zone, night.sunset),
+                    local(zone, night.civil_dusk), local(zone, night.nautical_dusk),
+                    local(zone, night.astronomical_dusk), local(zone, night.astronomical_dawn),
+                    local(zone, night.nautical_dawn), local(zone, night.civil_dawn),
+                    local(zone, night.sunrise), local_list(zone, of_the_night(night.moonrises)),
+                    local_list(zone, of_the_night(night.moonsets)),
+                    skipped ? Cell{} : Cell{Number{100.0 * night.moon_lit, 1}},
+                    dark ? local(zone, longest->from) : Cell{},
+                    dark ? local(zone, longest->to) : Cell{},
+                    skipped ? Cell{} : Cell{Number{length(night.dark).count() * 1440.0, 0}},
+                    notes.empty() ? Cell{} : Cell{notes}});
   }
   return rows;
 }

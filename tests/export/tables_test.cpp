@@ -191,6 +191,18 @@ TEST(Nights, OneRowEachAndEmptyCellsForWhatDoesNotHappen) {
   }
 }
 
+TEST(Nights, ASkippedDateHasARowThatSaysSoAndNothingElse) {
+  const SiteYear apia = year_of_site(test_place(-13.83, -171.77, "Pacific/Apia"), 2011);
+  const auto table = cells(written(TableName::nights, TableFormat::csv,
+                                   {site_rows(TableName::nights, ephemeris_of({2011, 1}), apia)}));
+  ASSERT_EQ(table.size(), 366u);
+  std::vector<std::string> expected(17);
+  expected[0] = "site";
+  expected[1] = "2011-12-30";
+  expected[16] = "short-date";
+  EXPECT_EQ(table[364], expected);
+}
+
 TEST(Constellations, ThirtySixRowsAMonth) {
   const auto table = cells(
       written(TableName::constellations, TableFormat::csv, {rows_of(TableName::constellations)}));
