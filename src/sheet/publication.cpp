@@ -8,25 +8,30 @@
 namespace duskleaf {
 namespace {
 
+/// Scales about the origin, then shifts.
 struct Mover {
-  double dx, dy;
-  void point(Point& p) const {
-    p.x += dx;
-    p.y += dy;
-  }
-  void box(Box& b) const {
-    b.x += dx;
-    b.y += dy;
-  }
+  double scale, dx, dy;
+  void point(Point& p) const { p = {p.x * scale + dx, p.y * scale + dy}; }
+  void box(Box& b) const { b = {b.x * scale + dx, b.y * scale + dy, b.width * scale, b.height * scale}; }
   void path(Path& p) const {
     for (Point& q : p.points) point(q);
   }
-  void operator()(Stroke& m) const { path(m.path); }
+  void operator()(Stroke& m) const {
+    path(m.path);
+    m.width_mm *= scale;
+    for (double& dash : m.dash_mm) dash *= scale;
+  }
   void operator()(Fill& m) const { path(m.path); }
   void operator()(Dots& m) const {
-    for (auto& dot : m.dots) point(dot.centre);
+    for (auto& dot : m.dots) {
+      point(dot.centre);
+      dot.diameter_mm *= scale;
+    }
   }
-  void operator()(Text& m) const { point(m.start); }
+  void operator()(Text& m) const {
+    point(m.start);
+    m.size_pt *= scale;
+  }
   void operator()(Image& m) const { box(m.box); }
   void operator()(Link& m) const { box(m.box); }
   void operator()(std::shared_ptr<ClipGroup>& m) const {
@@ -38,12 +43,11 @@ struct Mover {
 /// The layout of one page: bands of known height first, then shares of what remains; every block is drawn once.
 class PageLayout {
  public:
-  PageLayout(const BlockContext& context, const PageTemplate& page_template, double width, double height)
-      : context_(context),
-        margin_(page_template.margin_mm),
-        width_(width - 2 * margin_),
-        height_(height - 2 * margin_) {}
+  /// The room between the margins, mm.
+  PageLayout(const BlockContext& context, double width, double height)
+      : context_(context), width_(width), height_(height) {}
 
+  /// The marks, with the room's top left corner at the origin.
   std::vector<Mark> draw(const PageTemplate::Page& page) {
     std::vector<std::vector<Mark>> marks(page.bands.size());
     std::vector<double> heights(page.bands.size(), 0.0);
@@ -65,18 +69,19 @@ class PageLayout {
         heights[i] = draw_band(page.bands[i], std::max(0.0, (height_ - taken) * page.bands[i].share / shares), marks[i]);
 
     std::vector<Mark> whole;
-    double y = margin_;
+    double y = 0;
     for (std::size_t i = 0; i < page.bands.size(); ++i) {
       for (Mark& mark : marks[i]) {
-        std::visit(Mover{margin_, y}, mark);
+        std::visit(Mover{1, 0, y}, mark);
         whole.push_back(std::move(mark));
       }
       if (heights[i] > 0) y += heights[i] + page.bands[i].gap_mm;
     }
-    const double overfull = y - page.bands.back().gap_mm - margin_ - height_;
-    if (overfull > 0.05) context_.tally.notes.push_back("a page is " + context_.words.number(overfull, 1) + " mm too full");
+    overfull_ = y - page.bands.back().gap_mm - height_;
     return whole;
   }
+  /// By how many mm the last page drawn was longer than its room; 0 or less: it fits.
+  double overfull() const { return overfull_; }
 
  private:
   /// Draws a band with its top left corner at the origin; returns its height.
@@ -105,8 +110,34 @@ class PageLayout {
 
   static constexpr double between_blocks_mm = 2.5;
   const BlockContext& context_;
-  double margin_, width_, height_;
+  double width_, height_;
+  double overfull_ = 0;
 };
+
+/// A page whose own words make it too long is laid out on a larger sheet and reduced, in steps, down to seven eighths.
+std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& page_template, const PageTemplate::Page& page,
+                            double width, double height) {
+  const double margin = page_template.margin_mm;
+  const int labels_before = context.tally.labels_left_out;
+  const std::size_t notes_before = context.tally.notes.size();
+  std::vector<Mark> marks;
+  double overfull = 0;
+  double scale = 1;
+  for (; scale > 0.87; scale -= 0.025) {
+    context.tally.labels_left_out = labels_before;
+    context.tally.notes.resize(notes_before);
+    PageLayout layout(context, (width - 2 * margin) / scale, (height - 2 * margin) / scale);
+    marks = layout.draw(page);
+    overfull = layout.overfull();
+    if (overfull < 0.05) break;
+  }
+  if (overfull >= 0.05)
+    context.tally.notes.push_back("a page is too full by " + context.words.number(overfull, 1) + " mm");
+  else if (scale < 1)
+    context.tally.notes.push_back("a page is reduced to " + context.words.number(100 * scale, 1) + " % to hold all its words");
+  for (Mark& mark : marks) std::visit(Mover{scale, margin, margin}, mark);
+  return marks;
+}
 
 }  // namespace
 
@@ -133,7 +164,7 @@ SheetDocument make_handout(const Order& order, const Site& site, const Publicati
   for (int index : month_indices) {
     const BlockContext context{order, site, publication, year, index, ephemeris, type, words, theme, tally};
     for (const PageTemplate::Page& page : page_template.pages) {
-      Sheet sheet{width, height, {}, PageLayout(context, page_template, width, height).draw(page)};
+      Sheet sheet{width, height, {}, draw_page(context, page_template, page, width, height)};
       if (!page.bookmark.empty()) {
         const auto [y, m] = year.span.month(index);
         sheet.bookmark = words(page.bookmark, {{"month", words.month_name(m)}, {"year", std::to_string(y)}});

@@ -71,7 +71,7 @@ double Setter::heading(double x, double top, double width_mm, std::string_view t
     Style quiet{Face::italic, theme.table_pt, theme.soft};
     if (width(aside, quiet) <= room) right(x + width_mm, baseline, aside, quiet);
   }
-  return 6.0;
+  return 5.6;
 }
 
 void Setter::rule(double x1, double x2, double y, const Ink& ink, double width_mm) {

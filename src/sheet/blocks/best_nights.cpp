@@ -72,12 +72,12 @@ double draw_best_nights(const BlockContext& c, const BlockOptions&, const Box& a
     std::string reasons;
     for (const NightReason& reason : night.reasons) {
       const std::string text = reason_text(c, reason);
-      if (!text.empty()) reasons += (reasons.empty() ? "" : "; ") + text;
+      if (!text.empty()) reasons += (reasons.empty() ? "" : ", ") + text;
     }
     const std::string date = c.words("date.weekday-day", {{"weekday", c.words.weekday_short(weekday_of(night.date))},
                                                         {"day", std::to_string(day_of(night.date))}});
     set.left(area.x, y + body.size_pt * mm_per_pt * 0.95, date, set.strong(body));
-    y += set.paragraph(area.x + 14.5, y, area.width - 14.5, reasons + ".", body);
+    y += set.paragraph(area.x + 14.5, y, area.width - 14.5, reasons, body);
   }
   return y - area.y + 0.8;
 }

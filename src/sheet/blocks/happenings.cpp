@@ -1,6 +1,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <cmath>
 
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/setting.hpp"
@@ -13,6 +14,12 @@ struct Line {
   std::string when, text;
   bool own = false;
 };
+
+/// Kilometres to the nearest hundred, with a thin space between thousands.
+std::string thousands(double km) {
+  const long value = std::lround(km / 100) * 100;
+  return fmt::format("{}\u202F{:03}", value / 1000, value % 1000);
+}
 
 /// A line for each instant that people notice; phases have their own block.
 std::vector<Line> lines_of_month(const BlockContext& c) {
@@ -27,7 +34,7 @@ std::vector<Line> lines_of_month(const BlockContext& c) {
     if (!in_month(at.date())) continue;
     std::string value;
     if (event.value)
-      value = event_unit(event.kind) == "km" ? c.words.number(std::round(*event.value / 100) / 10 * 1, 0)
+      value = event_unit(event.kind) == "km" ? thousands(*event.value)
                                              : c.words.number(*event.value, 4);
     lines.push_back({at.date(), c.words.time(at), c.words(key, {{"value", value}})});
   }

@@ -1,3 +1,5 @@
+#include <algorithm>
+
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/moon_mark.hpp"
 #include "sheet/setting.hpp"
@@ -34,15 +36,20 @@ double draw_moon_phases(const BlockContext& c, const BlockOptions&, const Box& a
   const std::vector<Phase> phases = phases_of_month(c);
   if (phases.empty()) return 0;  // cannot happen in a month of 28 days or more, but a block with nothing to say closes up
   Setter set(c, out);
-  const double title = set.heading(area.x, area.y, area.width, c.words("moon-phases.title"), c.words("moon-phases.aside"));
+  // One row: its title at the left, then a cell for each phase.
+  set.rule(area.x, area.right(), area.y, c.theme.blue, 0.25);
+  const Style title{Face::bold, 9.5, c.theme.blue};
+  set.left(area.x, area.y + 4.3, c.words("moon-phases.title"), title);
+  set.left(area.x, area.y + 8.0, c.words("moon-phases.aside"), {Face::italic, c.theme.table_pt, c.theme.soft});
+  const double from = std::max(set.width(c.words("moon-phases.title"), title), 30.0) + 3;
   const auto& looks = c.year.month_moons[static_cast<std::size_t>(c.month_index)];
-  const double cell = area.width / static_cast<double>(phases.size());
-  const double radius = 4.2, middle = area.y + title + radius + 0.4;
+  const double cell = (area.width - from) / static_cast<double>(phases.size());
+  const double radius = 3.7, middle = area.y + 1.4 + radius;
   for (std::size_t i = 0; i < phases.size(); ++i) {
     const CivilMinute when = c.year.place.zone.civil(phases[i].event->at);
     const auto day = static_cast<std::size_t>(day_of(when.date())) - 1;
     const Angle lean = day < looks.size() ? looks[day].bright_limb_from_zenith : Angle();
-    const double x = area.x + cell * static_cast<double>(i);
+    const double x = area.x + from + cell * static_cast<double>(i);
     draw_moon({x + radius + 0.3, middle}, radius, phases[i].lit, lean, c.theme, out);
     const double text_x = x + 2 * radius + 2.4;
     set.left(text_x, middle - 1.5, c.words(phases[i].key), set.strong(set.body()));
@@ -51,7 +58,7 @@ double draw_moon_phases(const BlockContext& c, const BlockOptions&, const Box& a
                                        "  " + c.words.time(when),
              set.body());
   }
-  return title + 2 * radius + 1.4;
+  return 2 * radius + 1.8;
 }
 
 }  // namespace duskleaf

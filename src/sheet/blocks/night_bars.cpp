@@ -144,11 +144,11 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   Setter set(c, out);
   const Zone& zone = c.year.place.zone;
   const std::vector<const Night*> nights = nights_of_month(c);
-  const double title = set.heading(area.x, area.y, area.width, c.words("night-bars.title"), c.words("night-bars.aside"));
-
-  const double head = 7.2, foot = 4.6;
+  set.rule(area.x, area.right(), area.y, c.theme.blue, 0.25);
+  const double title = 0.8;
+  const double head = 6.8, foot = 4.4;
   const double rows = static_cast<double>(nights.size());
-  const double pitch = std::clamp((area.height - title - head - foot) / rows, 3.35, 4.4);
+  const double pitch = std::clamp((area.height - title - head - foot) / rows, 2.95, 4.4);
   const bool wide = c.order.clock_12;
   const double time_column = wide ? 13.0 : 10.4;
 

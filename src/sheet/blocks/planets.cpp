@@ -22,7 +22,9 @@ std::string when_seen(const BlockContext& c, const PlanetMonth& planet) {
   }
   if (sight == PlanetSight::evening && planet.first_evening && planet.last_evening) {
     const bool late = *planet.first_evening > first, early = *planet.last_evening < last;
-    const auto day = [&](Date d) { return c.words.day_month(d); };
+    const auto day = [&](Date d) {
+      return c.words("date.day-month", {{"day", std::to_string(day_of(d))}, {"month", c.words.month_short(month_of(d))}});
+    };
     if (late && early)
       text = c.words("planets.evening-between", {{"from", day(*planet.first_evening)}, {"to", day(*planet.last_evening)}});
     else if (late)
@@ -42,8 +44,8 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   const Style cell = set.table();
   Style head = cell;
   head.ink = c.theme.soft;
-  const double when_x = area.x + 15, in_x = area.right() - 21, magnitude_x = in_x - 3, where_x = magnitude_x - 10,
-               best_x = where_x - 12;
+  const double when_x = area.x + 13, in_x = area.right() - 17, magnitude_x = in_x - 2.5, where_x = magnitude_x - 8,
+               best_x = where_x - 11.5;
   set.left(when_x, y + 2.4, c.words("planets.when"), head);
   set.right(best_x, y + 2.4, c.words("planets.best"), head);
   set.right(where_x, y + 2.4, c.words("planets.where"), head);
@@ -53,7 +55,7 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   for (const PlanetMonth& planet : planet_month(c.ephemeris, c.year, c.month_index)) {
     const double baseline = y + 2.6;
     set.left(area.x, baseline, c.words("body." + std::string(body_name(planet.planet))), set.strong(cell));
-    set.fitted(when_x, baseline, when_seen(c, planet), cell, best_x - 11.5 - when_x);
+    set.fitted(when_x, baseline, when_seen(c, planet), cell, best_x - (c.order.clock_12 ? 11.5 : 9) - when_x);
     if (planet.best && planet.place) {
       set.right(best_x, baseline, c.words.time(zone.civil(*planet.best)), cell);
       set.right(where_x, baseline,
@@ -66,9 +68,9 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
     }
     set.right(magnitude_x, baseline, c.words.number(planet.magnitude, 1), cell);
     set.fitted(in_x, baseline, constellations()[static_cast<std::size_t>(planet.constellation)].name, cell, area.right() - in_x);
-    y += 3.5;
+    y += 3.3;
   }
-  return y - area.y + 0.4;
+  return y - area.y;
 }
 
 }  // namespace duskleaf
