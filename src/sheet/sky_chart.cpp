@@ -205,7 +205,7 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
   const double width = type.width(guide.label, Face::italic, size);
   const double drop = 0.55 * type.descent(Face::italic, size);
   const double top = type.ascent(Face::italic, size);
-  double least = guide.first ? 16 : 5;
+  double least = guide.first ? 16 : 7;
   std::optional<Text> best;
   std::vector<Box> best_boxes;
   for (const auto& stretch : guide.stretches) {
@@ -227,7 +227,8 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
         below = std::max(below, -off);
       }
       for (const bool over : {true, false}) {
-        const double lift = over ? above + drop + 0.45 : -(below + top + 0.35);
+        const double clear = LabelPlacer::padding_mm + 0.1;
+        const double lift = over ? above + drop + clear : -(below + top + clear);
         const Point start{a.x + 0.5 * c - lift * s, a.y - 0.5 * s - lift * c};
         // Axis-parallel boxes along the turned line of text.
         const int pieces = std::max(1, static_cast<int>(std::ceil(width / (0.8 * top))));
