@@ -109,10 +109,9 @@ struct TypeSet::Impl {
       return {own->advance, own->id, static_cast<std::int16_t>(Font::kern_slot(character)), false,
               character};
     // Spaces of other widths: the face's own space, so that the line stays in one font.
-    if (const double part = part_of_space(character); part > 0) {
-      const Font::Glyph space = face.glyph(U' ').value();  // each font has one: Font sees to it
-      return {space.advance * part, space.id, -1, false, character};
-    }
+    if (const double part = part_of_space(character); part > 0)
+      if (const auto space = face.glyph(U' '))
+        return {space->advance * part, space->id, -1, false, character};
     if (const auto other = fallback->glyph(character))
       return {other->advance, other->id, -1, true, character};
     return look_up(face, replacement);
