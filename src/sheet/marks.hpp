@@ -47,8 +47,8 @@ struct Stroke {
   Path path;
   double width_mm;
   Ink ink{};
-  std::vector<double> dash_mm{}; // empty: solid
-  bool round = false;           // caps and joins
+  std::vector<double> dash_mm{};  // empty: solid
+  bool round = false;             // caps and joins
 };
 struct Fill {
   Path path;
@@ -65,20 +65,21 @@ struct Dots {
   Ink ink{};
 };
 struct Text {
-  Point start;                 // left end of the baseline
-  std::string words;           // UTF-8, one line
+  Point start;        // left end of the baseline
+  std::string words;  // UTF-8, one line
   Face face = Face::regular;
   double size_pt = 8.5;
   Ink ink{};
-  double tracking_em = 0;      // extra space after each character; keep below 0.09 so that words stay words
-  double turn_degrees = 0;     // counterclockwise about `start`
+  double tracking_em =
+      0;  // extra space after each character; keep below 0.09 so that words stay words
+  double turn_degrees = 0;  // counterclockwise about `start`
 };
 /// A picture: PNG bytes, shared.
 struct Image {
   Box box;
   std::shared_ptr<const std::string> png;
   std::string description{};
-  bool grey = false;           // draw its colours as greys
+  bool grey = false;  // draw its colours as greys
 };
 struct Link {
   Box box;
@@ -94,7 +95,7 @@ struct ClipGroup {
 /// One page: a plain list of marks, in drawing and reading order.
 struct Sheet {
   double width_mm, height_mm;
-  std::string bookmark;        // empty: none
+  std::string bookmark;  // empty: none
   std::vector<Mark> marks;
 };
 struct SheetDocument {
