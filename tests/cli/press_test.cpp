@@ -1,0 +1,129 @@
+// Pressing with the real program: what it writes, whatever the threads, the locale and the clock of
+// the machine, and what it leaves when something fails.
+#include <gmock/gmock.h>
+#include <gtest/gtest.h>
+
+#include "cli/program.hpp"
+
+namespace duskleaf {
+namespace {
+
+using testing::ElementsAre;
+using testing::HasSubstr;
+using testing::IsEmpty;
+using testing::StartsWith;
+
+const std::string three_sites =
+    "year: 2027\nclock: 24\npublications: [{ template: monthly-handout, months: [3, 6], name: h "
+    "}]\nsites:\n"
+    "  - { id: alder, name: Alder Hill, latitude: 52, longitude: 5, time_zone: Europe/Amsterdam }\n"
+    "  - { id: birch, name: Birch Bay, latitude: -43, longitude: 171, time_zone: Pacific/Auckland "
+    "}\n"
+    "  - { id: cedar, name: Cedar Cape, latitude: 70, longitude: 20, time_zone: Europe/Oslo }\n";
+
+std::vector<std::string> contents(const ScratchFolder& folder, const std::string& out) {
+  std::vector<std::string> list;
+  for (const std::string& file : files_below(folder.file(out)))
+    list.push_back(file + "\n" + bytes_of(folder.file(out + "/" + file)));
+  return list;
+}
+
+TEST(Press, WritesTheSameBytesWhateverTheMachine) {
+  const ScratchFolder folder;
+  folder.write("o.yaml", three_sites);
+  const Answer plain = run(folder, {"press", "o.yaml", "-o", "a", "--month", "3", "--jobs", "1"});
+  ASSERT_EQ(plain.code, 0) << plain.err;
+  EXPECT_THAT(plain.err, IsEmpty());  // quiet in a pipe
+  EXPECT_THAT(files_below(folder.file("a")),
+              ElementsAre("alder/h-2027-03.pdf", "birch/h-2027-03.pdf", "cedar/h-2027-03.pdf",
+                          "report.csv"));
+  EXPECT_THAT(bytes_of(folder.file("a/birch/h-2027-03.pdf")), StartsWith("%PDF-1.7"));
+  EXPECT_EQ(run(folder, {"press", "o.yaml", "-o", "b", "--month", "3", "--jobs", "4"},
+                "env LANG=de_DE.UTF-8 LC_ALL=tr_TR.UTF-8 TZ=Asia/Kathmandu")
+                .code,
+            0);
+  EXPECT_EQ(contents(folder, "a"), contents(folder, "b"));
+}
+
+TEST(Press, OneFailingSiteDoesNotStopTheRest) {
+  const ScratchFolder folder;
+  folder.write("o.yaml", three_sites);
+  folder.write("out/birch", "a file where the site's folder would be");
+  const Answer answer = run(folder, {"press", "o.yaml", "-o", "out", "--month", "6"});
+  EXPECT_EQ(answer.code, 1);
+  EXPECT_THAT(
+      answer.err,
+      HasSubstr("birch/h-2027-06.pdf: out/birch: the folder cannot be made (Not a directory)\n"));
+  EXPECT_THAT(files_below(folder.file("out")),
+              ElementsAre("alder/h-2027-06.pdf", "birch", "cedar/h-2027-06.pdf", "report.csv"));
+  EXPECT_EQ(bytes_of(folder.file("out/report.csv")),
+            "order,site,publication,file,status,reason\n"
+            "o.yaml,alder,h,alder/h-2027-03.pdf,skipped,another month was asked for\n"
+            "o.yaml,alder,h,alder/h-2027-06.pdf,pressed,\n"
+            "o.yaml,birch,h,birch/h-2027-03.pdf,skipped,another month was asked for\n"
+            "o.yaml,birch,h,birch/h-2027-06.pdf,failed,out/birch: the folder cannot be made (Not a "
+            "directory)\n"
+            "o.yaml,cedar,h,cedar/h-2027-03.pdf,skipped,another month was asked for\n"
+            "o.yaml,cedar,h,cedar/h-2027-06.pdf,pressed,\n");
+}
+
+TEST(Press, SharesTogetherAreTheWhole) {
+  const ScratchFolder folder;
+  folder.write("o.yaml", three_sites);
+  EXPECT_EQ(run(folder, {"press", "o.yaml", "-o", "out", "--month", "3", "--share", "1/2"}).code,
+            0);
+  EXPECT_THAT(files_below(folder.file("out")),
+              ElementsAre("alder/h-2027-03.pdf", "cedar/h-2027-03.pdf", "report-1-of-2.csv"));
+  EXPECT_EQ(run(folder, {"press", "o.yaml", "-o", "out", "--month", "3", "--share", "2/2"}).code,
+            0);
+  EXPECT_THAT(files_below(folder.file("out")),
+              ElementsAre("alder/h-2027-03.pdf", "birch/h-2027-03.pdf", "cedar/h-2027-03.pdf",
+                          "report-1-of-2.csv", "report-2-of-2.csv"));
+}
+
+TEST(Press, SiteAndYearNarrowIt) {
+  const ScratchFolder folder;
+  folder.write("o.yaml", three_sites);
+  EXPECT_EQ(run(folder, {"press", "o.yaml", "--site", "cedar", "--year", "2031"}).code, 0);
+  EXPECT_THAT(files_below(folder.file("out")),
+              ElementsAre("cedar/h-2031-03.pdf", "cedar/h-2031-06.pdf", "report.csv"));
+}
+
+TEST(Press, OneFileForTheYear) {
+  const ScratchFolder folder;
+  std::string text = three_sites;
+  folder.write("o.yaml", text.replace(text.find("name: h"), 7, "files: year"));
+  EXPECT_EQ(run(folder, {"press", "o.yaml", "--site", "alder"}).code, 0);
+  EXPECT_THAT(files_below(folder.file("out")),
+              ElementsAre("alder/monthly-handout-2027.pdf", "report.csv"));
+}
+
+TEST(Press, TwoOrdersMayNotWriteOneFile) {
+  const ScratchFolder folder;
+  folder.write("o.yaml", three_sites);
+  folder.write("p.yaml", three_sites);
+  const Answer answer = run(folder, {"press", "o.yaml", "p.yaml"});
+  EXPECT_EQ(answer.code, 3);
+  EXPECT_EQ(answer.err,
+            "p.yaml:5:11: alder/h-2027-03.pdf would also be written by o.yaml; press the two "
+            "orders into different folders, "
+            "or give the site another id\n");
+  EXPECT_FALSE(std::filesystem::exists(folder.file("out")));
+}
+
+TEST(Press, WarnsOfAPlaceThatLooksWrong) {
+  const ScratchFolder folder;
+  folder.write(
+      "o.yaml",
+      "year: 2027\npublications: [{ template: monthly-handout, months: [1] }]\n"
+      "sites: [{ id: a, name: A, latitude: 40, longitude: 105, time_zone: America/Denver }]\n");
+  const Answer answer = run(folder, {"press", "o.yaml"});
+  EXPECT_EQ(answer.code, 0);
+  EXPECT_EQ(answer.err,
+            "o.yaml:3:14: warning: a: the clock of America/Denver is 10.0 hours from the Sun's at "
+            "this longitude; is the "
+            "longitude's sign right (east positive)?\n");
+}
+
+}  // namespace
+}  // namespace duskleaf

@@ -1,0 +1,87 @@
+// The run's parts: whole files, workers, the report. Expectations follow from their own
+// descriptions.
+#include <atomic>
+#include <gmock/gmock.h>
+#include <gtest/gtest.h>
+
+#include "order/order.hpp"
+#include "order/scratch_folder.hpp"
+#include "run/report.hpp"
+#include "run/whole_file.hpp"
+#include "run/workers.hpp"
+
+namespace duskleaf {
+namespace {
+
+std::vector<std::string> names_in(const ScratchFolder& folder) {
+  std::vector<std::string> names;
+  for (const auto& entry : std::filesystem::directory_iterator(folder.path()))
+    names.push_back(entry.path().filename().string());
+  std::sort(names.begin(), names.end());
+  return names;
+}
+
+TEST(WholeFile, AppearsAtItsEndAlone) {
+  const ScratchFolder folder;
+  folder.write("t.txt", "before");
+  {
+    WholeFile file(folder.path() / "t.txt");
+    file.stream() << "after";
+    file.stream().flush();
+    std::string now;
+    std::getline(std::ifstream(folder.path() / "t.txt"), now);
+    EXPECT_EQ(now, "before");
+    file.finish();
+  }
+  std::string now;
+  std::getline(std::ifstream(folder.path() / "t.txt"), now);
+  EXPECT_EQ(now, "after");
+  EXPECT_THAT(names_in(folder), testing::ElementsAre("t.txt"));
+}
+
+TEST(WholeFile, LeavesNothingWhenNotFinished) {
+  const ScratchFolder folder;
+  { WholeFile(folder.path() / "t.txt").stream() << "half"; }
+  EXPECT_THAT(names_in(folder), testing::IsEmpty());
+}
+
+TEST(WholeFile, LeavesNothingWhenItCannotTakeItsPlace) {
+  const ScratchFolder folder;
+  folder.write("t.txt/inside", "");  // a folder of that name, not empty
+  EXPECT_THROW(write_whole(folder.path() / "t.txt", "bytes"), FileError);
+  EXPECT_THAT(names_in(folder), testing::ElementsAre("t.txt"));
+}
+
+TEST(WritableFolder, IsMadeAndLeftEmpty) {
+  const ScratchFolder folder;
+  check_writable_folder(folder.path() / "a/b");
+  EXPECT_TRUE(std::filesystem::is_empty(folder.path() / "a/b"));
+  folder.write("file", "");
+  EXPECT_THROW(check_writable_folder(folder.path() / "file"), FileError);
+  EXPECT_THROW(check_writable_folder(folder.path() / "file/c"), FileError);
+}
+
+TEST(Workers, DoEachTaskOnce) {
+  for (const int jobs : {0, 1, 3, 64}) {
+    std::vector<std::atomic<int>> done(50);
+    run_tasks(done.size(), jobs, [&](std::size_t i) { ++done[i]; });
+    for (const auto& times : done) EXPECT_EQ(times, 1) << jobs << " jobs";
+  }
+  run_tasks(0, 4, [](std::size_t) { FAIL() << "there is no task"; });
+}
+
+TEST(Report, QuotesWhatCsvMust) {
+  PressReport report;
+  report.rows.push_back(
+      {"o.yaml", "a", "h", "a/h.pdf", ReportRow::Status::failed, "said \"no\", twice", 0, {}});
+  report.rows.push_back({"o.yaml", "b", "h", "b/h.pdf", ReportRow::Status::pressed, "", 3, {}});
+  EXPECT_EQ(report_csv(report),
+            "order,site,publication,file,status,reason\n"
+            "o.yaml,a,h,a/h.pdf,failed,\"said \"\"no\"\", twice\"\n"
+            "o.yaml,b,h,b/h.pdf,pressed,\n");
+  EXPECT_EQ(report.count(ReportRow::Status::failed), 1);
+  EXPECT_EQ(report.count(ReportRow::Status::skipped), 0);
+}
+
+}  // namespace
+}  // namespace duskleaf
