@@ -59,10 +59,10 @@ void doubt_dates(const Site& site, const Span& span, std::vector<Doubt>& out) {
 
 std::vector<Doubt> doubts(const Order& order) {
   std::vector<Doubt> list = order.noticed;
-  const auto site = std::find_if(order.sites.begin(), order.sites.end(),
-                                 [](const Site& s) { return !s.place.skyline.empty(); });
-  if (site != order.sites.end())
-    list.push_back({site->where, site->place.id + ": the skyline is not printed yet", true});
+  const auto walled = std::find_if(order.sites.begin(), order.sites.end(),
+                                   [](const Site& s) { return !s.place.skyline.empty(); });
+  if (walled != order.sites.end())
+    list.push_back({walled->where, walled->place.id + ": the skyline is not printed yet", true});
   for (const Site& site : order.sites) {
     doubt_place(site, order.span, list);
     doubt_dates(site, order.span, list);
