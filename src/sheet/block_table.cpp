@@ -17,6 +17,7 @@ const std::vector<BlockSpec>& block_table() {
        "what the charts' dots and lines mean",
        {{"corner", "top-left", "top-left|top-right", "where it stands in the block it lies over"}},
        draw_chart_key},
+      {"chart-use", "how to hold the charts, for the top right corner of a dome", {}, draw_chart_use},
       {"ribbon", "the sky within 40 degrees of the celestial equator, with the site's horizon", {}, draw_ribbon},
       {"night-bars", "one row a night: times, Moon, dark hours, and a bar of the twilights", {}, draw_night_bars},
       {"moon-phases", "the month's phases with date, time and look", {}, draw_moon_phases},

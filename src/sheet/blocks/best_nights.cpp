@@ -66,11 +66,14 @@ double draw_best_nights(const BlockContext& c, const BlockOptions&, const Box& a
                                                  {"to", c.words.time_of_day(choice.window->to)}});
   double y = area.y + set.heading(area.x, area.y, area.width, choice.title, aside);
   const Style body = set.body();
+  if (std::none_of(ranks.begin(), ranks.end(), [](const NightRank& r) { return r.dark_minutes > 0 || r.moon_minutes > 0; }))
+    return y + set.paragraph(area.x, y, area.width, c.words("best-nights.none"), body) - area.y;
   const std::size_t shown = std::min<std::size_t>(ranks.size(), 3);
   for (std::size_t i = 0; i < shown; ++i) {
     const NightRank& night = ranks[i];
     std::string reasons;
     for (const NightReason& reason : night.reasons) {
+      if (reason.key == "darkest-limit" && night.dark_minutes <= 0) continue;  // says what "dark" meant: nothing was
       const std::string text = reason_text(c, reason);
       if (!text.empty()) reasons += (reasons.empty() ? "" : ", ") + text;
     }

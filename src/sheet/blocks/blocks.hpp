@@ -8,6 +8,7 @@ namespace duskleaf {
 double draw_masthead(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_dome(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_chart_key(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
+double draw_chart_use(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_chart_fits(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_ribbon(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_night_bars(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);

@@ -84,6 +84,12 @@ double draw_constellations(const BlockContext& c, const BlockOptions&, const Box
       c.words("constellations.aside", {{"date", c.words.day_month(evening.date)},
                                        {"time", c.words.time(c.year.place.zone.civil(evening.moment))}});
   double y = area.y + set.heading(area.x, area.y, area.width, c.words("constellations.title"), when);
+  if (evening.shift == EveningShift::no_stars) {
+    const std::string text = evening.stars_return
+                                 ? c.words("constellations.too-bright-until", {{"date", c.words.day_month(*evening.stars_return)}})
+                                 : c.words("constellations.too-bright");
+    return y + set.paragraph(area.x, y, area.width, text, set.body()) - area.y;
+  }
   const double width = (area.width - 2 * column_gap) / 3;
   double used = 0, x = area.x;
   for (const FigurePhase phase : {FigurePhase::rising, FigurePhase::high, FigurePhase::sinking}) {

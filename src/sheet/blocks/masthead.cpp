@@ -50,7 +50,7 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
     const Style style{Face::light, 17, c.theme.blue};
     set.left(area.x, area.y + 6.2, title, style);
     const double used = set.width(title, style);
-    set.left(area.x + used + 3, area.y + 6.2, c.words("masthead.back"), {Face::italic, c.theme.table_pt, c.theme.soft});
+    set.left(area.x + used + 3, area.y + 6.2, c.words("masthead.back"), {Face::italic, c.theme.body_pt, c.theme.soft});
     set.right(area.right(), area.y + 6.2, c.site.masthead.group.empty() ? c.site.name : c.site.masthead.group,
               {Face::bold, 9, c.theme.black});
     return 8.0;

@@ -138,6 +138,33 @@ std::string moon_cell(const BlockContext& c, const Night& night, bool rise) {
   return (rise ? night.moon_up_at_dusk : up_at_end) ? c.words("night-bars.up") : "–";
 }
 
+/// Neighbouring rows with the same note share one label.
+void label_bars(const BlockContext& c, Setter& set, const Axis& axis, const std::vector<const Night*>& nights, double bars_top,
+                double pitch, std::vector<Mark>& out) {
+  const Style quiet = set.table();
+  for (std::size_t i = 0; i < nights.size();) {
+    const std::string note = bar_note(c, *nights[i]);
+    std::size_t end = i + 1;
+    while (end < nights.size() && bar_note(c, *nights[end]) == note) ++end;
+    if (!note.empty()) {
+      const double width = set.width(note, quiet), x = axis.x + (axis.width - width) / 2;
+      const double middle = bars_top + pitch * static_cast<double>(i + end) / 2;
+      out.push_back(Fill{Path::rectangle({x - 1, middle - pitch / 2 + 0.2, width + 2, pitch - 0.4}), c.theme.paper});
+      set.left(x, middle + c.type.cap_height(quiet.face, quiet.size_pt) / 2, note, quiet);
+    }
+    i = end;
+  }
+}
+
+/// Under the times: what "dark" means this month, and the "up" of the Moon's columns.
+std::string foot_note(const BlockContext& c, const std::vector<const Night*>& nights) {
+  const bool always_day =
+      std::all_of(nights.begin(), nights.end(), [](const Night* n) { return n->sun == Presence::up_throughout; });
+  if (always_day) return c.words("night-bars.no-night");
+  const double limit = nights.front()->dark_limit.degrees();
+  return c.words(limit < -15 ? "night-bars.limit" : "night-bars.limit-shallow", {{"degrees", c.words.number(-limit, 0)}});
+}
+
 }  // namespace
 
 double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
@@ -169,8 +196,6 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   Style head_style = cell;
   head_style.ink = c.theme.soft;
   const double top = area.y + title;
-  const Night& sample = *nights.front();
-  const std::string depth = c.words.number(-sample.dark_limit.degrees(), 0);
   const std::string_view heads[] = {"sunset", "dark-from", "dark-to", "sunrise", "moonrise", "moonset"};
   for (std::size_t i = 0; i < 6; ++i) {
     const std::string key(heads[i]);
@@ -233,15 +258,8 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
       draw_moon({moon_x, y + pitch / 2}, std::min(1.45, pitch * 0.42), looks[i].lit, looks[i].bright_limb_from_zenith, c.theme, out);
     set.right(dark_right, baseline, duration(c, dark_minutes(night.dark_or_darkest)), set.strong(cell));
     draw_bar(c, axis, row, out);
-    if (const std::string note = bar_note(c, night); !note.empty()) {
-      Style quiet = cell;
-      quiet.face = Face::condensed;
-      const double width = set.width(note, quiet);
-      const double note_x = axis.x + (axis.width - width) / 2;
-      out.push_back(Fill{Path::rectangle({note_x - 1, y + 0.25, width + 2, pitch - 0.5}), c.theme.paper});
-      set.left(note_x, baseline, note, quiet);
-    }
   }
+  label_bars(c, set, axis, nights, bars_top, pitch, out);
 
   // The key under the bars, and what the dark hours count.
   double key_x = axis.x;
@@ -255,8 +273,7 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   out.push_back(Fill{Path::rectangle({key_x, key_y, 4, 2.8}), c.theme.dark});
   out.push_back(Fill{Path::rectangle({key_x, key_y + 0.8, 4, 1.2}), c.theme.paper});
   set.left(key_x + 5, key_baseline, c.words("night-bars.moon-up"), head_style);
-  const std::string limit = c.words(sample.dark_limit.degrees() < -15 ? "night-bars.limit" : "night-bars.limit-shallow", {{"degrees", depth}});
-  set.fitted(area.x, key_baseline, limit, head_style, axis.x - area.x - 2);
+  set.fitted(area.x, key_baseline, foot_note(c, nights), head_style, axis.x - area.x - 2);
   return bars_bottom + foot - area.y;
 }
 
