@@ -15,7 +15,10 @@
 namespace duskleaf {
 namespace {
 
-constexpr double strip_mm = 7.0;  // direction letters and the title under the base
+/// Height of the direction letters and the title under the base.
+double strip_height(const BlockContext& context) {
+  return 3.4 + context.type.cap_height(Face::bold, context.theme.label_pt + 2);
+}
 
 void draw_ground(const DomeView& view, const Theme& theme, std::vector<Mark>& out) {
   out.push_back(Fill{view.outline_path(), theme.lap});
@@ -150,7 +153,8 @@ void add_bodies(SkyChart& chart, const DomeView& view) {
 
 DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const Box& area,
                          std::vector<Mark>& out) {
-  const double radius = std::min(area.width / 2, area.height - strip_mm);
+  const double strip = strip_height(context);
+  const double radius = std::min(area.width / 2, area.height - strip);
   const DomeView view({area.x + area.width / 2, area.y + radius}, radius,
                       dome_azimuth(facing, context.site.place.observer.latitude));
   const EveningSky& evening = context.evening();
@@ -179,7 +183,7 @@ DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const B
   }
   chart.finish(out);
   draw_frame(view, context, out);
-  return {radius + strip_mm, view.outline(), chart.label_boxes(), chart.labels()};
+  return {radius + strip, view.outline(), chart.label_boxes(), chart.labels()};
 }
 
 double draw_dome(const BlockContext& context, const BlockOptions& options, const Box& area,

@@ -14,7 +14,13 @@
 namespace duskleaf {
 namespace {
 
-constexpr double title_mm = 4.6, months_mm = 4.4;
+/// Heights of the title above the band and of the months' names under it.
+double title_height(const BlockContext& context) {
+  return 2.2 + context.type.cap_height(Face::bold, context.theme.label_pt + 1.5);
+}
+double months_height(const BlockContext& context) {
+  return 2.4 + context.type.cap_height(Face::bold, context.theme.label_pt);
+}
 constexpr double ribbon_limit = 4.4;  // faintest stars drawn: all of the band, up or not
 
 void draw_ground(const RibbonView& view, const Theme& theme, std::vector<Mark>& out) {
@@ -125,7 +131,7 @@ void draw_months(const RibbonView& view, const BlockContext& context, std::vecto
     const std::string words = context.words.month_short(context.year.evenings[index].month);
     const double width = context.type.width(words, face, size);
     const double left = std::clamp(x - width / 2, band.x, band.right() - width);
-    const Box box{left - 0.6, band.bottom(), width + 1.2, months_mm};
+    const Box box{left - 0.6, band.bottom(), width + 1.2, 1};
     for (const Box& other : used)
       if (other.x < box.right() && box.x < other.right()) return;
     used.push_back(box);
@@ -189,8 +195,9 @@ void add_bodies(SkyChart& chart, const RibbonView& view) {
 RibbonDrawing compose_ribbon(const BlockContext& context, const Box& area, std::vector<Mark>& out) {
   const Theme& theme = context.theme;
   const EveningSky& evening = context.evening();
-  const double height = std::min(area.height - title_mm - months_mm, area.width / 360 * 80);
-  const Box band{area.x, area.y + title_mm, area.width, height};
+  const double title = title_height(context), months = months_height(context);
+  const double height = std::min(area.height - title - months, area.width / 360 * 80);
+  const Box band{area.x, area.y + title, area.width, height};
   const Angle latitude = context.site.place.observer.latitude;
   const RibbonView view(band, evening.local_sidereal_time, latitude);
 
@@ -224,7 +231,7 @@ RibbonDrawing compose_ribbon(const BlockContext& context, const Box& area, std::
   out.insert(out.end(), scales.begin(), scales.end());
   out.emplace_back(Stroke{Path::rectangle(band), 0.3, theme.blue, {}, false});
   draw_months(view, context, out);
-  return {title_mm + height + months_mm, {band, {}, 0}, chart.label_boxes(), chart.labels()};
+  return {title + height + months, {band, {}, 0}, chart.label_boxes(), chart.labels()};
 }
 
 double draw_ribbon(const BlockContext& context, const BlockOptions&, const Box& area,
