@@ -31,13 +31,19 @@ class TreeBuilder : public YAML::EventHandler {
   TreeBuilder(const std::string& file, const std::vector<std::string_view>& lines)
       : file_(file), lines_(lines) {}
 
-  /// yaml-cpp counts lines from 0 and columns in bytes.
+  /// yaml-cpp counts lines from 0 and columns in bytes. Marks mostly go forward, so characters are
+  /// counted on from the last one: a single line of a megabyte would else take the square of its
+  /// length.
   Location locate(const YAML::Mark& mark) const {
     if (mark.is_null()) return {file_, 1, 1};
     const auto line = static_cast<std::size_t>(std::max(mark.line, 0));
+    const auto byte = static_cast<std::size_t>(std::max(mark.column, 0));
     const std::string_view text = line < lines_.size() ? lines_[line] : std::string_view();
-    return {file_, mark.line + 1,
-            column_of(text, static_cast<std::size_t>(std::max(mark.column, 0)))};
+    if (line != last_.line || byte < last_.byte) last_ = {line, 0, 1};
+    last_.column +=
+        column_of(text.substr(std::min(last_.byte, text.size())), byte - last_.byte) - 1;
+    last_.byte = byte;
+    return {file_, mark.line + 1, last_.column};
   }
   YamlValue take_root() { return std::move(root_); }
   bool has_root() const { return has_root_; }
@@ -143,6 +149,10 @@ class TreeBuilder : public YAML::EventHandler {
 
   const std::string& file_;
   const std::vector<std::string_view>& lines_;
+  mutable struct {
+    std::size_t line, byte;
+    int column;
+  } last_{0, 0, 1};
   std::vector<Level> levels_;
   YamlValue root_;
   bool has_root_ = false;

@@ -120,7 +120,7 @@ TEST(Press, WarnsOfAPlaceThatLooksWrong) {
   const Answer answer = run(folder, {"press", "o.yaml"});
   EXPECT_EQ(answer.code, 0);
   EXPECT_EQ(answer.err,
-            "o.yaml:3:14: warning: a: the clock of America/Denver is 10.0 hours from the Sun's at "
+            "o.yaml:3:15: warning: a: the clock of America/Denver is 10.0 hours from the Sun's at "
             "this longitude; is the "
             "longitude's sign right (east positive)?\n");
 }

@@ -213,5 +213,14 @@ INSTANTIATE_TEST_SUITE_P(
             "go into a CSV file: "
             "sites_from)"}));
 
+// A single long line was once measured from its beginning for each of its values: minutes for a
+// megabyte.
+TEST(LongLine, IsReadInTheTimeOfItsLength) {
+  const std::string text = "a: [" + std::string(200'000, ',') + "é ]\nb: [1, 2\n";
+  const auto begin = std::chrono::steady_clock::now();
+  EXPECT_THAT(message_of(text), testing::StartsWith("o.yaml:"));
+  EXPECT_LT(std::chrono::steady_clock::now() - begin, std::chrono::seconds(10));
+}
+
 }  // namespace
 }  // namespace duskleaf
