@@ -62,7 +62,8 @@ constexpr std::array<Seat, 8> seats = {{{1, 0, 0.0},
                                         {-1, 1, 1.0},
                                         {0, -1, 0.8},
                                         {0, 1, 0.9}}};
-constexpr std::array<std::pair<double, double>, 2> distances = {{{0.55, 0.0}, {1.5, 1.2}}};
+constexpr std::array<std::pair<double, double>, 3> distances = {
+    {{0.55, 0.0}, {1.5, 1.2}, {2.7, 2.6}}};
 
 }  // namespace
 
@@ -221,6 +222,8 @@ std::optional<PlacedLabel> LabelPlacer::seat(const LabelRequest& request) const 
                0.12 * static_cast<double>(i));
     if (request.places.empty()) {
       for (const auto& [gap, far_cost] : distances) {
+        // So far off, a name still finds its reader only if it is of the few that matter.
+        if (4 * far_cost > request.cost_limit) break;
         const double reach = request.clearance_mm + gap;
         for (const Seat& s : seats) {
           const double slant = s.dx != 0 && s.dy != 0 ? 0.72 : 1.0;

@@ -35,9 +35,12 @@ void draw_ground(const RibbonView& view, const Theme& theme, std::vector<Mark>& 
 void add_horizons(SkyChart& chart, const RibbonView& view) {
   const BlockContext& context = chart.context();
   const Theme& theme = context.theme;
+  // At a pole nothing rises or sets.
+  const bool turns = std::abs(context.site.place.observer.latitude.degrees()) < 88;
   for (const bool east : {true, false})
     chart.add_guide(view.horizon(east, Angle()), {0.35, theme.blue, {}, 0.6},
-                    context.words(east ? "ribbon.rising" : "ribbon.setting"), true);
+                    turns ? context.words(east ? "ribbon.rising" : "ribbon.setting") : "", true);
+  if (!turns) return;
   // Two hours earlier the horizon stood 30 degrees of hour angle west of where it stands now;
   // later, east.
   for (const double hours : {-2.0, 2.0}) {
