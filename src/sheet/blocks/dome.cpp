@@ -8,7 +8,7 @@
 #include "sheet/sky_chart_dome.hpp"
 #include "sky/moon_look.hpp"
 
-// The half of the sky that one faces, as pages.md's first drawing describes it. Stars stand at
+// The half of the sky that one faces. Stars stand at
 // their true altitude; refraction, half a degree on the horizon, would move them by less than the
 // smallest dot's width two degrees higher.
 

@@ -9,7 +9,7 @@
 #include "sheet/sky_chart_ribbon.hpp"
 #include "sky/moon_look.hpp"
 
-// The sky along the celestial equator, as pages.md's second drawing describes it.
+// The sky along the celestial equator: what is up, what will be, and which month brings what.
 
 namespace duskleaf {
 namespace {
@@ -118,11 +118,21 @@ void draw_months(const RibbonView& view, const BlockContext& context, std::vecto
   const Theme& theme = context.theme;
   const Box& band = view.band();
   Path ticks;
+  // The same reading of the clock as on this page, whatever the order's hour and the law's summer
+  // time.
+  const Place& place = context.site.place;
+  const std::chrono::minutes clock =
+      place.zone.civil(context.evening().moment).time - context.evening().date;
   std::vector<std::pair<double, std::size_t>> places;
   for (std::size_t i = 0; i < context.year.evenings.size(); ++i) {
     const EveningSky& evening = context.year.evenings[i];
     if (evening.month == 0) continue;
-    places.push_back({view.at(view.hour_angle(evening.local_sidereal_time), Angle()).x, i});
+    const Angle sidereal =
+        static_cast<int>(i) == context.month_index
+            ? evening.local_sidereal_time
+            : context.ephemeris.apparent_sidereal_time(place.zone.instant(evening.date, clock)) +
+                  place.observer.longitude;
+    places.push_back({view.at(view.hour_angle(sidereal), Angle()).x, i});
   }
   std::sort(places.begin(), places.end());
   // This month's name first, then the others where there is room.
