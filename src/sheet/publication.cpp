@@ -108,7 +108,7 @@ class PageLayout {
     return tallest;
   }
 
-  static constexpr double between_blocks_mm = 2.5;
+  static constexpr double between_blocks_mm = 2.0;
   const BlockContext& context_;
   double width_, height_;
   double overfull_ = 0;

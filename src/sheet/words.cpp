@@ -62,6 +62,12 @@ std::string Words::time(const CivilMinute& t) const {
   return time_of_day(std::chrono::minutes(t.hour() * 60 + t.minute()));
 }
 
+std::string Words::whole_hour(int hour) const {
+  const int of_day = ((hour % 24) + 24) % 24;
+  if (!clock_12_) return fmt::format("{:02}:00", of_day);
+  return (*this)(of_day < 12 ? "time.am" : "time.pm", {{"time", std::to_string(of_day % 12 == 0 ? 12 : of_day % 12)}});
+}
+
 std::string Words::month_name(int month) const { return (*this)(fmt::format("month.{}", month)); }
 std::string Words::month_short(int month) const { return (*this)(fmt::format("month-short.{}", month)); }
 std::string Words::weekday_name(std::chrono::weekday day) const {

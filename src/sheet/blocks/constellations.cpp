@@ -35,9 +35,10 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
   const Style cell = set.table();
   Style head = cell;
   head.ink = c.theme.soft;
-  const double time_width = c.order.clock_12 ? 11.4 : 9.2, name_width = 17.5, where_width = 12.0;
+  const bool wide = c.order.clock_12;
+  const double time_width = wide ? 10.9 : 9.2, name_width = wide ? 16.2 : 17.5, where_width = wide ? 10.8 : 12.0;
   const double where_x = area.x + name_width + where_width, highest_x = where_x + time_width, sets_x = highest_x + time_width;
-  const double months_x = sets_x + 1.6, month_cell = (area.right() - months_x) / 12;
+  const double months_x = sets_x + 1.3, month_cell = (area.right() - months_x) / 12;
 
   double y = area.y;
   set.left(area.x, y + 2.6, c.words(fmt::format("constellations.phase-{}", static_cast<int>(phase))),

@@ -44,7 +44,7 @@ double draw_moon_phases(const BlockContext& c, const BlockOptions&, const Box& a
   const double from = std::max(set.width(c.words("moon-phases.title"), title), 30.0) + 3;
   const auto& looks = c.year.month_moons[static_cast<std::size_t>(c.month_index)];
   const double cell = (area.width - from) / static_cast<double>(phases.size());
-  const double radius = 3.7, middle = area.y + 1.4 + radius;
+  const double radius = phases.size() > 4 ? 3.0 : 3.7, middle = area.y + 5.1;
   for (std::size_t i = 0; i < phases.size(); ++i) {
     const CivilMinute when = c.year.place.zone.civil(phases[i].event->at);
     const auto day = static_cast<std::size_t>(day_of(when.date())) - 1;
@@ -53,12 +53,11 @@ double draw_moon_phases(const BlockContext& c, const BlockOptions&, const Box& a
     draw_moon({x + radius + 0.3, middle}, radius, phases[i].lit, lean, c.theme, out);
     const double text_x = x + 2 * radius + 2.4;
     set.left(text_x, middle - 1.5, c.words(phases[i].key), set.strong(set.body()));
-    set.left(text_x, middle + 2.3, c.words("date.weekday-day", {{"weekday", c.words.weekday_short(weekday_of(when.date()))},
-                                                              {"day", std::to_string(day_of(when.date()))}}) +
-                                       "  " + c.words.time(when),
-             set.body());
+    const std::string day_name = c.words("date.weekday-day", {{"weekday", c.words.weekday_short(weekday_of(when.date()))},
+                                                             {"day", std::to_string(day_of(when.date()))}});
+    set.fitted(text_x, middle + 2.3, day_name + "  " + c.words.time(when), set.body(), x + cell - text_x);
   }
-  return 2 * radius + 1.8;
+  return 9.2;
 }
 
 }  // namespace duskleaf

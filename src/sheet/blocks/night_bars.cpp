@@ -12,8 +12,6 @@
 namespace duskleaf {
 namespace {
 
-using std::chrono::minutes;
-
 /// Hours of the clock since the midnight that begins the night's date: 12 to 36.
 double clock_hours(const Zone& zone, const Night& night, Ut t) {
   const double offset_hours = static_cast<double>(zone.offset_at(t).count()) / 3600.0;
@@ -156,6 +154,29 @@ void label_bars(const BlockContext& c, Setter& set, const Axis& axis, const std:
   }
 }
 
+/// What the bars' tones mean, right-aligned; returns the width used.
+double draw_key(const BlockContext& c, Setter& set, const Style& style, double right, double y, std::vector<Mark>& out) {
+  constexpr double swatch = 4, gap = 1, between = 2;  // mm
+  struct Entry {
+    Ink ink;
+    std::string label;
+  };
+  std::vector<Entry> entries;
+  for (SkyTone tone : {SkyTone::civil, SkyTone::nautical, SkyTone::astronomical, SkyTone::dark})
+    entries.push_back({tone_ink(c.theme, tone), c.words(fmt::format("night-bars.tone-{}", static_cast<int>(tone)))});
+  entries.push_back({c.theme.dark, c.words("night-bars.moon-up")});
+  double width = -between;
+  for (const Entry& entry : entries) width += swatch + gap + set.width(entry.label, style) + between;
+  double x = right - width;
+  for (std::size_t i = 0; i < entries.size(); ++i) {
+    out.push_back(Fill{Path::rectangle({x, y, swatch, 2.8}), entries[i].ink});
+    if (i + 1 == entries.size()) out.push_back(Fill{Path::rectangle({x, y + 0.8, swatch, 1.2}), c.theme.paper});
+    set.left(x + swatch + gap, y + 2.5, entries[i].label, style);
+    x += swatch + gap + set.width(entries[i].label, style) + between;
+  }
+  return width;
+}
+
 /// Under the times: what "dark" means this month, and the "up" of the Moon's columns.
 std::string foot_note(const BlockContext& c, const std::vector<const Night*>& nights) {
   const bool always_day =
@@ -210,15 +231,19 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   // Hour marks behind the bars.
   const double bars_top = top + head, bars_bottom = bars_top + pitch * rows;
   const int step = axis.to - axis.from > 16 ? 3 : axis.to - axis.from > 9 ? 2 : 1;
+  double label_end = 0;
   for (int hour = static_cast<int>(std::ceil(axis.from)); hour <= static_cast<int>(axis.to); ++hour) {
     const bool named = hour % step == 0;
     const double at = axis.at(hour);
     out.push_back(Stroke{Path::polyline({{at, bars_top - (named ? 1.2 : 0.4)}, {at, bars_bottom}}), c.theme.hairline_mm,
                          c.theme.faint, {}, false});
     if (!named) continue;
-    const std::string label = hour == 24 ? c.words("night-bars.midnight") : c.words.time_of_day(minutes(hour * 60));
+    const std::string label = hour == 24 ? c.words("night-bars.midnight") : c.words.whole_hour(hour);
     const double half = set.width(label, head_style) / 2;
-    set.left(std::clamp(at - half, axis.x - 1, area.right() - 2 * half), top + 5.2, label, head_style);
+    const double label_x = std::clamp(at - half, axis.x - 1, area.right() - 2 * half);
+    if (label_x < label_end + 1) continue;
+    set.left(label_x, top + 5.2, label, head_style);
+    label_end = label_x + 2 * half;
   }
 
   std::set<Date> session_nights;
@@ -262,18 +287,9 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   label_bars(c, set, axis, nights, bars_top, pitch, out);
 
   // The key under the bars, and what the dark hours count.
-  double key_x = axis.x;
   const double key_y = bars_bottom + 1.2, key_baseline = key_y + 2.5;
-  for (SkyTone tone : {SkyTone::civil, SkyTone::nautical, SkyTone::astronomical, SkyTone::dark}) {
-    out.push_back(Fill{Path::rectangle({key_x, key_y, 4, 2.8}), tone_ink(c.theme, tone)});
-    const std::string label = c.words(fmt::format("night-bars.tone-{}", static_cast<int>(tone)));
-    set.left(key_x + 5, key_baseline, label, head_style);
-    key_x += 7 + set.width(label, head_style);
-  }
-  out.push_back(Fill{Path::rectangle({key_x, key_y, 4, 2.8}), c.theme.dark});
-  out.push_back(Fill{Path::rectangle({key_x, key_y + 0.8, 4, 1.2}), c.theme.paper});
-  set.left(key_x + 5, key_baseline, c.words("night-bars.moon-up"), head_style);
-  set.fitted(area.x, key_baseline, foot_note(c, nights), head_style, axis.x - area.x - 2);
+  const double key_width = draw_key(c, set, head_style, area.right(), key_y, out);
+  set.fitted(area.x, key_baseline, foot_note(c, nights), head_style, area.width - key_width - 3);
   return bars_bottom + foot - area.y;
 }
 
