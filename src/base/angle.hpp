@@ -14,7 +14,9 @@ class Angle {
   static constexpr Angle from_degrees(double value) { return Angle(value * per_degree); }
   static constexpr Angle from_hours(double value) { return Angle(value * 15.0 * per_degree); }
   static constexpr Angle from_arcminutes(double value) { return Angle(value / 60.0 * per_degree); }
-  static constexpr Angle from_arcseconds(double value) { return Angle(value / 3600.0 * per_degree); }
+  static constexpr Angle from_arcseconds(double value) {
+    return Angle(value / 3600.0 * per_degree);
+  }
 
   constexpr double radians() const { return radians_; }
   constexpr double degrees() const { return radians_ / per_degree; }
@@ -50,8 +52,12 @@ class Angle {
 inline double sin(Angle a) { return std::sin(a.radians()); }
 inline double cos(Angle a) { return std::cos(a.radians()); }
 inline double tan(Angle a) { return std::tan(a.radians()); }
-inline Angle arcsin(double x) { return Angle::from_radians(std::asin(x > 1 ? 1 : x < -1 ? -1 : x)); }
-inline Angle arccos(double x) { return Angle::from_radians(std::acos(x > 1 ? 1 : x < -1 ? -1 : x)); }
+inline Angle arcsin(double x) {
+  return Angle::from_radians(std::asin(x > 1 ? 1 : x < -1 ? -1 : x));
+}
+inline Angle arccos(double x) {
+  return Angle::from_radians(std::acos(x > 1 ? 1 : x < -1 ? -1 : x));
+}
 inline Angle arctan2(double y, double x) { return Angle::from_radians(std::atan2(y, x)); }
 
 }  // namespace duskleaf

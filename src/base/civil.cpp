@@ -1,12 +1,12 @@
-// Civil time by the IANA time-zone data, read by Abseil (which follows a zone's last rule past 2037).
+// Civil time by the IANA time-zone data, read by Abseil (which follows a zone's last rule past
+// 2037).
 #include "base/civil.hpp"
 
 #include <absl/time/civil_time.h>
 #include <absl/time/time.h>
-#include <fmt/format.h>
-
 #include <cmath>
 #include <cstdlib>
+#include <fmt/format.h>
 #include <fstream>
 #include <sstream>
 
@@ -44,13 +44,19 @@ Date make_date(int year, int month, int day) {
   return chrono::local_days(chrono::year(year) / month / day);
 }
 int year_of(Date d) { return static_cast<int>(chrono::year_month_day(d).year()); }
-int month_of(Date d) { return static_cast<int>(static_cast<unsigned>(chrono::year_month_day(d).month())); }
-int day_of(Date d) { return static_cast<int>(static_cast<unsigned>(chrono::year_month_day(d).day())); }
+int month_of(Date d) {
+  return static_cast<int>(static_cast<unsigned>(chrono::year_month_day(d).month()));
+}
+int day_of(Date d) {
+  return static_cast<int>(static_cast<unsigned>(chrono::year_month_day(d).day()));
+}
 int days_in_month(int year, int month) {
   return day_of(chrono::local_days(chrono::year(year) / month / chrono::last));
 }
 chrono::weekday weekday_of(Date d) { return chrono::weekday(d); }
-std::string iso_date(Date d) { return fmt::format("{:04}-{:02}-{:02}", year_of(d), month_of(d), day_of(d)); }
+std::string iso_date(Date d) {
+  return fmt::format("{:04}-{:02}-{:02}", year_of(d), month_of(d), day_of(d));
+}
 Ut ut_midnight(Date d) {
   return Ut(Days(unix_epoch_from_j2000 + static_cast<double>(d.time_since_epoch().count())));
 }
@@ -94,7 +100,9 @@ Zone Zone::utc() {
 
 const std::string& Zone::name() const { return impl_->name; }
 
-chrono::seconds Zone::offset_at(Ut t) const { return chrono::seconds(impl_->zone.At(to_absl(t)).offset); }
+chrono::seconds Zone::offset_at(Ut t) const {
+  return chrono::seconds(impl_->zone.At(to_absl(t)).offset);
+}
 
 CivilMinute Zone::civil(Ut t) const {
   const double ut_seconds = (t.days() - unix_epoch_from_j2000) * 86400.0;
@@ -131,10 +139,11 @@ std::vector<ClockChange> Zone::changes(Ut from, Ut to) const {
   absl::Time at = to_absl(from);
   absl::TimeZone::CivilTransition transition;
   while (impl_->zone.NextTransition(at, &transition)) {
-    // Forward, the reading jumped from does not exist; backward, the reading jumped to stands twice.
+    // Forward, the reading jumped from does not exist; backward, the reading jumped to stands
+    // twice.
     const auto from_info = impl_->zone.At(transition.from);
     const auto to_info = impl_->zone.At(transition.to);
-    const absl::Time when = from_info.kind == absl::TimeZone::TimeInfo::SKIPPED   ? from_info.trans
+    const absl::Time when = from_info.kind == absl::TimeZone::TimeInfo::SKIPPED  ? from_info.trans
                             : to_info.kind == absl::TimeZone::TimeInfo::REPEATED ? to_info.trans
                                                                                  : to_info.pre;
     if (from_absl(when) > to || when <= at) break;

@@ -11,7 +11,8 @@
 
 namespace duskleaf {
 
-/// A date of the Gregorian civil calendar at some place. Arithmetic in days; year_month_day for its parts.
+/// A date of the Gregorian civil calendar at some place. Arithmetic in days; year_month_day for its
+/// parts.
 using Date = std::chrono::local_days;
 Date make_date(int year, int month, int day);
 int year_of(Date);
@@ -52,12 +53,15 @@ class Zone {
 
   const std::string& name() const;
   std::chrono::seconds offset_at(Ut t) const;
-  /// The clock's reading, to the nearest minute, half up. Near a clock change the offset is that of the rounded instant.
+  /// The clock's reading, to the nearest minute, half up. Near a clock change the offset is that of
+  /// the rounded instant.
   CivilMinute civil(Ut t) const;
-  /// The instant of a civil clock reading: the first of the two where it repeats; where clocks skip it, the instant of the jump.
+  /// The instant of a civil clock reading: the first of the two where it repeats; where clocks skip
+  /// it, the instant of the jump.
   Ut instant(std::chrono::local_seconds) const;
   Ut instant(Date date, std::chrono::minutes after_midnight) const;
-  /// First instant of the civil date, and of the following one. Equal when the zone skips the date (line changes).
+  /// First instant of the civil date, and of the following one. Equal when the zone skips the date
+  /// (line changes).
   Ut start_of(Date) const;
   /// Changes of offset in (from, to], in order. Changes of name alone are left out.
   std::vector<ClockChange> changes(Ut from, Ut to) const;

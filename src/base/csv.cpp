@@ -29,7 +29,8 @@ CsvTable::CsvTable(std::string_view text) {
       std::size_t end;
       if (at < line.size() && line[at] == '"') {
         const std::size_t close = line.find('"', at + 1);
-        if (close == std::string_view::npos) throw std::runtime_error("unclosed quote: " + std::string(line));
+        if (close == std::string_view::npos)
+          throw std::runtime_error("unclosed quote: " + std::string(line));
         target.push_back(line.substr(at + 1, close - at - 1));
         end = close + 1;
       } else {
@@ -51,7 +52,9 @@ std::size_t CsvTable::column(std::string_view name) const {
   return static_cast<std::size_t>(found - header_.begin());
 }
 
-double CsvTable::number(std::size_t row, std::size_t column) const { return parse_number(cell(row, column)); }
+double CsvTable::number(std::size_t row, std::size_t column) const {
+  return parse_number(cell(row, column));
+}
 
 int CsvTable::integer(std::size_t row, std::size_t column) const {
   return static_cast<int>(number(row, column));

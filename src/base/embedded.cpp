@@ -17,7 +17,8 @@ extern const EmbeddedEntry duskleaf_embedded_table[];
 
 std::optional<std::string_view> find_embedded_file(std::string_view name) {
   for (const EmbeddedEntry* e = duskleaf_embedded_table; e->name != nullptr; ++e)
-    if (name == e->name) return std::string_view(e->begin, static_cast<std::size_t>(e->end - e->begin));
+    if (name == e->name)
+      return std::string_view(e->begin, static_cast<std::size_t>(e->end - e->begin));
   return std::nullopt;
 }
 

@@ -1,11 +1,11 @@
 // TT - UTC: IERS leap seconds as ERFA's eraDat holds them (TAI - UTC), plus 32.184 s.
-// TT - UT1 before 1972: L. V. Morrison, F. R. Stephenson, C. Y. Hohenkerk & M. Zawilski, "Addendum 2020 to 'Measurement of
-// the Earth's rotation'", Proc. R. Soc. A 477 (2021) 20200776, cubic spline; data/delta_t_spline.csv.
+// TT - UT1 before 1972: L. V. Morrison, F. R. Stephenson, C. Y. Hohenkerk & M. Zawilski, "Addendum
+// 2020 to 'Measurement of the Earth's rotation'", Proc. R. Soc. A 477 (2021) 20200776, cubic
+// spline; data/delta_t_spline.csv.
 #include "base/time.hpp"
 
-#include <erfa.h>
-
 #include <algorithm>
+#include <erfa.h>
 #include <vector>
 
 #include "base/csv.hpp"
@@ -25,7 +25,8 @@ struct LeapStep {
 const std::vector<LeapStep>& leap_steps() {
   static const std::vector<LeapStep> steps = [] {
     std::vector<LeapStep> list;
-    // Leap seconds come at the ends of June and December alone so far; status 1 ("dubious year") past the table is expected.
+    // Leap seconds come at the ends of June and December alone so far; status 1 ("dubious year")
+    // past the table is expected.
     for (int year = 1972; year <= 2100; ++year)
       for (int month : {1, 7}) {
         double tai_minus_utc = 0, mjd0 = 0, mjd = 0;
@@ -48,9 +49,10 @@ double spline_delta_t(double year) {
     const CsvTable table(embedded_file("data/delta_t_spline.csv"));
     std::vector<SplinePiece> list;
     for (std::size_t r = 0; r < table.rows(); ++r)
-      list.push_back({table.number(r, table.column("from_year")), table.number(r, table.column("to_year")),
-                      table.number(r, table.column("a0")), table.number(r, table.column("a1")),
-                      table.number(r, table.column("a2")), table.number(r, table.column("a3"))});
+      list.push_back({table.number(r, table.column("from_year")),
+                      table.number(r, table.column("to_year")), table.number(r, table.column("a0")),
+                      table.number(r, table.column("a1")), table.number(r, table.column("a2")),
+                      table.number(r, table.column("a3"))});
     return list;
   }();
   const SplinePiece* piece = &pieces.front();
@@ -65,9 +67,11 @@ double spline_delta_t(double year) {
 Seconds tt_minus_ut(Ut t) {
   if (t.days() < utc_begins) return Seconds(spline_delta_t(2000.0 + (t.days() - 0.5) / 365.2425));
   const auto& steps = leap_steps();
-  const auto after = std::upper_bound(steps.begin(), steps.end(), t.days(),
-                                      [](double day, const LeapStep& s) { return day < s.from_day; });
-  return Seconds((after == steps.begin() ? steps.front() : *(after - 1)).tai_minus_utc + tt_minus_tai);
+  const auto after =
+      std::upper_bound(steps.begin(), steps.end(), t.days(),
+                       [](double day, const LeapStep& s) { return day < s.from_day; });
+  return Seconds((after == steps.begin() ? steps.front() : *(after - 1)).tai_minus_utc +
+                 tt_minus_tai);
 }
 
 Tt to_tt(Ut t) { return Tt(t.since_j2000() + Days(tt_minus_ut(t))); }

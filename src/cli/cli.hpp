@@ -12,7 +12,8 @@ enum class ExitCode {
   internal_error = 5,
 };
 
-/// Reads the command line, runs one command, and maps every failure to a message on standard error and an exit code.
+/// Reads the command line, runs one command, and maps every failure to a message on standard error
+/// and an exit code.
 ExitCode run_command_line(int argc, char** argv);
 
 }  // namespace duskleaf

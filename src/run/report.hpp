@@ -9,15 +9,16 @@ namespace duskleaf {
 struct ReportRow {
   enum class Status { pressed, skipped, failed };
   std::string order, site, publication;
-  std::string file;        // path below the output folder
+  std::string file;  // path below the output folder
   Status status = Status::skipped;
-  std::string reason;      // why it was skipped or failed
+  std::string reason;  // why it was skipped or failed
   int labels_left_out = 0;
   std::vector<std::string> notes;
 };
 
 struct PressReport {
-  std::vector<ReportRow> rows;  // by order, site, publication, file, however the work was shared out
+  std::vector<ReportRow>
+      rows;  // by order, site, publication, file, however the work was shared out
   int count(ReportRow::Status) const;
 };
 

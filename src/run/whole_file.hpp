@@ -6,8 +6,8 @@
 
 namespace duskleaf {
 
-/// A file that appears whole or not at all: written beside its place, then renamed over it. What was begun and not
-/// finished is removed.
+/// A file that appears whole or not at all: written beside its place, then renamed over it. What
+/// was begun and not finished is removed.
 class WholeFile {
  public:
   /// Folders on the way are made. Throws FileError.
@@ -28,7 +28,8 @@ class WholeFile {
 /// All at once. Throws FileError.
 void write_whole(const std::filesystem::path&, std::string_view bytes);
 
-/// Makes the folder where it is missing and tries whether a file can be made in it. Throws FileError.
+/// Makes the folder where it is missing and tries whether a file can be made in it. Throws
+/// FileError.
 void check_writable_folder(const std::filesystem::path&);
 
 }  // namespace duskleaf

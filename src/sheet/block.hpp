@@ -26,7 +26,7 @@ struct BlockContext {
   const Site& site;
   const Publication& publication;
   const SiteYear& year;
-  int month_index;                 // 0..11 of the span
+  int month_index;  // 0..11 of the span
   const YearEphemeris& ephemeris;
   const TypeSet& type;
   const Words& words;
@@ -42,15 +42,18 @@ struct BlockOptions {
   const std::string& get(std::string_view name) const { return values.find(name)->second; }
 };
 
-/// Draws into `area` and returns the height used in mm (at most area.height unless the block cannot shrink so far).
-/// A block with nothing to say returns 0 and draws nothing.
-using DrawBlock = double (*)(const BlockContext&, const BlockOptions&, const Box& area, std::vector<Mark>& out);
+/// Draws into `area` and returns the height used in mm (at most area.height unless the block cannot
+/// shrink so far). A block with nothing to say returns 0 and draws nothing.
+using DrawBlock = double (*)(const BlockContext&, const BlockOptions&, const Box& area,
+                             std::vector<Mark>& out);
 
-/// One option: its name, default, what it may be ("one of a|b", "number", "text"), and a line of help.
+/// One option: its name, default, what it may be ("one of a|b", "number", "text"), and a line of
+/// help.
 struct OptionSpec {
   std::string_view name, fallback, allowed, help;
 };
-/// One block that templates can name. The table of all of them parses templates and documents itself.
+/// One block that templates can name. The table of all of them parses templates and documents
+/// itself.
 struct BlockSpec {
   std::string_view name, help;
   std::vector<OptionSpec> options;

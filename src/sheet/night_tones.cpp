@@ -10,15 +10,24 @@ namespace {
 std::optional<std::pair<SkyTone, SkyTone>> step_of(EventKind kind) {
   using enum SkyTone;
   switch (kind) {
-    case EventKind::sunset: return std::pair(day, civil);
-    case EventKind::civil_dusk: return std::pair(civil, nautical);
-    case EventKind::nautical_dusk: return std::pair(nautical, astronomical);
-    case EventKind::astronomical_dusk: return std::pair(astronomical, dark);
-    case EventKind::astronomical_dawn: return std::pair(dark, astronomical);
-    case EventKind::nautical_dawn: return std::pair(astronomical, nautical);
-    case EventKind::civil_dawn: return std::pair(nautical, civil);
-    case EventKind::sunrise: return std::pair(civil, day);
-    default: return std::nullopt;
+    case EventKind::sunset:
+      return std::pair(day, civil);
+    case EventKind::civil_dusk:
+      return std::pair(civil, nautical);
+    case EventKind::nautical_dusk:
+      return std::pair(nautical, astronomical);
+    case EventKind::astronomical_dusk:
+      return std::pair(astronomical, dark);
+    case EventKind::astronomical_dawn:
+      return std::pair(dark, astronomical);
+    case EventKind::nautical_dawn:
+      return std::pair(astronomical, nautical);
+    case EventKind::civil_dawn:
+      return std::pair(nautical, civil);
+    case EventKind::sunrise:
+      return std::pair(civil, day);
+    default:
+      return std::nullopt;
   }
 }
 
@@ -35,7 +44,8 @@ SkyTone tone_at(Angle sun_altitude) {
 std::vector<ToneSpan> tone_spans(const Night& night) {
   std::vector<ToneSpan> spans;
   Ut from = night.from;
-  SkyTone tone = tone_at(night.darkest_sun_altitude);  // holds all through where the Sun crosses no limit
+  SkyTone tone =
+      tone_at(night.darkest_sun_altitude);  // holds all through where the Sun crosses no limit
   for (const Event& event : night.events) {
     const auto step = step_of(event.kind);
     if (!step) continue;
@@ -66,11 +76,16 @@ std::vector<TimeSpan> moon_spans(const Night& night) {
 
 const Ink& tone_ink(const Theme& theme, SkyTone tone) {
   switch (tone) {
-    case SkyTone::civil: return theme.civil;
-    case SkyTone::nautical: return theme.nautical;
-    case SkyTone::astronomical: return theme.astronomical;
-    case SkyTone::dark: return theme.dark;
-    case SkyTone::day: break;
+    case SkyTone::civil:
+      return theme.civil;
+    case SkyTone::nautical:
+      return theme.nautical;
+    case SkyTone::astronomical:
+      return theme.astronomical;
+    case SkyTone::dark:
+      return theme.dark;
+    case SkyTone::day:
+      break;
   }
   return theme.day;
 }

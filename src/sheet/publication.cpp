@@ -12,7 +12,9 @@ namespace {
 struct Mover {
   double scale, dx, dy;
   void point(Point& p) const { p = {p.x * scale + dx, p.y * scale + dy}; }
-  void box(Box& b) const { b = {b.x * scale + dx, b.y * scale + dy, b.width * scale, b.height * scale}; }
+  void box(Box& b) const {
+    b = {b.x * scale + dx, b.y * scale + dy, b.width * scale, b.height * scale};
+  }
   void path(Path& p) const {
     for (Point& q : p.points) point(q);
   }
@@ -40,7 +42,8 @@ struct Mover {
   }
 };
 
-/// The layout of one page: bands of known height first, then shares of what remains; every block is drawn once.
+/// The layout of one page: bands of known height first, then shares of what remains; every block is
+/// drawn once.
 class PageLayout {
  public:
   /// The room between the margins, mm.
@@ -66,7 +69,9 @@ class PageLayout {
     if (!page.bands.empty()) taken -= page.bands.back().gap_mm;
     for (std::size_t i = 0; i < page.bands.size(); ++i)
       if (page.bands[i].share > 0)
-        heights[i] = draw_band(page.bands[i], std::max(0.0, (height_ - taken) * page.bands[i].share / shares), marks[i]);
+        heights[i] =
+            draw_band(page.bands[i],
+                      std::max(0.0, (height_ - taken) * page.bands[i].share / shares), marks[i]);
 
     std::vector<Mark> whole;
     double y = 0;
@@ -89,7 +94,8 @@ class PageLayout {
     const double cell = (width_ + grid_gutter_mm) / grid_columns;
     double tallest = 0;
     for (const PageTemplate::Column& column : band.columns) {
-      const double x = cell * (column.first - 1), width = cell * (column.last - column.first + 1) - grid_gutter_mm;
+      const double x = cell * (column.first - 1),
+                   width = cell * (column.last - column.first + 1) - grid_gutter_mm;
       double y = 0;
       Box last{x, 0, width, room};
       for (const PageTemplate::Block& block : column.blocks) {
@@ -114,9 +120,10 @@ class PageLayout {
   double overfull_ = 0;
 };
 
-/// A page whose own words make it too long is laid out on a larger sheet and reduced, in steps, down to seven eighths.
-std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& page_template, const PageTemplate::Page& page,
-                            double width, double height) {
+/// A page whose own words make it too long is laid out on a larger sheet and reduced, in steps,
+/// down to seven eighths.
+std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& page_template,
+                            const PageTemplate::Page& page, double width, double height) {
   const double margin = page_template.margin_mm;
   const int labels_before = context.tally.labels_left_out;
   const std::size_t notes_before = context.tally.notes.size();
@@ -132,17 +139,20 @@ std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& pag
     if (overfull < 0.05) break;
   }
   if (overfull >= 0.05)
-    context.tally.notes.push_back("a page is too full by " + context.words.number(overfull, 1) + " mm");
+    context.tally.notes.push_back("a page is too full by " + context.words.number(overfull, 1) +
+                                  " mm");
   else if (scale < 1)
-    context.tally.notes.push_back("a page is reduced to " + context.words.number(100 * scale, 1) + " % to hold all its words");
+    context.tally.notes.push_back("a page is reduced to " + context.words.number(100 * scale, 1) +
+                                  " % to hold all its words");
   for (Mark& mark : marks) std::visit(Mover{scale, margin, margin}, mark);
   return marks;
 }
 
 }  // namespace
 
-SheetDocument make_handout(const Order& order, const Site& site, const Publication& publication, const SiteYear& year,
-                           const YearEphemeris& ephemeris, const std::vector<int>& month_indices, const TypeSet& type,
+SheetDocument make_handout(const Order& order, const Site& site, const Publication& publication,
+                           const SiteYear& year, const YearEphemeris& ephemeris,
+                           const std::vector<int>& month_indices, const TypeSet& type,
                            Tally& tally) {
   const PageTemplate page_template = load_template(order, publication);
   const Words words(order.language, order.clock_12);
@@ -162,12 +172,14 @@ SheetDocument make_handout(const Order& order, const Site& site, const Publicati
   document.author = group;
   document.language = order.language;
   for (int index : month_indices) {
-    const BlockContext context{order, site, publication, year, index, ephemeris, type, words, theme, tally};
+    const BlockContext context{order,     site, publication, year,  index,
+                               ephemeris, type, words,       theme, tally};
     for (const PageTemplate::Page& page : page_template.pages) {
       Sheet sheet{width, height, {}, draw_page(context, page_template, page, width, height)};
       if (!page.bookmark.empty()) {
         const auto [y, m] = year.span.month(index);
-        sheet.bookmark = words(page.bookmark, {{"month", words.month_name(m)}, {"year", std::to_string(y)}});
+        sheet.bookmark =
+            words(page.bookmark, {{"month", words.month_name(m)}, {"year", std::to_string(y)}});
       }
       document.sheets.push_back(std::move(sheet));
     }
@@ -175,7 +187,9 @@ SheetDocument make_handout(const Order& order, const Site& site, const Publicati
   return document;
 }
 
-void check_template(const Order& order, const Publication& publication) { load_template(order, publication); }
+void check_template(const Order& order, const Publication& publication) {
+  load_template(order, publication);
+}
 
 bool is_printable_template(std::string_view name) {
   return find_embedded_file("templates/" + std::string(name) + ".yaml").has_value();

@@ -28,8 +28,8 @@ Theme Theme::grey() {
     const double y = 0.2126 * ink.r + 0.7152 * ink.g + 0.0722 * ink.b;
     ink = {y, y, y};
   };
-  for (Ink* ink : {&t.black, &t.soft, &t.faint, &t.blue, &t.blue_soft, &t.sky, &t.lap, &t.civil, &t.nautical,
-                   &t.astronomical, &t.dark, &t.figure})
+  for (Ink* ink : {&t.black, &t.soft, &t.faint, &t.blue, &t.blue_soft, &t.sky, &t.lap, &t.civil,
+                   &t.nautical, &t.astronomical, &t.dark, &t.figure})
     drain(*ink);
   return t;
 }

@@ -1,11 +1,11 @@
-// The words of a language are one flat YAML map, so that a translator sees every sentence whole and may order its parts freely.
+// The words of a language are one flat YAML map, so that a translator sees every sentence whole and
+// may order its parts freely.
 #include "sheet/words.hpp"
 
-#include <fmt/format.h>
-#include <yaml-cpp/yaml.h>
-
 #include <cmath>
+#include <fmt/format.h>
 #include <stdexcept>
+#include <yaml-cpp/yaml.h>
 
 #include "base/embedded.hpp"
 
@@ -24,12 +24,14 @@ bool Words::has(std::string_view key) const { return text_.find(key) != text_.en
 const std::string& Words::operator()(std::string_view key) const {
   const auto found = text_.find(key);
   if (found == text_.end())
-    throw std::out_of_range("language " + language_ + " lacks the words '" + std::string(key) + "'");
+    throw std::out_of_range("language " + language_ + " lacks the words '" + std::string(key) +
+                            "'");
   return found->second;
 }
 
 std::string Words::operator()(
-    std::string_view key, std::initializer_list<std::pair<std::string_view, std::string>> values) const {
+    std::string_view key,
+    std::initializer_list<std::pair<std::string_view, std::string>> values) const {
   const std::string& pattern = (*this)(key);
   std::string text;
   for (std::size_t at = 0; at < pattern.size();) {
@@ -37,13 +39,15 @@ std::string Words::operator()(
     text.append(pattern, at, open == std::string::npos ? open : open - at);
     if (open == std::string::npos) break;
     const std::size_t close = pattern.find('}', open);
-    if (close == std::string::npos) throw std::out_of_range("open brace in the words '" + std::string(key) + "'");
+    if (close == std::string::npos)
+      throw std::out_of_range("open brace in the words '" + std::string(key) + "'");
     const std::string_view name = std::string_view(pattern).substr(open + 1, close - open - 1);
     const std::string* value = nullptr;
     for (const auto& [known, replacement] : values)
       if (known == name) value = &replacement;
     if (value == nullptr)
-      throw std::out_of_range("the words '" + std::string(key) + "' ask for {" + std::string(name) + "}");
+      throw std::out_of_range("the words '" + std::string(key) + "' ask for {" + std::string(name) +
+                              "}");
     text += *value;
     at = close + 1;
   }
@@ -65,11 +69,14 @@ std::string Words::time(const CivilMinute& t) const {
 std::string Words::whole_hour(int hour) const {
   const int of_day = ((hour % 24) + 24) % 24;
   if (!clock_12_) return fmt::format("{:02}:00", of_day);
-  return (*this)(of_day < 12 ? "time.am" : "time.pm", {{"time", std::to_string(of_day % 12 == 0 ? 12 : of_day % 12)}});
+  return (*this)(of_day < 12 ? "time.am" : "time.pm",
+                 {{"time", std::to_string(of_day % 12 == 0 ? 12 : of_day % 12)}});
 }
 
 std::string Words::month_name(int month) const { return (*this)(fmt::format("month.{}", month)); }
-std::string Words::month_short(int month) const { return (*this)(fmt::format("month-short.{}", month)); }
+std::string Words::month_short(int month) const {
+  return (*this)(fmt::format("month-short.{}", month));
+}
 std::string Words::weekday_name(std::chrono::weekday day) const {
   return (*this)(fmt::format("weekday.{}", day.iso_encoding()));
 }
@@ -78,14 +85,16 @@ std::string Words::weekday_short(std::chrono::weekday day) const {
 }
 
 std::string Words::day_month(Date d) const {
-  return (*this)("date.day-month", {{"day", std::to_string(day_of(d))}, {"month", month_name(month_of(d))}});
+  return (*this)("date.day-month",
+                 {{"day", std::to_string(day_of(d))}, {"month", month_name(month_of(d))}});
 }
 
 std::string Words::night_of(Date evening) const {
   const Date morning = evening + std::chrono::days(1);
   const auto day = [](Date d) { return std::to_string(day_of(d)); };
   if (month_of(evening) == month_of(morning))
-    return (*this)("date.night-of", {{"evening", day(evening)}, {"morning", day(morning)},
+    return (*this)("date.night-of", {{"evening", day(evening)},
+                                     {"morning", day(morning)},
                                      {"month", month_name(month_of(evening))}});
   return (*this)("date.night-across",
                  {{"evening", day_month(evening)}, {"morning", day_month(morning)}});

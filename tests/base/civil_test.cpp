@@ -18,13 +18,18 @@ TEST(Zone, RoundingNearAClockChangeTakesTheOffsetOfTheRoundedMinute) {
 
 TEST(Zone, SkippedReadingIsTheJumpAndARepeatedOneItsFirst) {
   const Zone london = *Zone::load("Europe/London");
-  EXPECT_NEAR((london.instant(make_date(2027, 3, 28), 90min) - (ut_midnight(make_date(2027, 3, 28)) + Days(1h))).count(), 0, 1e-9);
-  EXPECT_EQ(london.civil(london.instant(make_date(2027, 10, 31), 90min)).iso(), "2027-10-31T01:30+01:00");
+  EXPECT_NEAR((london.instant(make_date(2027, 3, 28), 90min) -
+               (ut_midnight(make_date(2027, 3, 28)) + Days(1h)))
+                  .count(),
+              0, 1e-9);
+  EXPECT_EQ(london.civil(london.instant(make_date(2027, 10, 31), 90min)).iso(),
+            "2027-10-31T01:30+01:00");
 }
 
 TEST(Zone, ChangesOfOffsetInBothDirections) {
   const Zone london = *Zone::load("Europe/London");
-  const auto changes = london.changes(ut_midnight(make_date(2027, 1, 1)), ut_midnight(make_date(2028, 1, 1)));
+  const auto changes =
+      london.changes(ut_midnight(make_date(2027, 1, 1)), ut_midnight(make_date(2028, 1, 1)));
   ASSERT_EQ(changes.size(), 2u);
   EXPECT_EQ(london.civil(changes[0].at).iso(), "2027-03-28T02:00+01:00");
   EXPECT_EQ(london.civil(changes[1].at).iso(), "2027-10-31T01:00+00:00");
@@ -34,7 +39,8 @@ TEST(Zone, ChangesOfOffsetInBothDirections) {
 
 TEST(Zone, HalfHourSummerTimeOfLordHowe) {
   const Zone zone = *Zone::load("Australia/Lord_Howe");
-  const auto changes = zone.changes(ut_midnight(make_date(2027, 1, 1)), ut_midnight(make_date(2028, 1, 1)));
+  const auto changes =
+      zone.changes(ut_midnight(make_date(2027, 1, 1)), ut_midnight(make_date(2028, 1, 1)));
   ASSERT_EQ(changes.size(), 2u);
   EXPECT_EQ(changes[0].after - changes[0].before, -30min);
 }
@@ -60,7 +66,8 @@ TEST(Zone, NamesThatAreNoZones) {
 
 TEST(Zone, LocalMeanTimeOfOldKeepsItsSeconds) {
   const Zone amsterdam = *Zone::load("Africa/Monrovia");  // -0:43:08 until 1919 in the data
-  EXPECT_EQ(amsterdam.civil(ut_midnight(make_date(1910, 1, 1)) + Days(12h)).iso().substr(16), "-00:43:08");
+  EXPECT_EQ(amsterdam.civil(ut_midnight(make_date(1910, 1, 1)) + Days(12h)).iso().substr(16),
+            "-00:43:08");
 }
 
 // Seen in the tz database: its version line begins "# version 20".

@@ -1,9 +1,8 @@
 #include "sheet/words.hpp"
 
-#include <gtest/gtest.h>
-
 #include <filesystem>
 #include <fstream>
+#include <gtest/gtest.h>
 #include <regex>
 #include <sstream>
 
@@ -24,7 +23,8 @@ TEST(Words, EveryKeyNamedInTheSourcesExists) {
   const Words words("en");
   const std::regex call(R"re(words\(\s*"([a-z0-9.-]+[a-z0-9])")re");
   int found = 0;
-  for (const auto& entry : std::filesystem::recursive_directory_iterator(DUSKLEAF_SOURCE "/src/sheet")) {
+  for (const auto& entry :
+       std::filesystem::recursive_directory_iterator(DUSKLEAF_SOURCE "/src/sheet")) {
     if (entry.path().extension() != ".cpp") continue;
     const std::string text = contents(entry.path());
     for (std::sregex_iterator at(text.begin(), text.end(), call), end; at != end; ++at, ++found)

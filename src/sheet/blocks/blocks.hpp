@@ -14,7 +14,8 @@ double draw_ribbon(const BlockContext&, const BlockOptions&, const Box&, std::ve
 double draw_night_bars(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_moon_phases(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_planets(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
-double draw_constellations(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
+double draw_constellations(const BlockContext&, const BlockOptions&, const Box&,
+                           std::vector<Mark>&);
 double draw_happenings(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_best_nights(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_sessions(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);

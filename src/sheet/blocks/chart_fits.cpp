@@ -6,11 +6,13 @@
 namespace duskleaf {
 
 // A strip of dates with the clock time at which the charts' sky stands then.
-double draw_chart_fits(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
+double draw_chart_fits(const BlockContext& c, const BlockOptions&, const Box& area,
+                       std::vector<Mark>& out) {
   const EveningSky& evening = c.evening();
   if (evening.fits.empty() || evening.shift == EveningShift::no_stars) return 0;
   Setter set(c, out);
-  const Style time_style{Face::bold, 9, c.theme.blue}, date_style{Face::regular, c.theme.table_pt, c.theme.soft};
+  const Style time_style{Face::bold, 9, c.theme.blue},
+      date_style{Face::regular, c.theme.table_pt, c.theme.soft};
   const Style label{Face::italic, c.theme.body_pt, c.theme.black};
   const double height = 8.2;
   set.rule(area.x, area.right(), area.y, c.theme.blue_soft, c.theme.hairline_mm);
@@ -28,7 +30,11 @@ double draw_chart_fits(const BlockContext& c, const BlockOptions&, const Box& ar
     set.centre(x, area.y + 7.0, c.words.time(fit.clock), time_style);
     if (changed) {
       const double at = x - cell / 2;
-      out.push_back(Stroke{Path::polyline({{at, area.y + 1}, {at, area.y + height - 1}}), 0.25, c.theme.blue, {0.6, 0.6}, false});
+      out.push_back(Stroke{Path::polyline({{at, area.y + 1}, {at, area.y + height - 1}}),
+                           0.25,
+                           c.theme.blue,
+                           {0.6, 0.6},
+                           false});
     }
   }
   return height + 0.5;

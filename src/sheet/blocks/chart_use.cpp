@@ -3,9 +3,10 @@
 
 namespace duskleaf {
 
-// How to hold the charts, for someone who has never looked up: set in the corner that a dome leaves free, so that its lines grow
-// shorter downward.
-double draw_chart_use(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
+// How to hold the charts, for someone who has never looked up: set in the corner that a dome leaves
+// free, so that its lines grow shorter downward.
+double draw_chart_use(const BlockContext& c, const BlockOptions&, const Box& area,
+                      std::vector<Mark>& out) {
   Setter set(c, out);
   const Style style{Face::regular, c.theme.label_pt, c.theme.soft};
   const double pitch = 3.5;

@@ -1,8 +1,7 @@
 #include "catalogue/constellations.hpp"
 
-#include <fmt/format.h>
-
 #include <algorithm>
+#include <fmt/format.h>
 
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/setting.hpp"
@@ -15,33 +14,41 @@ constexpr double row_pitch = 3.15, column_gap = 4.5;  // mm
 std::string name_of(const BlockContext& c, const ConstellationEvening& row) {
   const Figure& figure = figures()[static_cast<std::size_t>(row.figure)];
   const std::string name(constellations()[static_cast<std::size_t>(figure.constellation)].name);
-  return figure.part.empty() ? name : name + " " + c.words("constellations.part-" + std::string(figure.part));
+  return figure.part.empty()
+             ? name
+             : name + " " + c.words("constellations.part-" + std::string(figure.part));
 }
 
 std::string list_of(const BlockContext& c, const std::vector<const ConstellationEvening*>& rows) {
   std::string text;
-  for (const ConstellationEvening* row : rows) text += (text.empty() ? "" : ", ") + name_of(c, *row);
+  for (const ConstellationEvening* row : rows)
+    text += (text.empty() ? "" : ", ") + name_of(c, *row);
   return text;
 }
 
 /// One of the three columns: a phase's constellations, highest first. Returns the height used.
-double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const Box& area, std::vector<Mark>& out) {
+double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const Box& area,
+                  std::vector<Mark>& out) {
   std::vector<const ConstellationEvening*> rows;
   for (const ConstellationEvening& row : c.evening().constellations)
     if (row.phase == phase && row.state != FigureState::below) rows.push_back(&row);
-  std::stable_sort(rows.begin(), rows.end(),
-                   [](const auto* a, const auto* b) { return a->mean_place.altitude > b->mean_place.altitude; });
+  std::stable_sort(rows.begin(), rows.end(), [](const auto* a, const auto* b) {
+    return a->mean_place.altitude > b->mean_place.altitude;
+  });
   const Zone& zone = c.year.place.zone;
   const Style cell = set.table();
   Style head = cell;
   head.ink = c.theme.soft;
   const bool wide = c.order.clock_12;
-  const double time_width = wide ? 10.9 : 9.2, name_width = wide ? 16.2 : 17.5, where_width = wide ? 10.8 : 12.0;
-  const double where_x = area.x + name_width + where_width, highest_x = where_x + time_width, sets_x = highest_x + time_width;
+  const double time_width = wide ? 10.9 : 9.2, name_width = wide ? 16.2 : 17.5,
+               where_width = wide ? 10.8 : 12.0;
+  const double where_x = area.x + name_width + where_width, highest_x = where_x + time_width,
+               sets_x = highest_x + time_width;
   const double months_x = sets_x + 1.3, month_cell = (area.right() - months_x) / 12;
 
   double y = area.y;
-  set.left(area.x, y + 2.6, c.words(fmt::format("constellations.phase-{}", static_cast<int>(phase))),
+  set.left(area.x, y + 2.6,
+           c.words(fmt::format("constellations.phase-{}", static_cast<int>(phase))),
            {Face::bold, 8, c.theme.blue});
   set.right(where_x, y + 2.6, c.words("constellations.where"), head);
   set.right(highest_x, y + 2.6, c.words("constellations.highest"), head);
@@ -58,18 +65,25 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
     const double altitude = row->mean_place.altitude.degrees();
     const std::string direction = c.words.direction_short(row->mean_place.azimuth);
     set.right(where_x, baseline,
-              altitude < 5 ? c.words("constellations.low", {{"direction", direction}})
-                           : c.words("constellations.at", {{"direction", direction}, {"altitude", c.words.number(altitude, 0)}}),
+              altitude < 5
+                  ? c.words("constellations.low", {{"direction", direction}})
+                  : c.words("constellations.at",
+                            {{"direction", direction}, {"altitude", c.words.number(altitude, 0)}}),
               cell);
-    set.right(highest_x, baseline, row->highest ? c.words.time(zone.civil(*row->highest)) : "–", cell);
-    set.right(sets_x, baseline, row->sets ? c.words.time(zone.civil(*row->sets)) : c.words("constellations.never-sets"), cell);
+    set.right(highest_x, baseline, row->highest ? c.words.time(zone.civil(*row->highest)) : "–",
+              cell);
+    set.right(
+        sets_x, baseline,
+        row->sets ? c.words.time(zone.civil(*row->sets)) : c.words("constellations.never-sets"),
+        cell);
     for (std::size_t m = 0; m < 12; ++m) {
       const double x = months_x + month_cell * static_cast<double>(m);
       if (row->evening_sight[m])
         out.push_back(Fill{Path::rectangle({x, baseline - 1.8, month_cell - 0.12, 1.8}),
                            static_cast<int>(m) + 1 == month ? c.theme.blue : c.theme.nautical});
       else
-        out.push_back(Fill{Path::rectangle({x, baseline - 0.2, month_cell - 0.12, 0.2}), c.theme.faint});
+        out.push_back(
+            Fill{Path::rectangle({x, baseline - 0.2, month_cell - 0.12, 0.2}), c.theme.faint});
     }
     y += row_pitch;
   }
@@ -78,16 +92,19 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
 
 }  // namespace
 
-double draw_constellations(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
+double draw_constellations(const BlockContext& c, const BlockOptions&, const Box& area,
+                           std::vector<Mark>& out) {
   Setter set(c, out);
   const EveningSky& evening = c.evening();
-  const std::string when =
-      c.words("constellations.aside", {{"date", c.words.day_month(evening.date)},
-                                       {"time", c.words.time(c.year.place.zone.civil(evening.moment))}});
-  double y = area.y + set.heading(area.x, area.y, area.width, c.words("constellations.title"), when);
+  const std::string when = c.words(
+      "constellations.aside", {{"date", c.words.day_month(evening.date)},
+                               {"time", c.words.time(c.year.place.zone.civil(evening.moment))}});
+  double y =
+      area.y + set.heading(area.x, area.y, area.width, c.words("constellations.title"), when);
   if (evening.shift == EveningShift::no_stars) {
     const std::string text = evening.stars_return
-                                 ? c.words("constellations.too-bright-until", {{"date", c.words.day_month(*evening.stars_return)}})
+                                 ? c.words("constellations.too-bright-until",
+                                           {{"date", c.words.day_month(*evening.stars_return)}})
                                  : c.words("constellations.too-bright");
     return y + set.paragraph(area.x, y, area.width, text, set.body()) - area.y;
   }
@@ -104,8 +121,10 @@ double draw_constellations(const BlockContext& c, const BlockOptions&, const Box
     if (row.circumpolar) circumpolar.push_back(&row);
     if (row.state == FigureState::below) (row.never_rises ? never : below).push_back(&row);
   }
-  const auto list = [&](std::string_view key, const std::vector<const ConstellationEvening*>& rows) {
-    if (!rows.empty()) y += set.lead_in(area.x, y, area.width, c.words(key), list_of(c, rows) + ".", set.small());
+  const auto list = [&](std::string_view key,
+                        const std::vector<const ConstellationEvening*>& rows) {
+    if (!rows.empty())
+      y += set.lead_in(area.x, y, area.width, c.words(key), list_of(c, rows) + ".", set.small());
   };
   list("constellations.below", below);
   list("constellations.never", never);

@@ -1,7 +1,6 @@
-#include <fmt/format.h>
-
 #include <algorithm>
 #include <cmath>
+#include <fmt/format.h>
 
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/setting.hpp"
@@ -41,24 +40,34 @@ std::vector<Line> lines_of_month(const BlockContext& c) {
   for (const ClockChange& change : c.year.clock_changes) {
     const CivilMinute at = zone.civil(change.at);
     if (!in_month(at.date())) continue;
-    const double hours = std::chrono::duration<double, std::ratio<3600>>(change.after - change.before).count();
+    const double hours =
+        std::chrono::duration<double, std::ratio<3600>>(change.after - change.before).count();
     const double size = std::abs(hours);
-    const std::string amount = size == 1 ? c.words("happening.one-hour")
-                                         : c.words("happening.hours", {{"n", c.words.number(size, size == std::floor(size) ? 0 : 1)}});
-    lines.push_back({at.date(), c.words.time(at), c.words(hours > 0 ? "happening.clocks-forward" : "happening.clocks-back", {{"amount", amount}})});
+    const std::string amount =
+        size == 1 ? c.words("happening.one-hour")
+                  : c.words("happening.hours",
+                            {{"n", c.words.number(size, size == std::floor(size) ? 0 : 1)}});
+    lines.push_back({at.date(), c.words.time(at),
+                     c.words(hours > 0 ? "happening.clocks-forward" : "happening.clocks-back",
+                             {{"amount", amount}})});
   }
   for (const OwnDate& own : c.site.dates) {
-    if (!in_month(own.from) && !in_month(own.to) && !(own.from < make_date(year, month, 1) && own.to > make_date(year, month, 1))) continue;
-    const std::string when = own.from == own.to ? "" : c.words("happening.until", {{"date", c.words.day_month(own.to)}});
+    if (!in_month(own.from) && !in_month(own.to) &&
+        !(own.from < make_date(year, month, 1) && own.to > make_date(year, month, 1)))
+      continue;
+    const std::string when =
+        own.from == own.to ? "" : c.words("happening.until", {{"date", c.words.day_month(own.to)}});
     lines.push_back({std::max(own.from, make_date(year, month, 1)), when, own.text, true});
   }
-  std::stable_sort(lines.begin(), lines.end(), [](const Line& a, const Line& b) { return a.date < b.date; });
+  std::stable_sort(lines.begin(), lines.end(),
+                   [](const Line& a, const Line& b) { return a.date < b.date; });
   return lines;
 }
 
 }  // namespace
 
-double draw_happenings(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
+double draw_happenings(const BlockContext& c, const BlockOptions&, const Box& area,
+                       std::vector<Mark>& out) {
   const std::vector<Line> lines = lines_of_month(c);
   if (lines.empty()) return 0;
   Setter set(c, out);

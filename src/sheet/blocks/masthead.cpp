@@ -1,5 +1,4 @@
 #include <fmt/format.h>
-
 #include <fstream>
 #include <sstream>
 
@@ -29,29 +28,35 @@ std::string charts_line(const BlockContext& c) {
   const std::string hour = c.words.time(zone.civil(evening.chart_moment));
   const std::string moment = c.words.time(zone.civil(evening.moment));
   switch (evening.shift) {
-    case EveningShift::none: return c.words("masthead.charts", {{"date", date}, {"time", hour}});
+    case EveningShift::none:
+      return c.words("masthead.charts", {{"date", date}, {"time", hour}});
     case EveningShift::waits_for_dark:
       return c.words("masthead.charts-later", {{"date", date}, {"hour", hour}, {"time", moment}});
     case EveningShift::darkest_moment:
       return c.words("masthead.charts-darkest", {{"date", date}, {"time", moment}});
-    case EveningShift::no_stars: break;
+    case EveningShift::no_stars:
+      break;
   }
   return c.words("masthead.charts-bright", {{"date", date}, {"time", moment}});
 }
 
 }  // namespace
 
-double draw_masthead(const BlockContext& c, const BlockOptions& options, const Box& area, std::vector<Mark>& out) {
+double draw_masthead(const BlockContext& c, const BlockOptions& options, const Box& area,
+                     std::vector<Mark>& out) {
   Setter set(c, out);
   const bool side_b = options.get("side") == "back";
   const auto [year, month] = c.year.span.month(c.month_index);
-  const std::string title = c.words("masthead.month", {{"month", c.words.month_name(month)}, {"year", std::to_string(year)}});
+  const std::string title = c.words(
+      "masthead.month", {{"month", c.words.month_name(month)}, {"year", std::to_string(year)}});
   if (side_b) {
     const Style style{Face::light, 17, c.theme.blue};
     set.left(area.x, area.y + 6.2, title, style);
     const double used = set.width(title, style);
-    set.left(area.x + used + 3, area.y + 6.2, c.words("masthead.back"), {Face::italic, c.theme.body_pt, c.theme.soft});
-    set.right(area.right(), area.y + 6.2, c.site.masthead.group.empty() ? c.site.name : c.site.masthead.group,
+    set.left(area.x + used + 3, area.y + 6.2, c.words("masthead.back"),
+             {Face::italic, c.theme.body_pt, c.theme.soft});
+    set.right(area.right(), area.y + 6.2,
+              c.site.masthead.group.empty() ? c.site.name : c.site.masthead.group,
               {Face::bold, 9, c.theme.black});
     return 8.0;
   }
@@ -72,7 +77,8 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
     if (const auto size = png_size(*png)) {
       const double scale = std::min((height - 2) / size->second, 34.0 / size->first);
       const double w = size->first * scale, h = size->second * scale;
-      out.push_back(Image{{right - w, area.y + (height - h) / 2, w, h}, png,
+      out.push_back(Image{{right - w, area.y + (height - h) / 2, w, h},
+                          png,
                           c.words("masthead.logo", {{"group", c.site.masthead.group}})});
       right -= w + 4;
     }
@@ -89,16 +95,19 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
     if (text.empty()) return;
     Style fit = style;
     const double room = right - left_end;
-    if (set.width(text, fit) > room) fit.size_pt = std::max(style.size_pt * room / set.width(text, fit), 7.0);
+    if (set.width(text, fit) > room)
+      fit.size_pt = std::max(style.size_pt * room / set.width(text, fit), 7.0);
     set.right(right, baseline, text, fit);
     baseline += pitch;
   };
   row(group.empty() ? c.site.name : group, {Face::bold, 11, c.theme.black}, 4.3);
-  row(group.empty() || group == c.site.name ? position(c) : c.site.name + "  ·  " + position(c), set.small(), 3.5);
+  row(group.empty() || group == c.site.name ? position(c) : c.site.name + "  ·  " + position(c),
+      set.small(), 3.5);
   row(c.site.masthead.contact, set.small(), 3.5);
   const Style charts{Face::regular, 9, c.theme.black};
   double used = 12.4;
-  for (const std::string& text : break_lines(c.type, line, charts.face, charts.size_pt, text_room)) {
+  for (const std::string& text :
+       break_lines(c.type, line, charts.face, charts.size_pt, text_room)) {
     set.left(area.x, area.y + used + 3.0, text, charts);
     used += 4.1;
   }

@@ -1,7 +1,6 @@
-#include <fmt/format.h>
-
 #include <algorithm>
 #include <cmath>
+#include <fmt/format.h>
 #include <set>
 
 #include "sheet/blocks/blocks.hpp"
@@ -26,11 +25,14 @@ std::vector<const Night*> nights_of_month(const BlockContext& c) {
   return nights;
 }
 
-/// The bars' axis: whole hours that hold every sunset and sunrise of the month; all 24 where the Sun does not rise or set.
+/// The bars' axis: whole hours that hold every sunset and sunrise of the month; all 24 where the
+/// Sun does not rise or set.
 struct Axis {
   double from = 12, to = 36;  // hours
   double x = 0, width = 0;    // mm
-  double at(double hours) const { return x + width * (std::clamp(hours, from, to) - from) / (to - from); }
+  double at(double hours) const {
+    return x + width * (std::clamp(hours, from, to) - from) / (to - from);
+  }
 };
 
 Axis axis_of(const BlockContext& c, const std::vector<const Night*>& nights) {
@@ -80,9 +82,11 @@ void draw_bar(const BlockContext& c, const Axis& axis, const Row& row, std::vect
   for (const ToneSpan& span : tone_spans(row.night)) {
     if (span.tone == SkyTone::day) continue;
     for (const TimeSpan& piece : by_offset(c, {span.from, span.to}))
-      if (const Box b = box(piece); b.width > 0.01) out.push_back(Fill{Path::rectangle(b), tone_ink(c.theme, span.tone)});
+      if (const Box b = box(piece); b.width > 0.01)
+        out.push_back(Fill{Path::rectangle(b), tone_ink(c.theme, span.tone)});
   }
-  // The Moon's time up: a light band whose thickness follows the lit part, with edges so that it shows on every tone.
+  // The Moon's time up: a light band whose thickness follows the lit part, with edges so that it
+  // shows on every tone.
   const double thick = height * (0.16 + 0.50 * row.night.moon_lit);
   for (const TimeSpan& up : moon_spans(row.night))
     for (const ToneSpan& tone : tone_spans(row.night)) {
@@ -96,7 +100,11 @@ void draw_bar(const BlockContext& c, const Axis& axis, const Row& row, std::vect
         b.height = thick;
         out.push_back(Fill{Path::rectangle(b), c.theme.paper});
         for (double y : {b.y, b.bottom()})
-          out.push_back(Stroke{Path::polyline({{b.x, y}, {b.right(), y}}), c.theme.hairline_mm, c.theme.blue_soft, {}, false});
+          out.push_back(Stroke{Path::polyline({{b.x, y}, {b.right(), y}}),
+                               c.theme.hairline_mm,
+                               c.theme.blue_soft,
+                               {},
+                               false});
       }
     }
 }
@@ -111,9 +119,10 @@ std::string bar_note(const BlockContext& c, const Night& night) {
 
 std::string duration(const BlockContext& c, double total_minutes) {
   const long rounded = std::lround(total_minutes);
-  return rounded == 0 ? std::string("–")
-                      : c.words("night-bars.duration", {{"hours", std::to_string(rounded / 60)},
-                                                         {"minutes", fmt::format("{:02}", rounded % 60)}});
+  return rounded == 0
+             ? std::string("–")
+             : c.words("night-bars.duration", {{"hours", std::to_string(rounded / 60)},
+                                               {"minutes", fmt::format("{:02}", rounded % 60)}});
 }
 
 double dark_minutes(const std::vector<TimeSpan>& spans) {
@@ -122,7 +131,8 @@ double dark_minutes(const std::vector<TimeSpan>& spans) {
   return sum;
 }
 
-/// Moon cells: a time where it happens between sunset and sunrise, else whether the Moon is up at that end of the night.
+/// Moon cells: a time where it happens between sunset and sunrise, else whether the Moon is up at
+/// that end of the night.
 std::string moon_cell(const BlockContext& c, const Night& night, bool rise) {
   const Ut begin = night.sunset.value_or(night.from), end = night.sunrise.value_or(night.to);
   for (Ut t : rise ? night.moonrises : night.moonsets)
@@ -137,8 +147,9 @@ std::string moon_cell(const BlockContext& c, const Night& night, bool rise) {
 }
 
 /// Neighbouring rows with the same note share one label.
-void label_bars(const BlockContext& c, Setter& set, const Axis& axis, const std::vector<const Night*>& nights, double bars_top,
-                double pitch, std::vector<Mark>& out) {
+void label_bars(const BlockContext& c, Setter& set, const Axis& axis,
+                const std::vector<const Night*>& nights, double bars_top, double pitch,
+                std::vector<Mark>& out) {
   const Style quiet = set.table();
   for (std::size_t i = 0; i < nights.size();) {
     const std::string note = bar_note(c, *nights[i]);
@@ -147,7 +158,8 @@ void label_bars(const BlockContext& c, Setter& set, const Axis& axis, const std:
     if (!note.empty()) {
       const double width = set.width(note, quiet), x = axis.x + (axis.width - width) / 2;
       const double middle = bars_top + pitch * static_cast<double>(i + end) / 2;
-      out.push_back(Fill{Path::rectangle({x - 1, middle - pitch / 2 + 0.2, width + 2, pitch - 0.4}), c.theme.paper});
+      out.push_back(Fill{Path::rectangle({x - 1, middle - pitch / 2 + 0.2, width + 2, pitch - 0.4}),
+                         c.theme.paper});
       set.left(x, middle + c.type.cap_height(quiet.face, quiet.size_pt) / 2, note, quiet);
     }
     i = end;
@@ -155,7 +167,8 @@ void label_bars(const BlockContext& c, Setter& set, const Axis& axis, const std:
 }
 
 /// What the bars' tones mean, right-aligned; returns the width used.
-double draw_key(const BlockContext& c, Setter& set, const Style& style, double right, double y, std::vector<Mark>& out) {
+double draw_key(const BlockContext& c, Setter& set, const Style& style, double right, double y,
+                std::vector<Mark>& out) {
   constexpr double swatch = 4, gap = 1, between = 2;  // mm
   struct Entry {
     Ink ink;
@@ -163,14 +176,17 @@ double draw_key(const BlockContext& c, Setter& set, const Style& style, double r
   };
   std::vector<Entry> entries;
   for (SkyTone tone : {SkyTone::civil, SkyTone::nautical, SkyTone::astronomical, SkyTone::dark})
-    entries.push_back({tone_ink(c.theme, tone), c.words(fmt::format("night-bars.tone-{}", static_cast<int>(tone)))});
+    entries.push_back({tone_ink(c.theme, tone),
+                       c.words(fmt::format("night-bars.tone-{}", static_cast<int>(tone)))});
   entries.push_back({c.theme.dark, c.words("night-bars.moon-up")});
   double width = -between;
-  for (const Entry& entry : entries) width += swatch + gap + set.width(entry.label, style) + between;
+  for (const Entry& entry : entries)
+    width += swatch + gap + set.width(entry.label, style) + between;
   double x = right - width;
   for (std::size_t i = 0; i < entries.size(); ++i) {
     out.push_back(Fill{Path::rectangle({x, y, swatch, 2.8}), entries[i].ink});
-    if (i + 1 == entries.size()) out.push_back(Fill{Path::rectangle({x, y + 0.8, swatch, 1.2}), c.theme.paper});
+    if (i + 1 == entries.size())
+      out.push_back(Fill{Path::rectangle({x, y + 0.8, swatch, 1.2}), c.theme.paper});
     set.left(x + swatch + gap, y + 2.5, entries[i].label, style);
     x += swatch + gap + set.width(entries[i].label, style) + between;
   }
@@ -179,16 +195,19 @@ double draw_key(const BlockContext& c, Setter& set, const Style& style, double r
 
 /// Under the times: what "dark" means this month, and the "up" of the Moon's columns.
 std::string foot_note(const BlockContext& c, const std::vector<const Night*>& nights) {
-  const bool always_day =
-      std::all_of(nights.begin(), nights.end(), [](const Night* n) { return n->sun == Presence::up_throughout; });
+  const bool always_day = std::all_of(nights.begin(), nights.end(), [](const Night* n) {
+    return n->sun == Presence::up_throughout;
+  });
   if (always_day) return c.words("night-bars.no-night");
   const double limit = nights.front()->dark_limit.degrees();
-  return c.words(limit < -15 ? "night-bars.limit" : "night-bars.limit-shallow", {{"degrees", c.words.number(-limit, 0)}});
+  return c.words(limit < -15 ? "night-bars.limit" : "night-bars.limit-shallow",
+                 {{"degrees", c.words.number(-limit, 0)}});
 }
 
 }  // namespace
 
-double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
+double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& area,
+                       std::vector<Mark>& out) {
   Setter set(c, out);
   const Zone& zone = c.year.place.zone;
   const std::vector<const Night*> nights = nights_of_month(c);
@@ -196,11 +215,12 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   const double title = 0.8;
   const double head = 6.8, foot = 4.4;
   const double rows = static_cast<double>(nights.size());
-  const double pitch = std::clamp((area.height - title - head - foot) / rows, 2.95, 4.4);
+  const double pitch = std::clamp((area.height - title - head - foot) / rows, 2.9, 4.4);
   const bool wide = c.order.clock_12;
   const double time_column = wide ? 13.0 : 10.4;
 
-  // Columns: date, four times of the Sun, two of the Moon, lit part with its picture, dark hours, then the bar.
+  // Columns: date, four times of the Sun, two of the Moon, lit part with its picture, dark hours,
+  // then the bar.
   const double date_width = 11.5, lit_width = 12.0, dark_width = 9.5;
   std::vector<double> centres;
   double x = area.x + date_width;
@@ -217,7 +237,8 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   Style head_style = cell;
   head_style.ink = c.theme.soft;
   const double top = area.y + title;
-  const std::string_view heads[] = {"sunset", "dark-from", "dark-to", "sunrise", "moonrise", "moonset"};
+  const std::string_view heads[] = {"sunset",  "dark-from", "dark-to",
+                                    "sunrise", "moonrise",  "moonset"};
   for (std::size_t i = 0; i < 6; ++i) {
     const std::string key(heads[i]);
     set.centre(centres[i], top + 2.7, c.words("night-bars." + key + "-1"), head_style);
@@ -232,13 +253,18 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   const double bars_top = top + head, bars_bottom = bars_top + pitch * rows;
   const int step = axis.to - axis.from > 16 ? 3 : axis.to - axis.from > 9 ? 2 : 1;
   double label_end = 0;
-  for (int hour = static_cast<int>(std::ceil(axis.from)); hour <= static_cast<int>(axis.to); ++hour) {
+  for (int hour = static_cast<int>(std::ceil(axis.from)); hour <= static_cast<int>(axis.to);
+       ++hour) {
     const bool named = hour % step == 0;
     const double at = axis.at(hour);
-    out.push_back(Stroke{Path::polyline({{at, bars_top - (named ? 1.2 : 0.4)}, {at, bars_bottom}}), c.theme.hairline_mm,
-                         c.theme.faint, {}, false});
+    out.push_back(Stroke{Path::polyline({{at, bars_top - (named ? 1.2 : 0.4)}, {at, bars_bottom}}),
+                         c.theme.hairline_mm,
+                         c.theme.faint,
+                         {},
+                         false});
     if (!named) continue;
-    const std::string label = hour == 24 ? c.words("night-bars.midnight") : c.words.whole_hour(hour);
+    const std::string label =
+        hour == 24 ? c.words("night-bars.midnight") : c.words.whole_hour(hour);
     const double half = set.width(label, head_style) / 2;
     const double label_x = std::clamp(at - half, axis.x - 1, area.right() - 2 * half);
     if (label_x < label_end + 1) continue;
@@ -257,7 +283,8 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
     const double baseline = y + pitch / 2 + c.type.cap_height(cell.face, cell.size_pt) / 2;
     const bool session = session_nights.contains(night.date);
     const auto weekday = weekday_of(night.date);
-    if (i > 0 && weekday == std::chrono::Monday) set.rule(area.x, axis.x - 1.5, y, c.theme.faint, c.theme.hairline_mm);
+    if (i > 0 && weekday == std::chrono::Monday)
+      set.rule(area.x, axis.x - 1.5, y, c.theme.faint, c.theme.hairline_mm);
     const bool weekend = weekday == std::chrono::Friday || weekday == std::chrono::Saturday;
     const Style date_style = weekend || session ? set.strong(cell) : cell;
     set.left(area.x, baseline, c.words.weekday_short(weekday), date_style);
@@ -265,23 +292,35 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
     if (session) {
       const double h = 0.95;  // a filled lozenge: the group's own night
       const Point p{area.x + 11.3, y + pitch / 2};
-      out.push_back(Fill{Path::polyline({{p.x, p.y - h}, {p.x + h, p.y}, {p.x, p.y + h}, {p.x - h, p.y}}, true), c.theme.blue});
+      out.push_back(Fill{
+          Path::polyline({{p.x, p.y - h}, {p.x + h, p.y}, {p.x, p.y + h}, {p.x - h, p.y}}, true),
+          c.theme.blue});
     }
-    const auto time_or_dash = [&](const std::optional<Ut>& t) { return t ? c.words.time(zone.civil(*t)) : std::string("–"); };
+    const auto time_or_dash = [&](const std::optional<Ut>& t) {
+      return t ? c.words.time(zone.civil(*t)) : std::string("–");
+    };
     const bool deep = night.dark_limit.degrees() < -15, middle = night.dark_limit.degrees() < -9;
-    const auto& dusk = deep ? night.astronomical_dusk : middle ? night.nautical_dusk : night.civil_dusk;
-    const auto& dawn = deep ? night.astronomical_dawn : middle ? night.nautical_dawn : night.civil_dawn;
+    const auto& dusk = deep     ? night.astronomical_dusk
+                       : middle ? night.nautical_dusk
+                                : night.civil_dusk;
+    const auto& dawn = deep     ? night.astronomical_dawn
+                       : middle ? night.nautical_dawn
+                                : night.civil_dawn;
     set.centre(centres[0], baseline, time_or_dash(night.sunset), cell);
     set.centre(centres[1], baseline, time_or_dash(dusk), cell);
     set.centre(centres[2], baseline, time_or_dash(dawn), cell);
     set.centre(centres[3], baseline, time_or_dash(night.sunrise), cell);
     set.centre(centres[4], baseline, moon_cell(c, night, true), cell);
     set.centre(centres[5], baseline, moon_cell(c, night, false), cell);
-    set.right(lit_right, baseline, c.words("night-bars.percent", {{"n", c.words.number(100 * night.moon_lit, 0)}}), cell);
+    set.right(lit_right, baseline,
+              c.words("night-bars.percent", {{"n", c.words.number(100 * night.moon_lit, 0)}}),
+              cell);
     const auto& looks = c.year.month_moons[static_cast<std::size_t>(c.month_index)];
     if (i < looks.size())
-      draw_moon({moon_x, y + pitch / 2}, std::min(1.45, pitch * 0.42), looks[i].lit, looks[i].bright_limb_from_zenith, c.theme, out);
-    set.right(dark_right, baseline, duration(c, dark_minutes(night.dark_or_darkest)), set.strong(cell));
+      draw_moon({moon_x, y + pitch / 2}, std::min(1.45, pitch * 0.42), looks[i].lit,
+                looks[i].bright_limb_from_zenith, c.theme, out);
+    set.right(dark_right, baseline, duration(c, dark_minutes(night.dark_or_darkest)),
+              set.strong(cell));
     draw_bar(c, axis, row, out);
   }
   label_bars(c, set, axis, nights, bars_top, pitch, out);

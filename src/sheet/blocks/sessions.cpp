@@ -6,7 +6,8 @@
 namespace duskleaf {
 
 // The group's own evenings of the month, when and where, and its own words.
-double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area, std::vector<Mark>& out) {
+double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area,
+                     std::vector<Mark>& out) {
   const auto [year, month] = c.year.span.month(c.month_index);
   struct Entry {
     Date date;
@@ -16,14 +17,17 @@ double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area
   for (const Session& session : c.site.sessions)
     for (Date date : session_dates(session, c.year.span))
       if (year_of(date) == year && month_of(date) == month) entries.push_back({date, &session});
-  std::stable_sort(entries.begin(), entries.end(), [](const Entry& a, const Entry& b) { return a.date < b.date; });
+  std::stable_sort(entries.begin(), entries.end(),
+                   [](const Entry& a, const Entry& b) { return a.date < b.date; });
   const auto note = c.site.notes.find(month);
   if (entries.empty() && note == c.site.notes.end()) return 0;
 
   Setter set(c, out);
   const std::string& group = c.site.masthead.group;
-  double y = area.y + set.heading(area.x, area.y, area.width, c.words(entries.empty() ? "sessions.words-title" : "sessions.title"),
-                                  entries.empty() ? group : std::string());
+  double y =
+      area.y + set.heading(area.x, area.y, area.width,
+                           c.words(entries.empty() ? "sessions.words-title" : "sessions.title"),
+                           entries.empty() ? group : std::string());
   const Style body = set.body();
   // Sessions of one rule share their place and words: name these once, with all dates.
   std::vector<const Session*> seen;
@@ -33,12 +37,15 @@ double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area
     std::string dates;
     for (const Entry& other : entries)
       if (other.session == entry.session)
-        dates += (dates.empty() ? "" : ", ") + c.words("date.weekday-day-month", {{"weekday", c.words.weekday_short(weekday_of(other.date))},
-                                                                                {"date", c.words.day_month(other.date)}});
+        dates += (dates.empty() ? "" : ", ") +
+                 c.words("date.weekday-day-month",
+                         {{"weekday", c.words.weekday_short(weekday_of(other.date))},
+                          {"date", c.words.day_month(other.date)}});
     std::string rest;
     const Session& s = *entry.session;
     if (s.from && s.to)
-      rest = c.words("sessions.from-to", {{"from", c.words.time_of_day(*s.from)}, {"to", c.words.time_of_day(*s.to)}});
+      rest = c.words("sessions.from-to",
+                     {{"from", c.words.time_of_day(*s.from)}, {"to", c.words.time_of_day(*s.to)}});
     else if (s.from)
       rest = c.words("sessions.from", {{"from", c.words.time_of_day(*s.from)}});
     if (!s.where.empty()) rest += (rest.empty() ? "" : ", ") + s.where;
@@ -46,7 +53,8 @@ double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area
     if (!s.text.empty()) rest += s.text;
     y += set.lead_in(area.x, y, area.width, dates, rest, body) + 0.5;
   }
-  if (note != c.site.notes.end()) y += set.paragraph(area.x, y, area.width, note->second, body) + 0.5;
+  if (note != c.site.notes.end())
+    y += set.paragraph(area.x, y, area.width, note->second, body) + 0.5;
   return y - area.y;
 }
 
