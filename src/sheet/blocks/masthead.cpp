@@ -79,7 +79,8 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
       const double w = size->first * scale, h = size->second * scale;
       out.push_back(Image{{right - w, area.y + (height - h) / 2, w, h},
                           png,
-                          c.words("masthead.logo", {{"group", c.site.masthead.group}})});
+                          c.words("masthead.logo", {{"group", c.site.masthead.group}}),
+                          c.publication.ink == InkMode::grey});
       right -= w + 4;
     }
   }
@@ -105,7 +106,7 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
       set.small(), 3.5);
   row(c.site.masthead.contact, set.small(), 3.5);
   const Style charts{Face::regular, 9, c.theme.black};
-  double used = 12.4;
+  double used = 13.2;
   for (const std::string& text :
        break_lines(c.type, line, charts.face, charts.size_pt, text_room)) {
     set.left(area.x, area.y + used + 3.0, text, charts);
