@@ -14,7 +14,7 @@
 namespace duskleaf {
 namespace {
 
-constexpr double dot_at_zero_mm = 1.5;       // so that Sirius (-1.46) has 2.4 mm
+constexpr double dot_at_zero_mm = 1.65;      // so that Sirius (-1.46) has 2.6 mm
 constexpr double dot_per_magnitude = -0.14;  // log10 of the diameter
 
 std::vector<ChartStar> find_chart_stars() {

@@ -12,7 +12,7 @@
 namespace duskleaf {
 
 /// Diameter in mm of a star's dot. Area follows brightness, but not in full proportion, which no
-/// page could hold: area goes with the 0.7th power of it. Sirius 2.4 mm, magnitude 5 0.3 mm.
+/// page could hold: area goes with the 0.7th power of it. Sirius 2.6 mm, magnitude 5 0.33 mm.
 double star_dot_mm(double magnitude);
 
 /// The faintest stars that a chart of this size shows, whatever the sky is like.

@@ -286,8 +286,8 @@ TEST(Charts, CountWhatFoundNoRoom) {
 }
 
 TEST(StarDots, GrowWithBrightness) {
-  EXPECT_NEAR(star_dot_mm(5.0), 0.30, 0.02);
-  EXPECT_NEAR(star_dot_mm(-1.46), 2.4, 0.05);
+  EXPECT_GT(star_dot_mm(5.0), 0.3);    // the faintest survive a copier
+  EXPECT_LT(star_dot_mm(-1.46), 3.0);  // Sirius hides no neighbour
   for (double m = -1.4; m < 6; m += 0.2) EXPECT_GT(star_dot_mm(m), star_dot_mm(m + 0.2));
 }
 
