@@ -32,6 +32,7 @@ std::vector<TimeSpan> moon_up_spans(const Night& night) {
 
 int count_visible_planets(const SiteSky& sky, double site_limit, Ut t) {
   const SkyLight light = sky_light(sky, site_limit, t);
+  if (light.sun_altitude > planets_visible_below) return 0;
   const Tt tt = to_tt(t);
   return static_cast<int>(std::count_if(planets.begin(), planets.end(), [&](Body planet) {
     const double magnitude = planet_magnitude(planet, planet_aspect(sky.ephemeris(), planet, tt));

@@ -84,6 +84,8 @@ void make_evenings(const SiteSky& sky, SiteYear& year) {
     for (Body planet : planets)
       evening.planets.push_back(planet_evening(sky, planet, evening.moment, evening.faintest_star,
                                                {night.from, night.to}));
+    if (evening.sun_altitude > planets_visible_below)
+      for (PlanetEvening& p : evening.planets) p.visible = false;
     evening.constellations = constellation_evenings(directions, latitude, evening.moment,
                                                     evening.local_sidereal_time, sidereal_times);
     if (evening.shift == EveningShift::no_stars)

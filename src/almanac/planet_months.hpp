@@ -7,24 +7,32 @@
 
 namespace duskleaf {
 
-/// Where in the night a planet is to be seen. Evening: between sunset and an hour after the chart's
-/// hour (at least until the darkest moment where the Sun is down for less than six hours); morning:
-/// in the last two hours before sunrise, or where it is seen, but not in the evening; all night: at
-/// nine tenths or more of the time with the Sun below -12 degrees.
+/// Where in the night a planet is to be seen, while the Sun is 5 degrees down or lower (common
+/// practice: nobody sweeps with optics, or strains to see, near a Sun that has barely set).
+/// Evening: until an hour after the evening's drawn moment (EveningMoment; at least until the
+/// darkest moment where the Sun is down for less than six hours). Morning: from two hours before
+/// sunrise, or one before nautical dawn where that is earlier, but after the darkest moment. What
+/// is seen between the two alone goes by the side of the darkest moment on which it stands highest.
+/// All night: both, and at nine tenths or more of the time with the Sun below -12 degrees.
 enum class PlanetSight { not_visible, evening, morning, evening_and_morning, all_night };
 
 /// A planet's month at a site, as a page tells it.
 struct PlanetMonth {
   Body planet;
   bool optics_only;  // never within the bare eye's reach this month: sight is then that of a pair
-                     // of binoculars (Uranus and Neptune 10 degrees high, the Sun below -12)
+                     // of binoculars (Uranus and Neptune 10 degrees high, the Sun below -12).
+                     // Uranus counts for the bare eye half a magnitude above the limit alone
   std::vector<std::pair<Date, PlanetSight>> sights;  // the 1st, 11th and 21st and the last day
   std::optional<Date> first_evening,
       last_evening;  // first and last date of the month on which it is an evening sight
-  // The night of the 15th:
-  PlanetSight sight;
-  std::optional<Ut>
-      best;  // when it stands highest while visible, in the evening if it is seen then
+  std::optional<Date> first_morning, last_morning;  // and a morning sight; all night is both
+  // The night of best_date:
+  Date best_date;     // the 15th, or where it is not visible then the nearest date (the earlier of
+                      // two) on which it is; the 15th where it is not visible all month
+  PlanetSight sight;  // not_visible: on no date of the month
+  std::optional<Ut> best;           // when it stands highest while visible in the part of the night
+                                    // that `sight` names, the evening where it names both; given
+                                    // whenever it is visible
   std::optional<Horizontal> place;  // at `best`, refracted
   double magnitude;
   Angle elongation;  // positive east of the Sun
@@ -33,7 +41,7 @@ struct PlanetMonth {
 };
 
 /// The seven planets outward in the month (0..11 of the span); `year` needs its nights alone. About
-/// 5 ms a month.
+/// 15 ms a month.
 std::vector<PlanetMonth> planet_month(const YearEphemeris&, const SiteYear& year, int index);
 
 }  // namespace duskleaf

@@ -50,7 +50,8 @@ Angle least_height(Body planet) {
 
 bool bare_eye_visible(Body planet, double magnitude, Angle apparent_altitude,
                       double faintest_star) {
-  return planet != Body::neptune && magnitude < faintest_star &&
+  const double margin = planet == Body::uranus ? 0.5 : 0.0;
+  return planet != Body::neptune && magnitude + margin < faintest_star &&
          apparent_altitude >= least_height(planet);
 }
 

@@ -20,8 +20,12 @@ SkyLight sky_light(const SiteSky&, double site_limit, Ut);
 Horizontal apparent_place(const SiteSky&, Body planet, Ut);
 /// Least height at which a planet counts as visible: 5 degrees, 10 for Uranus and Neptune.
 Angle least_height(Body planet);
-/// Brighter than the faintest star and high enough; Neptune never by the bare eye.
+/// Brighter than the faintest star and high enough; Uranus half a magnitude brighter (who does not
+/// know where to look needs a margin); Neptune never by the bare eye.
 bool bare_eye_visible(Body planet, double magnitude, Angle apparent_altitude, double faintest_star);
+
+/// No planet is said to be visible while the Sun is higher than this.
+inline constexpr Angle planets_visible_below = Angle::from_degrees(-4);
 
 /// Angular distance from the Sun, positive east of it (evening sky).
 Angle signed_elongation(const YearEphemeris&, Body planet, Tt);

@@ -23,8 +23,9 @@ TEST(BareEye, BrighterThanTheFaintestStarAndHighEnough) {
   for (const Row& row : {Row{"Jupiter", Body::jupiter, -2, 5.0, 5, true},
                          Row{"too low", Body::jupiter, -2, 4.9, 5, false},
                          Row{"too faint", Body::saturn, 1, 30, 0.9, false},
-                         Row{"Uranus in the country", Body::uranus, 5.7, 10.1, 6, true},
-                         Row{"Uranus too low", Body::uranus, 5.7, 9.9, 6, false},
+                         Row{"Uranus under a mountain sky", Body::uranus, 5.7, 10.1, 6.3, true},
+                         Row{"Uranus in the country", Body::uranus, 5.7, 40, 6, false},
+                         Row{"Uranus too low", Body::uranus, 5.7, 9.9, 6.5, false},
                          Row{"Uranus from a town", Body::uranus, 5.7, 40, 5, false},
                          Row{"Neptune never", Body::neptune, 7.7, 60, 8, false}})
     EXPECT_EQ(bare_eye_visible(row.planet, row.magnitude, Angle::from_degrees(row.altitude),
