@@ -24,10 +24,26 @@ TimeSpan window_span(const Zone& zone, Date date, const ClockWindow& window) {
 
 double minutes(const std::vector<TimeSpan>& spans) { return length(spans).count() * 1440.0; }
 
-std::vector<TimeSpan> moon_up_spans(const Night& night) {
-  // The Moon's setting is its rising for the question of when it is up.
-  return spans_below(night.events, EventKind::moonset, EventKind::moonrise, night.from, night.to,
-                     night.moon_up_at_start);
+// To five minutes; what there is of a minute or more does not vanish.
+int rounded(double minutes) {
+  return minutes < 1.0 ? 0 : std::max(5, 5 * static_cast<int>(std::lround(minutes / 5.0)));
+}
+
+// See NightRank. What decides next stays within a step of five minutes, 0.083 h.
+double score_of(const NightRank& rank, Aim aim, bool moon_down) {
+  const double hours = rank.dark_rounded / 60.0;
+  const double lit = std::round(100.0 * rank.moon_lit) / 100.0;
+  switch (aim) {
+    case Aim::dark: {
+      const double base = rank.dark_rounded > 0 ? hours : moon_down ? -0.1 : -0.2;
+      return base - 0.08 * lit;
+    }
+    case Aim::moon:
+      return rank.moon_rounded / 60.0 * (1.0 - 0.8 * std::abs(2.0 * lit - 1.0));
+    case Aim::any:
+      break;
+  }
+  return hours + 0.01 * rank.planets_visible;
 }
 
 int count_visible_planets(const SiteSky& sky, double site_limit, Ut t) {
@@ -41,22 +57,21 @@ int count_visible_planets(const SiteSky& sky, double site_limit, Ut t) {
   }));
 }
 
-void add_reasons(NightRank& rank, const Night& night, const TimeSpan& window,
-                 const std::vector<TimeSpan>& moon_up) {
+void add_reasons(NightRank& rank, const Night& night, const TimeSpan& window, Days moon_up) {
   const auto add = [&](const char* key, std::optional<double> number = {},
                        std::optional<Ut> at = {}) {
     rank.reasons.push_back({key, number, at});
   };
-  if (rank.dark_minutes > 0)
-    add("dark-hours", rank.dark_minutes / 60.0);
+  if (rank.dark_rounded > 0)
+    add("dark-hours", rank.dark_rounded / 60.0);
   else
     add("not-dark");
   if (night.dark_limit != astronomical_altitude)
     add("darkest-limit", std::round(night.dark_limit.degrees()));
   add("moon-lit", 100.0 * rank.moon_lit);
-  const Days up = length(intersection(moon_up, {window})), whole = window.to - window.from;
-  if (up <= Days(0)) add("moon-down");
-  if (up >= whole - Days(1e-6)) add("moon-up");
+  const Days whole = window.to - window.from;
+  if (moon_up <= Days(0)) add("moon-down");
+  if (moon_up >= whole - Days(1e-6)) add("moon-up");
   for (const Event& e : night.events) {
     if (!(window.from < e.at && e.at < window.to)) continue;
     if (e.kind == EventKind::moonrise) add("moon-rises-at", {}, e.at);
@@ -94,20 +109,17 @@ std::vector<NightRank> rank_nights(const YearEphemeris& ephemeris, const SiteYea
     rank.dark_minutes = minutes(intersection(night.dark_or_darkest, part));
     rank.dark_limit = night.dark_limit;
     rank.moon_minutes = minutes(intersection(intersection(moon_up, sun_below), part));
-    rank.moon_lit = moon_lit_fraction(ephemeris, to_tt(middle));
+    rank.dark_rounded = rounded(rank.dark_minutes);
+    rank.moon_rounded = rounded(rank.moon_minutes);
+    rank.moon_lit = night.moon_lit;
     rank.planets_visible = count_visible_planets(sky, year.place.limiting_magnitude, middle);
-    const double dark_hours = rank.dark_minutes / 60.0;
-    const double moon_hours =
-        rank.moon_minutes / 60.0 * (1.0 - 0.8 * std::abs(2.0 * rank.moon_lit - 1.0));
-    rank.score = aim == Aim::dark   ? dark_hours
-                 : aim == Aim::moon ? moon_hours
-                                    : dark_hours + 0.5 * moon_hours;
-    rank.score += 0.1 * rank.planets_visible;
     // Without a window the Moon is judged from sunset to sunrise.
     const TimeSpan judged = window || night.sun_down.empty()
                                 ? span
                                 : TimeSpan{night.sun_down.front().from, night.sun_down.back().to};
-    add_reasons(rank, night, judged, moon_up);
+    const Days up = length(intersection(moon_up, {judged}));
+    rank.score = score_of(rank, aim, up <= Days(0));
+    add_reasons(rank, night, judged, up);
     ranks.push_back(std::move(rank));
   }
   std::stable_sort(ranks.begin(), ranks.end(), [](const NightRank& a, const NightRank& b) {

@@ -39,6 +39,8 @@ FigureTimes figure_times(const std::vector<DailyArc>& stars, const Eigen::Vector
   const auto never_rises = [](const DailyArc& s) { return s.half_arc <= 0.0; };
   times.circumpolar = std::all_of(stars.begin(), stars.end(), never_sets);
   times.never_rises = std::all_of(stars.begin(), stars.end(), never_rises);
+  times.half_never_sets =
+      2 * std::count_if(stars.begin(), stars.end(), never_sets) >= std::ssize(stars);
   if (times.never_rises) return times;
   times.highest = centred(std::atan2(mean.y(), mean.x()) - sidereal_time);
   // Walk through the day's rises and sets in order of sidereal time, counting how many stars are
@@ -110,19 +112,24 @@ std::vector<ConstellationEvening> constellation_evenings(
                 : up > 0    ? FigureState::partly_up
                             : FigureState::below;
     const double hours = hour_angle(mean, local_sidereal_time).hours();
-    row.phase = hours < -2.0   ? FigurePhase::rising
-                : hours <= 2.0 ? FigurePhase::high
-                               : FigurePhase::sinking;
+    row.mean_place_rises = daily_arc(mean, latitude).half_arc > 0.0;
+    if (!row.mean_place_rises)
+      row.phase = hours < 0.0 ? FigurePhase::rising : FigurePhase::sinking;
+    else
+      row.phase = hours < -2.0   ? FigurePhase::rising
+                  : hours <= 2.0 ? FigurePhase::high
+                                 : FigurePhase::sinking;
     const FigureTimes times = figure_times(arcs, mean, local_sidereal_time.radians());
     const auto instant = [&](const std::optional<double>& difference) -> std::optional<Ut> {
       if (!difference) return {};
       return moment + Days(*difference / (2 * pi) * sidereal_day);
     };
     row.rises = instant(times.rises);
-    row.highest = instant(times.highest);
+    if (row.mean_place_rises) row.highest = instant(times.highest);
     row.sets = instant(times.sets);
     row.circumpolar = times.circumpolar;
     row.never_rises = times.never_rises;
+    row.half_never_sets = times.half_never_sets;
     for (std::size_t m = 0; m < 12; ++m)
       row.evening_sight[m] = evenings[m] && 2 * stand_higher(sight_altitude, *evenings[m]) >= count;
     rows.push_back(row);

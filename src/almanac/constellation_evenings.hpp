@@ -21,6 +21,7 @@ DailyArc daily_arc(const Eigen::Vector3d& of_date, Angle latitude);
 struct FigureTimes {
   std::optional<double> rises, highest, sets;
   bool circumpolar, never_rises;
+  bool half_never_sets;  // half or more of the stars
 };
 /// A figure is risen while half or more of its stars are. `mean` is the mean place's direction.
 FigureTimes figure_times(const std::vector<DailyArc>& stars, const Eigen::Vector3d& mean,

@@ -2,34 +2,25 @@
 // sky/moon_look.hpp.
 #include "sky/moon_look.hpp"
 
+#include <algorithm>
 #include <chrono>
+#include <cmath>
 
 #include "almanac/evening_sky.hpp"
+#include "almanac/nights.hpp"
 #include "almanac/time_spans.hpp"
 #include "sky/planet_magnitude.hpp"
 
 namespace duskleaf {
 namespace {
 
-// The highest of the Moon's places at its transits and at the ends of some spans; nullopt when it
-// is not up at any of them.
-std::optional<Ut> highest_up(const SiteSky& sky, const Night& night,
-                             const std::vector<TimeSpan>& spans) {
-  std::vector<Ut> candidates;
-  for (const TimeSpan& span : spans) {
-    candidates.push_back(span.from);
-    candidates.push_back(span.to);
-    for (const Event& e : night.events)
-      if (e.kind == EventKind::moon_transit && span.from <= e.at && e.at <= span.to)
-        candidates.push_back(e.at);
-  }
+// The moment of some spans that is nearest to t; nullopt where there are none.
+std::optional<Ut> nearest_moment(const std::vector<TimeSpan>& spans, Ut t) {
   std::optional<Ut> best;
-  double altitude = 0.0;
-  for (const Ut t : candidates) {
-    const SiteSky::Sight sight = sky.sight(Body::moon, t);
-    if (SiteSky::moon_excess(sight) <= 0.0 || (best && sight.altitude <= altitude)) continue;
-    best = t;
-    altitude = sight.altitude;
+  for (const TimeSpan& span : spans) {
+    const Ut candidate = std::clamp(t, span.from, span.to);
+    if (!best || std::abs((candidate - t).count()) < std::abs((*best - t).count()))
+      best = candidate;
   }
   return best;
 }
@@ -44,8 +35,9 @@ MoonLook moon_look(const SiteSky& sky, const Zone& zone, const Night& night,
   look.up = sky.moon_up(evening);
   look.at = evening;
   if (!look.up) {
-    std::optional<Ut> other = highest_up(sky, night, night.sun_down);
-    if (!other) other = highest_up(sky, night, {{night.from, night.to}});
+    const std::vector<TimeSpan> moon_up = moon_up_spans(night);
+    std::optional<Ut> other = nearest_moment(intersection(moon_up, night.sun_down), evening);
+    if (!other) other = nearest_moment(moon_up, evening);
     look.at = other.value_or(evening);
   }
   const Observer& site = sky.observer();

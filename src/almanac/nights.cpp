@@ -206,4 +206,28 @@ std::vector<Night> make_nights(const SiteSky& sky, const Zone& zone,
   return nights;
 }
 
+std::vector<TimeSpan> moon_up_spans(const Night& night) {
+  // The Moon's setting is its rising for the question of when it is up.
+  return spans_below(night.events, EventKind::moonset, EventKind::moonrise, night.from, night.to,
+                     night.moon_up_at_start);
+}
+
+std::optional<Ut> sunset_after(const SiteYear& year, Date evening, std::chrono::minutes from) {
+  const auto index = (evening - year.span.first_day()).count();
+  if (index < 0 || index >= static_cast<std::ptrdiff_t>(year.nights.size())) return {};
+  const Night& night = year.nights[static_cast<std::size_t>(index)];
+  const Zone& zone = year.place.zone;
+  const Ut begins = zone.instant(evening + std::chrono::days(from <= 12h ? 1 : 0), from);
+  for (const Event& e : night.events) {
+    if (e.at < begins) continue;
+    if (e.kind == EventKind::sunrise) return {};
+    if (e.kind != EventKind::sunset) continue;
+    const CivilMinute sets = zone.civil(e.at), starts = zone.civil(begins);
+    const bool same_minute = sets.date() == starts.date() && sets.hour() == starts.hour() &&
+                             sets.minute() == starts.minute();
+    return same_minute ? std::nullopt : std::optional(e.at);
+  }
+  return {};
+}
+
 }  // namespace duskleaf

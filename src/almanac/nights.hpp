@@ -1,5 +1,7 @@
 #pragma once
 
+#include <chrono>
+#include <optional>
 #include <vector>
 
 #include "almanac/site_year.hpp"
@@ -24,5 +26,14 @@ DarkestMoment darkest_moment(const SiteSky&, Ut from, Ut to);
 /// site's and the global ones.
 std::vector<Night> make_nights(const SiteSky&, const Zone&, const std::vector<Event>& events,
                                const std::vector<ClockChange>&, Date first, Date end);
+
+/// When the Moon is up in the night, in order.
+std::vector<TimeSpan> moon_up_spans(const Night&);
+
+/// The sunset that follows when something begins in daylight at a civil time (`from`, minutes after
+/// midnight; readings up to 12:00 are of the following date) in the evening of a date; empty where
+/// the Sun is down already, or sets within the minute that is printed, or does not set before the
+/// next noon, and for dates outside the year.
+std::optional<Ut> sunset_after(const SiteYear&, Date evening, std::chrono::minutes from);
 
 }  // namespace duskleaf

@@ -99,9 +99,14 @@ struct ConstellationEvening {
   bool on_equator;
   Horizontal mean_place;  // of its figure's stars
   FigureState state;
-  FigurePhase phase;                       // by the mean place's hour angle
+  FigurePhase phase;  // by the mean place's hour angle; where that place never rises, rising when
+                      // it is in the east, else sinking (never high)
+  bool mean_place_rises;                   // ever above -34' at this latitude
   std::optional<Ut> rises, highest, sets;  // nearest to the chart's moment, within the sidereal day
                                            // about it; empty where it does not
+                                           // (highest: where the mean place never rises)
+  bool half_never_sets;                    // half or more of its stars never set: only then may a
+                                           // page say "never sets" of an empty `sets`
   bool circumpolar;                        // all stars of its figure never set
   bool never_rises;                        // none ever rises
   std::array<bool, 12> evening_sight;  // months of the year (January first) in whose middle half of
@@ -149,8 +154,11 @@ struct EveningSky {
       fits;  // when this same sky stands there through the month, in order of date
 };
 
-/// The Moon as it leans in the site's sky: at the evening's clock time if it is up then, else at
-/// its highest while the Sun is down that night, else at its highest in the night's 24 hours.
+/// The Moon as it leans in the site's sky: at the evening's clock time if it is up then (so it
+/// agrees with the chart on its date); else at the nearest moment of the night at which it is up
+/// and the Sun is down (its rise or set, or the Sun's), so that the tilt changes little from one
+/// night to the next; else, near new Moon, at the nearest at which it is up. Where it is not up in
+/// the night's 24 hours, at the evening's clock time all the same.
 struct MoonLook {
   Ut at;
   double lit;

@@ -89,9 +89,11 @@ TEST(FigureTimes, CircumpolarNeverRisingAndHalfOfEach) {
   // Half never sets: the figure counts as risen all day, yet is not circumpolar.
   const FigureTimes half = figure_times({{0, pi}, {1, 1}}, direction(30, 50), 0);
   EXPECT_FALSE(half.circumpolar || half.never_rises || half.rises || half.sets);
+  EXPECT_TRUE(half.half_never_sets && polar.half_never_sets);
   // Less than half ever rises: it never does.
   const FigureTimes less = figure_times({{0, 1}, {1, 0}, {2, 0}}, direction(30, -50), 0);
   EXPECT_FALSE(less.rises || less.sets || less.never_rises);
+  EXPECT_FALSE(less.half_never_sets || never.half_never_sets);
 }
 
 TEST(ConstellationEvenings, AtTheInstantsHalfOfTheStarsAreUp) {
@@ -136,6 +138,38 @@ TEST(ConstellationEvenings, AtTheInstantsHalfOfTheStarsAreUp) {
       EXPECT_EQ(c.phase, phase) << figure.constellation;
     }
   }
+}
+
+// At 69.6 N Eridanus was "high" with its mean place below the horizon even in transit, and "never
+// set".
+TEST(ConstellationEvenings, WhatNeverQuiteRisesIsNeitherHighNorCircumpolar) {
+  const SiteYear year = year_of_site(test_place(69.6, 18.9, "Europe/Oslo"), 2027, 1, true);
+  int below = 0, around = 0;
+  for (const EveningSky& e : year.evenings)
+    for (const ConstellationEvening& c : e.constellations) {
+      const Figure& figure = figures()[static_cast<std::size_t>(c.figure)];
+      SCOPED_TRACE(constellations()[static_cast<std::size_t>(figure.constellation)].name);
+      EXPECT_EQ(c.highest.has_value(), c.mean_place_rises);
+      if (figure.constellation == constellation_index("Eri")) {
+        EXPECT_FALSE(c.mean_place_rises || c.half_never_sets);
+      }
+      if (!c.mean_place_rises) {
+        EXPECT_LT(c.mean_place.altitude.degrees(), 0);
+        EXPECT_EQ(c.phase, c.mean_place.azimuth.degrees() < 180 ? FigurePhase::rising
+                                                                : FigurePhase::sinking);
+        ++below;
+      }
+      if (c.circumpolar) {
+        EXPECT_TRUE(c.half_never_sets);
+      }
+      if (c.half_never_sets) {
+        EXPECT_FALSE(c.rises || c.sets);
+        ++around;
+      }
+      EXPECT_FALSE(c.never_rises && c.half_never_sets);
+    }
+  EXPECT_GT(below, 11);
+  EXPECT_GT(around, 11);
 }
 
 TEST(ConstellationEvenings, NearThePolesTheEquatorsFiguresCircleOrStayBelow) {

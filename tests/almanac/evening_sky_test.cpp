@@ -108,6 +108,39 @@ TEST(MoonLooks, OneForEachDateAtTheEveningsHourIfUp) {
   }
 }
 
+// From 13 to 16 March the Moon of the phase strip swung over, since the moment had leapt from the
+// evening to its highest place before dawn.
+TEST(MoonLooks, WhereItIsDownAtTheHourTheNearestMomentIsShown) {
+  const SiteYear& year = north();
+  const SiteSky sky(ephemeris_of({2027, 1}), year.place.observer, year.nights.front().from,
+                    year.nights.back().to);
+  int moved = 0;
+  for (std::size_t i = 0; i < 12; ++i) {
+    const CivilMinute clock = year.place.zone.civil(year.evenings[i].moment);
+    for (std::size_t d = 0; d < year.month_moons[i].size(); ++d) {
+      const MoonLook& look = year.month_moons[i][d];
+      if (look.up) continue;
+      const Night& n = night_of(year, 2027, static_cast<int>(i) + 1, static_cast<int>(d) + 1);
+      const bool late = clock.hour() < 12;
+      const Ut hour = year.place.zone.instant(
+          n.date + std::chrono::days(late ? 1 : 0),
+          std::chrono::hours(clock.hour()) + std::chrono::minutes(clock.minute()));
+      const double away = std::abs((look.at - hour).count());
+      bool seen_at_all = false;
+      for (Ut t = n.from; t < n.to; t = t + Days(1.0 / 288)) {
+        if (!sky.moon_up(t) || sky.altitude(Body::sun, t).degrees() > -0.84) continue;
+        seen_at_all = true;
+        EXPECT_GE(std::abs((t - hour).count()), away - 1e-5) << iso_date(n.date);
+      }
+      if (seen_at_all) {
+        EXPECT_LE(sky.altitude(Body::sun, look.at).degrees(), -0.83) << iso_date(n.date);
+        ++moved;
+      }
+    }
+  }
+  EXPECT_GT(moved, 100);
+}
+
 // Common practice: in the north's evening the waxing Moon is lit on the right, in the south's on
 // the left.
 TEST(MoonLooks, TheFirstQuarterIsLitTowardsTheSunset) {

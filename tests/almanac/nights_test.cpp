@@ -258,5 +258,36 @@ TEST(NightSpan, ALeapDayIsANightLikeOthers) {
   EXPECT_EQ(year.days.size(), 366u);
 }
 
+// A session that begins in daylight was printed without a word of it.
+TEST(SunsetAfter, OnlyWhereTheSessionBeginsBeforeIt) {
+  const SiteYear year = year_of_site(test_place(52.0, -0.5, "Europe/London"), 2027);
+  const Date june = make_date(2027, 6, 15);
+  const Ut sunset = night_of(year, 2027, 6, 15).sunset.value();
+  const CivilMinute clock = year.place.zone.civil(sunset);
+  const auto minute = std::chrono::hours(clock.hour()) + std::chrono::minutes(clock.minute());
+  using std::chrono::hours;
+  using std::chrono::minutes;
+  struct Row {
+    const char* label;
+    Date date;
+    minutes from;
+    bool daylight;
+  };
+  for (const Row& row : {Row{"an afternoon", june, hours(17), true},
+                         Row{"a minute before", june, minute - minutes(1), true},
+                         Row{"in the printed minute", june, minute, false},
+                         Row{"a minute after", june, minute + minutes(1), false},
+                         Row{"after midnight", june, hours(1), false},
+                         Row{"after sunrise, of the next date", june, hours(9), false},
+                         Row{"winter", make_date(2027, 12, 15), hours(20), false},
+                         Row{"outside the year", make_date(2028, 6, 15), hours(17), false}}) {
+    const std::optional<Ut> sets = sunset_after(year, row.date, row.from);
+    EXPECT_EQ(sets.has_value(), row.daylight) << row.label;
+    if (row.daylight && sets) {
+      EXPECT_EQ(*sets, sunset) << row.label;
+    }
+  }
+}
+
 }  // namespace
 }  // namespace duskleaf
