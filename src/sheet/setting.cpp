@@ -34,34 +34,50 @@ double Setter::paragraph(double x, double top, double width_mm, std::string_view
 double Setter::lead_in(double x, double top, double width_mm, std::string_view bold,
                        std::string_view rest, const Style& s, double leading) {
   const double pitch = s.size_pt * mm_per_pt * leading;
-  const double first_baseline = top + s.size_pt * mm_per_pt * 0.95;
-  const Style heavy = strong(s);
-  double x_first = x;
+  double baseline = top + s.size_pt * mm_per_pt * 0.95;
+  double line_x = x;
   if (!bold.empty()) {
-    left(x, first_baseline, bold, heavy);
-    x_first += width(bold, heavy) + width(" ", s);
+    const Style heavy = strong(s);
+    left(x, baseline, bold, heavy);
+    line_x += width(bold, heavy) + width(" ", s);
   }
-  // The first line is shorter by the lead-in: break it by itself, then the rest at full width.
-  const double first_room = x + width_mm - x_first;
-  std::vector<std::string> lines =
-      break_lines(context_.type, rest, s.face, s.size_pt, std::max(first_room, 1.0));
-  std::size_t count = 0;
-  if (!lines.empty() && !bold.empty() && width(lines.front(), s) > first_room) {
-    lines = break_lines(context_.type, rest, s.face, s.size_pt,
-                        width_mm);  // not even one word fits beside it
-    x_first = x;
-    count = 1;
-  } else if (!lines.empty() && !bold.empty() && lines.size() > 1) {
-    const std::string first = lines.front();
-    std::string_view tail = rest.substr(std::min(rest.size(), first.size()));
-    while (tail.starts_with(' ')) tail.remove_prefix(1);
-    lines = break_lines(context_.type, tail, s.face, s.size_pt, width_mm);
-    lines.insert(lines.begin(), first);
+  // Word by word: the first line is shorter by the lead-in, which break_lines cannot know.
+  int lines = 1;
+  std::string line;
+  const auto finish_line = [&] {
+    left(line_x, baseline, line, s);
+    line.clear();
+  };
+  for (std::size_t at = 0; at < rest.size();) {
+    const std::size_t end = std::min(rest.find_first_of(" \n", at), rest.size());
+    const std::string_view word = rest.substr(at, end - at);
+    const bool new_line = end < rest.size() && rest[end] == '\n';
+    at = end + 1;
+    if (!word.empty()) {
+      // A word wider than a whole line is cut, as break_lines does.
+      for (const std::string& piece :
+           break_lines(context_.type, word, s.face, s.size_pt, width_mm)) {
+        const std::string longer = line.empty() ? piece : line + " " + piece;
+        if (line_x + width(longer, s) <= x + width_mm + 0.01) {
+          line = longer;
+          continue;
+        }
+        finish_line();
+        line = piece;
+        line_x = x;
+        baseline += pitch;
+        ++lines;
+      }
+    }
+    if (new_line) {
+      finish_line();
+      line_x = x;
+      baseline += pitch;
+      ++lines;
+    }
   }
-  for (std::size_t i = 0; i < lines.size(); ++i, ++count)
-    left(count == 0 ? x_first : x, first_baseline + static_cast<double>(count) * pitch, lines[i],
-         s);
-  return static_cast<double>(std::max<std::size_t>(count, bold.empty() ? 0 : 1)) * pitch;
+  finish_line();
+  return lines * pitch;
 }
 
 double Setter::heading(double x, double top, double width_mm, std::string_view title,

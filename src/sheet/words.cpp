@@ -66,6 +66,12 @@ std::string Words::time(const CivilMinute& t) const {
   return time_of_day(std::chrono::minutes(t.hour() * 60 + t.minute()));
 }
 
+std::string Words::duration(double minutes) const {
+  const long rounded = std::lround(minutes);
+  return (*this)("time.duration", {{"hours", std::to_string(rounded / 60)},
+                                   {"minutes", fmt::format("{:02}", rounded % 60)}});
+}
+
 std::string Words::whole_hour(int hour) const {
   const int of_day = ((hour % 24) + 24) % 24;
   if (!clock_12_) return fmt::format("{:02}:00", of_day);

@@ -28,9 +28,10 @@ class Words {
 
   std::string time(const CivilMinute&) const;  // 21:30 or 9:30 pm
   std::string time_of_day(std::chrono::minutes after_midnight) const;
-  std::string whole_hour(int hour) const;    // 21:00 or 9 pm
-  std::string month_name(int month) const;   // March
-  std::string month_short(int month) const;  // Mar
+  std::string duration(double minutes) const;  // 8 h 04
+  std::string whole_hour(int hour) const;      // 21:00 or 9 pm
+  std::string month_name(int month) const;     // March
+  std::string month_short(int month) const;    // Mar
   std::string weekday_name(std::chrono::weekday) const;
   std::string weekday_short(std::chrono::weekday) const;  // two or three letters
   std::string day_month(Date) const;                      // 15 March

@@ -43,15 +43,31 @@ Choice choose(const BlockContext& c) {
   return choice;
 }
 
-std::string reason_text(const BlockContext& c, const NightReason& reason) {
+std::string reason_text(const BlockContext& c, const NightRank& night, const NightReason& reason) {
+  if (reason.key == "darkest-limit") return {};  // said once, beside the title
   const std::string key = "best-nights.reason-" + reason.key;
+  if (reason.key == "dark-hours")
+    return c.words(key, {{"n", c.words.duration(night.dark_minutes)}});
   if (reason.at) return c.words(key, {{"time", c.words.time(c.year.place.zone.civil(*reason.at))}});
   if (!reason.number) return c.words(key);
-  const double n = *reason.number;
-  if (reason.key == "planets-visible" && n < 0.5) return {};
-  if (reason.key == "planets-visible" && n < 1.5) return c.words("best-nights.reason-one-planet");
-  return c.words(key, {{"n", c.words.number(reason.key == "darkest-limit" ? -n : n,
-                                            reason.key == "dark-hours" ? 1 : 0)}});
+  if (reason.key == "planets-visible" && *reason.number < 0.5) return {};
+  if (reason.key == "planets-visible" && *reason.number < 1.5)
+    return c.words("best-nights.reason-one-planet");
+  return c.words(key, {{"n", c.words.number(*reason.number, 0)}});
+}
+
+std::string aside(const BlockContext& c, const Choice& choice, Angle dark_limit) {
+  const std::string aim_key[] = {"best-nights.aim-any", "best-nights.aim-dark",
+                                 "best-nights.aim-moon"};
+  std::string text = c.words(aim_key[static_cast<std::size_t>(choice.aim)]);
+  if (dark_limit.degrees() > -15)
+    text = c.words("best-nights.dark-limit",
+                   {{"aim", text}, {"n", c.words.number(-dark_limit.degrees(), 0)}});
+  if (choice.window)
+    text = c.words("best-nights.aside-window", {{"aim", text},
+                                                {"from", c.words.time_of_day(choice.window->from)},
+                                                {"to", c.words.time_of_day(choice.window->to)}});
+  return text;
 }
 
 }  // namespace
@@ -59,30 +75,33 @@ std::string reason_text(const BlockContext& c, const NightReason& reason) {
 double draw_best_nights(const BlockContext& c, const BlockOptions&, const Box& area,
                         std::vector<Mark>& out) {
   const Choice choice = choose(c);
-  const std::vector<NightRank> ranks =
+  std::vector<NightRank> ranks =
       rank_nights(c.ephemeris, c.year, choice.nights, choice.window, choice.aim);
   if (ranks.empty()) return 0;
   Setter set(c, out);
-  const std::string aim_key[] = {"best-nights.aim-any", "best-nights.aim-dark",
-                                 "best-nights.aim-moon"};
-  std::string aside = c.words(aim_key[static_cast<std::size_t>(choice.aim)]);
-  if (choice.window)
-    aside = c.words("best-nights.aside-window", {{"aim", aside},
-                                                 {"from", c.words.time_of_day(choice.window->from)},
-                                                 {"to", c.words.time_of_day(choice.window->to)}});
-  double y = area.y + set.heading(area.x, area.y, area.width, choice.title, aside);
+  double y = area.y + set.heading(area.x, area.y, area.width, choice.title,
+                                  aside(c, choice, ranks.front().dark_limit));
   const Style body = set.body();
+  const auto dark = [](const NightRank& r) { return r.dark_minutes >= 1; };
   if (std::none_of(ranks.begin(), ranks.end(),
-                   [](const NightRank& r) { return r.dark_minutes > 0 || r.moon_minutes > 0; }))
+                   [&](const NightRank& r) { return dark(r) || r.moon_minutes > 0; }))
     return y + set.paragraph(area.x, y, area.width, c.words("best-nights.none"), body) - area.y;
+  // Where darkness is asked for, a night without it is no good night; where none has any, the least
+  // bright one is named.
+  if (choice.aim != Aim::moon) {
+    if (std::any_of(ranks.begin(), ranks.end(), dark)) {
+      std::erase_if(ranks, [&](const NightRank& r) { return !dark(r); });
+    } else {
+      y += set.paragraph(area.x, y, area.width, c.words("best-nights.none-dark"), body);
+      ranks.resize(1);
+    }
+  }
   const std::size_t shown = std::min<std::size_t>(ranks.size(), 3);
   for (std::size_t i = 0; i < shown; ++i) {
     const NightRank& night = ranks[i];
     std::string reasons;
     for (const NightReason& reason : night.reasons) {
-      if (reason.key == "darkest-limit" && night.dark_minutes <= 0)
-        continue;  // says what "dark" meant: nothing was
-      const std::string text = reason_text(c, reason);
+      const std::string text = reason_text(c, night, reason);
       if (!text.empty()) reasons += (reasons.empty() ? "" : ", ") + text;
     }
     const std::string date =

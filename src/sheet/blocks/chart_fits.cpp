@@ -26,6 +26,10 @@ double draw_chart_fits(const BlockContext& c, const BlockOptions&, const Box& ar
     // A clock change shows as a mark before the first reading of the new clock.
     const bool changed = i > 0 && fit.clock.offset != evening.fits[i - 1].clock.offset;
     const double x = from + cell * (static_cast<double>(i) + 0.5);
+    if (fit.date == evening.date)  // the charts' own date
+      out.push_back(
+          Fill{Path::rectangle({x - cell * 0.46, area.y + 0.5, cell * 0.92, height - 1.0}),
+               c.theme.lap});
     set.centre(x, area.y + 3.4, c.words.day_month(fit.date), date_style);
     set.centre(x, area.y + 7.0, c.words.time(fit.clock), time_style);
     if (changed) {

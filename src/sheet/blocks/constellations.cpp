@@ -36,7 +36,8 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
     return a->mean_place.altitude > b->mean_place.altitude;
   });
   const Zone& zone = c.year.place.zone;
-  const Style cell = set.table();
+  Style cell = set.table();
+  if (c.order.clock_12) cell.size_pt = c.theme.table_pt;
   Style head = cell;
   head.ink = c.theme.soft;
   const bool wide = c.order.clock_12;
@@ -80,7 +81,7 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
       const double x = months_x + month_cell * static_cast<double>(m);
       if (row->evening_sight[m])
         out.push_back(Fill{Path::rectangle({x, baseline - 1.8, month_cell - 0.12, 1.8}),
-                           static_cast<int>(m) + 1 == month ? c.theme.blue : c.theme.nautical});
+                           static_cast<int>(m) + 1 == month ? c.theme.blue : c.theme.astronomical});
       else
         out.push_back(
             Fill{Path::rectangle({x, baseline - 0.2, month_cell - 0.12, 0.2}), c.theme.faint});

@@ -53,21 +53,25 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
     const Style style{Face::light, 17, c.theme.blue};
     set.left(area.x, area.y + 6.2, title, style);
     const double used = set.width(title, style);
-    set.left(area.x + used + 3, area.y + 6.2, c.words("masthead.back"),
-             {Face::italic, c.theme.body_pt, c.theme.soft});
-    set.right(area.right(), area.y + 6.2,
-              c.site.masthead.group.empty() ? c.site.name : c.site.masthead.group,
-              {Face::bold, 9, c.theme.black});
+    const std::string& group = c.site.masthead.group.empty() ? c.site.name : c.site.masthead.group;
+    const Style group_style{Face::bold, 9, c.theme.black},
+        quiet{Face::italic, c.theme.body_pt, c.theme.soft};
+    set.right(area.right(), area.y + 6.2, group, group_style);
+    // A long name takes the place of the explanation.
+    const double room = area.width - used - set.width(group, group_style) - 9;
+    if (set.width(c.words("masthead.back"), quiet) <= room)
+      set.left(area.x + used + 3, area.y + 6.2, c.words("masthead.back"), quiet);
     return 8.0;
   }
 
   const double height = std::min(area.height, 20.0);
   double right = area.right();
   if (!c.site.masthead.link.empty()) {
-    const Box square{right - height, area.y, height, height};
-    out.push_back(Fill{qr_code(c.site.masthead.link, square), c.theme.black});
+    const double size = height - 2.5;
+    const Box square{right - size, area.y, size, size};
+    out.push_back(Fill{qr_code(c.site.masthead.link, square), c.theme.blue});
     out.push_back(Link{square, c.site.masthead.link});
-    right -= height + 3;
+    right -= size + 3;
   }
   if (!c.site.masthead.logo.empty()) {
     std::ifstream file(c.site.masthead.logo, std::ios::binary);

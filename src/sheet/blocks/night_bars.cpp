@@ -87,7 +87,7 @@ void draw_bar(const BlockContext& c, const Axis& axis, const Row& row, std::vect
   }
   // The Moon's time up: a light band whose thickness follows the lit part, with edges so that it
   // shows on every tone.
-  const double thick = height * (0.16 + 0.50 * row.night.moon_lit);
+  const double thick = height * (0.16 + 0.36 * row.night.moon_lit);
   for (const TimeSpan& up : moon_spans(row.night))
     for (const ToneSpan& tone : tone_spans(row.night)) {
       if (tone.tone == SkyTone::day) continue;
@@ -111,24 +111,21 @@ void draw_bar(const BlockContext& c, const Axis& axis, const Row& row, std::vect
 
 /// What a row says on its bar when the night is out of the ordinary.
 std::string bar_note(const BlockContext& c, const Night& night) {
-  for (const char* key : {"sun-up-all-night", "short-date", "clock-change", "no-civil-dark"})
+  for (const char* key : {"sun-up-all-night", "short-date", "no-civil-dark"})
     if (std::find(night.notes.begin(), night.notes.end(), key) != night.notes.end())
       return c.words("night-note." + std::string(key));
   return {};
-}
-
-std::string duration(const BlockContext& c, double total_minutes) {
-  const long rounded = std::lround(total_minutes);
-  return rounded == 0
-             ? std::string("–")
-             : c.words("night-bars.duration", {{"hours", std::to_string(rounded / 60)},
-                                               {"minutes", fmt::format("{:02}", rounded % 60)}});
 }
 
 double dark_minutes(const std::vector<TimeSpan>& spans) {
   double sum = 0;
   for (const TimeSpan& span : spans) sum += (span.to - span.from).count() * 1440.0;
   return sum;
+}
+
+std::string dark_hours(const BlockContext& c, const Night& night) {
+  const double total = dark_minutes(night.dark_or_darkest);
+  return total < 0.5 ? std::string("–") : c.words.duration(total);
 }
 
 /// Moon cells: a time where it happens between sunset and sunrise, else whether the Moon is up at
@@ -144,6 +141,30 @@ std::string moon_cell(const BlockContext& c, const Night& night, bool rise) {
     if (event.kind == EventKind::moonset) up_at_end = false;
   }
   return (rise ? night.moon_up_at_dusk : up_at_end) ? c.words("night-bars.up") : "–";
+}
+
+/// A clock change within the night: a line across its bar with the step, "+1 h", beside it.
+void mark_clock_change(const BlockContext& c, Setter& set, const Axis& axis, const Row& row,
+                       std::vector<Mark>& out) {
+  for (const ClockChange& change : c.year.clock_changes) {
+    if (change.at < row.night.from || !(change.at < row.night.to)) continue;
+    const double hours =
+        std::chrono::duration<double, std::ratio<3600>>(change.after - change.before).count();
+    const std::string step =
+        (hours > 0 ? "+" : "") +
+        c.words("night-bars.hours",
+                {{"n", c.words.number(hours, hours == std::round(hours) ? 0 : 1)}});
+    Style style = set.table();
+    style.face = Face::condensed_bold;
+    const double x =
+        axis.at(clock_hours(c.year.place.zone, row.night, change.at - Days(Seconds(1))));
+    const double width = set.width(step, style) + 1.2;
+    out.push_back(
+        Fill{Path::rectangle({x - width, row.top + 0.15, width, row.height - 0.3}), c.theme.paper});
+    set.left(x - width + 0.6,
+             row.top + row.height / 2 + c.type.cap_height(style.face, style.size_pt) / 2, step,
+             style);
+  }
 }
 
 /// Neighbouring rows with the same note share one label.
@@ -252,7 +273,16 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   // Hour marks behind the bars.
   const double bars_top = top + head, bars_bottom = bars_top + pitch * rows;
   const int step = axis.to - axis.from > 16 ? 3 : axis.to - axis.from > 9 ? 2 : 1;
-  double label_end = 0;
+  std::vector<std::pair<double, double>> labels;  // taken: left and right ends
+  const auto label = [&](int hour, const std::string& words) {
+    const double width = set.width(words, head_style);
+    const double from = std::clamp(axis.at(hour) - width / 2, axis.x, area.right() - width);
+    for (const auto& [taken_from, taken_to] : labels)
+      if (from < taken_to + 1 && from + width > taken_from - 1) return;
+    set.left(from, top + 5.2, words, head_style);
+    labels.emplace_back(from, from + width);
+  };
+  label(24, c.words("night-bars.midnight"));
   for (int hour = static_cast<int>(std::ceil(axis.from)); hour <= static_cast<int>(axis.to);
        ++hour) {
     const bool named = hour % step == 0;
@@ -262,14 +292,7 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
                          c.theme.faint,
                          {},
                          false});
-    if (!named) continue;
-    const std::string label =
-        hour == 24 ? c.words("night-bars.midnight") : c.words.whole_hour(hour);
-    const double half = set.width(label, head_style) / 2;
-    const double label_x = std::clamp(at - half, axis.x - 1, area.right() - 2 * half);
-    if (label_x < label_end + 1) continue;
-    set.left(label_x, top + 5.2, label, head_style);
-    label_end = label_x + 2 * half;
+    if (named && hour != 24) label(hour, c.words.whole_hour(hour));
   }
 
   std::set<Date> session_nights;
@@ -319,16 +342,18 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
     if (i < looks.size())
       draw_moon({moon_x, y + pitch / 2}, std::min(1.45, pitch * 0.42), looks[i].lit,
                 looks[i].bright_limb_from_zenith, c.theme, out);
-    set.right(dark_right, baseline, duration(c, dark_minutes(night.dark_or_darkest)),
-              set.strong(cell));
+    set.right(dark_right, baseline, dark_hours(c, night), set.strong(cell));
     draw_bar(c, axis, row, out);
+    mark_clock_change(c, set, axis, row, out);
   }
   label_bars(c, set, axis, nights, bars_top, pitch, out);
 
   // The key under the bars, and what the dark hours count.
   const double key_y = bars_bottom + 1.2, key_baseline = key_y + 2.5;
   const double key_width = draw_key(c, set, head_style, area.right(), key_y, out);
-  set.fitted(area.x, key_baseline, foot_note(c, nights), head_style, area.width - key_width - 3);
+  std::string foot_words = foot_note(c, nights);
+  if (!session_nights.empty()) foot_words.append(" ").append(c.words("night-bars.own"));
+  set.fitted(area.x, key_baseline, foot_words, head_style, area.width - key_width - 3);
   return bars_bottom + foot - area.y;
 }
 

@@ -4,6 +4,41 @@
 #include "sheet/setting.hpp"
 
 namespace duskleaf {
+namespace {
+
+/// "Fri 5 March", or "Fri 5, 12, 19 March" where all are the same weekday.
+std::string dates_text(const BlockContext& c, const std::vector<Date>& dates) {
+  const bool one_weekday = std::all_of(dates.begin(), dates.end(), [&](Date d) {
+    return weekday_of(d) == weekday_of(dates.front());
+  });
+  std::string text;
+  for (std::size_t i = 0; i < dates.size(); ++i) {
+    const std::string day =
+        i + 1 == dates.size() ? c.words.day_month(dates[i]) : std::to_string(day_of(dates[i]));
+    const std::string weekday = c.words.weekday_short(weekday_of(dates[i]));
+    text += (i == 0 ? "" : ", ") +
+            (one_weekday && i > 0
+                 ? day
+                 : c.words("date.weekday-day-month", {{"weekday", weekday}, {"date", day}}));
+  }
+  return text;
+}
+
+/// "(the Sun sets at 21:17)" where a session begins before the first date's sunset.
+std::string daylight(const BlockContext& c, const Session& session,
+                     const std::vector<Date>& dates) {
+  if (!session.from || *session.from < std::chrono::hours(12)) return {};
+  const Zone& zone = c.year.place.zone;
+  for (const Night& night : c.year.nights) {
+    if (night.date != dates.front()) continue;
+    if (night.sun == Presence::up_throughout) return c.words("sessions.sun-up");
+    if (night.sunset && *night.sunset > zone.instant(night.date, *session.from))
+      return c.words("sessions.sunset", {{"time", c.words.time(zone.civil(*night.sunset))}});
+  }
+  return {};
+}
+
+}  // namespace
 
 // The group's own evenings of the month, when and where, and its own words.
 double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area,
@@ -34,13 +69,9 @@ double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area
   for (const Entry& entry : entries) {
     if (std::find(seen.begin(), seen.end(), entry.session) != seen.end()) continue;
     seen.push_back(entry.session);
-    std::string dates;
+    std::vector<Date> dates;
     for (const Entry& other : entries)
-      if (other.session == entry.session)
-        dates += (dates.empty() ? "" : ", ") +
-                 c.words("date.weekday-day-month",
-                         {{"weekday", c.words.weekday_short(weekday_of(other.date))},
-                          {"date", c.words.day_month(other.date)}});
+      if (other.session == entry.session) dates.push_back(other.date);
     std::string rest;
     const Session& s = *entry.session;
     if (s.from && s.to)
@@ -48,10 +79,11 @@ double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area
                      {{"from", c.words.time_of_day(*s.from)}, {"to", c.words.time_of_day(*s.to)}});
     else if (s.from)
       rest = c.words("sessions.from", {{"from", c.words.time_of_day(*s.from)}});
+    if (const std::string light = daylight(c, s, dates); !light.empty()) rest += " " + light;
     if (!s.where.empty()) rest += (rest.empty() ? "" : ", ") + s.where;
     if (!rest.empty()) rest += ". ";
     if (!s.text.empty()) rest += s.text;
-    y += set.lead_in(area.x, y, area.width, dates, rest, body) + 0.5;
+    y += set.lead_in(area.x, y, area.width, dates_text(c, dates), rest, body) + 0.5;
   }
   if (note != c.site.notes.end())
     y += set.paragraph(area.x, y, area.width, note->second, body) + 0.5;
