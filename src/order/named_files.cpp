@@ -4,6 +4,7 @@
 #include <filesystem>
 #include <fmt/format.h>
 #include <png.h>
+#include <set>
 
 #include "order/site_reader.hpp"
 
@@ -21,6 +22,37 @@ std::string read_named(const std::string& path, const Location& where, std::size
   } catch (const FileError& error) {
     throw OrderError(where, error.what(), std::string(expected));
   }
+}
+
+std::size_t number_at(std::string_view bytes, std::size_t at, std::size_t length) {
+  std::size_t number = 0;
+  for (const char c : bytes.substr(at, length))
+    number = number << 8U | static_cast<unsigned char>(c);
+  return number;
+}
+
+/// What is wrong with a font by its table directory (OpenType 1.9, "Organization of an OpenType
+/// font"): a file cut short in copying, or one of another kind. Empty when nothing is.
+std::string font_trouble(std::string_view bytes) {
+  const std::string_view begin = bytes.substr(0, 4);
+  if (begin == "ttcf") return "this is a collection of several fonts";
+  if (begin != std::string_view("\0\1\0\0", 4) && begin != "OTTO" && begin != "true")
+    return "this is not a font";
+  constexpr std::size_t head = 12, entry = 16;
+  const std::size_t tables = bytes.size() < head ? 0 : number_at(bytes, 4, 2);
+  if (tables == 0 || bytes.size() < head + tables * entry) return "the font is cut short";
+  std::set<std::string_view> found;
+  for (std::size_t i = 0; i < tables; ++i) {
+    const std::size_t at = head + i * entry;
+    if (number_at(bytes, at + 8, 4) + number_at(bytes, at + 12, 4) > bytes.size())
+      return "the font is cut short";
+    found.insert(bytes.substr(at, 4));
+  }
+  for (const std::string_view needed : {"cmap", "head", "hhea", "hmtx", "maxp"})
+    if (!found.contains(needed)) return fmt::format("the font lacks its table '{}'", needed);
+  const bool outlines = (found.contains("glyf") && found.contains("loca")) ||
+                        found.contains("CFF ") || found.contains("CFF2");
+  return outlines ? "" : "the font has no outlines";
 }
 
 }  // namespace
@@ -42,6 +74,7 @@ void check_logo(const std::string& path, const Location& where) {
     png_image_free(&image);
     throw OrderError(where, fmt::format("{}: {}", path, what), std::string(expected));
   };
+  if (bytes.empty()) refuse("the file is empty");
   if (png_image_begin_read_from_memory(&image, bytes.data(), bytes.size()) == 0)
     refuse(fmt::format("not a whole PNG picture ({})", image.message));
   if (image.width > largest_logo_side || image.height > largest_logo_side)
@@ -57,9 +90,8 @@ void check_font(const std::string& path, const Location& where) {
   constexpr std::string_view expected =
       "expected a TrueType or OpenType font file, named relative to the order";
   const std::string bytes = read_named(path, where, largest_font_bytes, expected);
-  const std::string_view begin = std::string_view(bytes).substr(0, 4);
-  if (begin != std::string_view("\0\1\0\0", 4) && begin != "OTTO" && begin != "true")
-    throw OrderError(where, fmt::format("{}: this is not a font", path), std::string(expected));
+  if (const std::string trouble = font_trouble(bytes); !trouble.empty())
+    throw OrderError(where, fmt::format("{}: {}", path, trouble), std::string(expected));
 }
 
 }  // namespace duskleaf

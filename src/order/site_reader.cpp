@@ -77,6 +77,8 @@ std::vector<SkylinePoint> read_skyline(const YamlValue& value) {
   return points;
 }
 
+constexpr std::size_t longest_link = 300;  // bytes
+
 Masthead read_masthead(const YamlValue& value, SiteContext& context) {
   const MapReader map(value, "a masthead", {"group", "contact", "link", "logo"});
   Masthead masthead;
@@ -87,7 +89,12 @@ Masthead read_masthead(const YamlValue& value, SiteContext& context) {
     masthead.link = read_text(*link, "link");
     const bool known = masthead.link.starts_with("https://") ||
                        masthead.link.starts_with("http://") || masthead.link.starts_with("mailto:");
-    if (!known || masthead.link.find(' ') != std::string::npos || masthead.link.size() > 300)
+    if (masthead.link.size() > longest_link)
+      throw OrderError(
+          link->at, fmt::format("link has {} characters", masthead.link.size()),
+          fmt::format("expected at most {}, for a code that phones can read from paper",
+                      longest_link));
+    if (!known || masthead.link.find_first_of(" \n\t") != std::string::npos)
       throw OrderError(
           link->at, fmt::format("link is {}", described(*link)),
           "expected an address that begins with https://, http:// or mailto:, without spaces");

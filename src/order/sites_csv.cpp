@@ -118,11 +118,13 @@ YamlValue skyline_value(const Cell& cell) {
 
 YamlValue cell_value(const std::string& key, const Cell& cell) {
   if (key == "skyline") return skyline_value(cell);
-  if (key == "chart_hour")
-    if (std::vector<YamlValue> hours = words_of(cell); hours.size() > 1)
+  if (key == "chart_hour")  // two words are no list of twelve: "9 pm" is a wrong time of day
+    if (std::vector<YamlValue> hours = words_of(cell); hours.size() > 2)
       return {YamlValue::Kind::list, cell.at, "", std::move(hours), {}};
   return scalar_value(cell.text, cell.at);
 }
+
+bool is_empty(const Cell& cell) { return cell.text.find_first_not_of(' ') == std::string::npos; }
 
 void put(YamlValue& site, const Cell& column, YamlValue value) {
   const std::size_t dot = column.text.find('.');
@@ -182,16 +184,17 @@ std::vector<Site> read_sites_csv(const std::string& path, const Location& named_
   std::vector<Site> sites;
   while (!reader.at_end()) {
     const Row row = reader.next_row();
-    if (row.size() == 1 && row[0].text.empty()) continue;
+    const bool blank = std::all_of(row.begin(), row.end(), is_empty);
+    if (blank && (row.size() == 1 || row.size() == header.size()))
+      continue;  // spreadsheets leave rows of commas at the end
     if (row.size() != header.size())
       throw OrderError(row[0].at, fmt::format("the row has {} cells", row.size()),
                        fmt::format("expected {}, as in the header", header.size()));
     YamlValue site{YamlValue::Kind::map, row[0].at, "", {}, {}};
     for (std::size_t i = 0; i < row.size(); ++i) {
-      const bool empty = row[i].text.find_first_not_of(' ') == std::string::npos;
       put(site, header[i],
-          empty ? YamlValue{YamlValue::Kind::null, row[i].at, "", {}, {}}
-                : cell_value(header[i].text, row[i]));
+          is_empty(row[i]) ? YamlValue{YamlValue::Kind::null, row[i].at, "", {}, {}}
+                           : cell_value(header[i].text, row[i]));
     }
     sites.push_back(read_site(site, context));
   }

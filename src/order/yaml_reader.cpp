@@ -65,6 +65,7 @@ class TreeBuilder : public YAML::EventHandler {
                 const std::string& value) override {
     refuse_tag(mark, tag);
     refuse_anchor(mark, anchor);
+    refuse_open_quote(mark);
     put({YamlValue::Kind::scalar, locate(mark), value, {}, {}});
   }
   void OnSequenceStart(const YAML::Mark& mark, const std::string& tag, YAML::anchor_t anchor,
@@ -93,6 +94,27 @@ class TreeBuilder : public YAML::EventHandler {
     if (!tag.empty() && tag != "?" && tag != "!")
       throw OrderError(locate(mark), fmt::format("a YAML tag ({}) is not read here", tag),
                        "leave it out");
+  }
+  /// yaml-cpp takes the end of the file for the closing quote.
+  void refuse_open_quote(const YAML::Mark& mark) const {
+    if (mark.is_null() || mark.line < 0 || static_cast<std::size_t>(mark.line) >= lines_.size())
+      return;
+    auto line = static_cast<std::size_t>(mark.line);
+    auto at = static_cast<std::size_t>(std::max(mark.column, 0));
+    if (at >= lines_[line].size()) return;
+    const char quote = lines_[line][at];
+    if (quote != '"' && quote != '\'') return;
+    for (++at; line < lines_.size(); ++line, at = 0)
+      for (; at < lines_[line].size(); ++at) {
+        const char c = lines_[line][at];
+        const bool doubled = quote == '\'' && lines_[line].substr(at, 2) == "''";
+        if (doubled || (quote == '"' && c == '\\'))
+          ++at;
+        else if (c == quote)
+          return;
+      }
+    throw OrderError(locate(mark), "a quote is opened and not closed",
+                     "close it with another quote");
   }
   /// An empty value's mark is that of the next token, which may stand lines below: its key's place
   /// helps more.

@@ -64,7 +64,8 @@ MapReader::MapReader(const YamlValue& value, std::string what, std::vector<std::
                                                      std::min<std::size_t>(3, keys.size()))})));
   for (const YamlEntry& entry : value.entries) {
     if (std::find(keys.begin(), keys.end(), entry.key) != keys.end()) continue;
-    const std::string near = nearest_name(entry.key, keys);
+    const bool number = entry.key.find_first_not_of("0123456789") == std::string::npos;
+    const std::string near = number ? "" : nearest_name(entry.key, keys);  // 13 is not "like" 1
     throw OrderError(entry.key_at, fmt::format("unknown key '{}' in {}", entry.key, what_),
                      near.empty() ? fmt::format("expected {}", listed(keys))
                                   : fmt::format("did you mean '{}'?", near));
@@ -87,7 +88,8 @@ const YamlValue& MapReader::require(std::string_view key) const {
   if (found == nullptr)
     throw OrderError(value_.at, fmt::format("{} has no '{}'", what_, key), "this key is needed");
   if (found->value.kind == YamlValue::Kind::null)
-    throw OrderError(found->key_at, fmt::format("'{}' has no value", key), "this key is needed");
+    throw OrderError(found->value.at,  // of an empty cell its own place, not its column's header
+                     fmt::format("'{}' has no value", key), "this key is needed");
   return found->value;
 }
 
@@ -99,6 +101,12 @@ const Location& MapReader::where(std::string_view key) const {
 std::string read_text(const YamlValue& value, std::string_view what) {
   const std::string& text = scalar(value, what, "text");
   if (text.find_first_not_of(" \n") == std::string::npos) refuse(value, what, "some text");
+  for (const char c : text)  // YAML's escapes can write what the file itself may not hold
+    if ((c >= 0 && c < ' ' && c != '\n' && c != '\t') || c == 0x7F)
+      throw OrderError(
+          value.at,
+          fmt::format("{} has the control character 0x{:02X}", what, static_cast<unsigned>(c)),
+          "plain text was expected");
   return text;
 }
 

@@ -90,6 +90,23 @@ INSTANTIATE_TEST_SUITE_P(
             "o.yaml:10:24: when is 'fist fryday'; expected 'first friday' to 'fourth friday', "
             "'last friday', "
             "'every friday', or a list of dates (did you mean 'first friday'?)"},
+        Row{"a link too long for a code",
+            with_site_lines("    masthead: { link: \"https://" + std::string(293, 'a') + "\" }\n"),
+            "o.yaml:10:23: link has 301 characters; expected at most 300, for a code that phones "
+            "can read from paper"},
+        Row{"an escaped control character", with_line("    name", "    name: \"Bell \\a\""),
+            "o.yaml:6:11: name has the control character 0x07; plain text was expected"},
+        Row{"a note for a thirteenth month", with_site_lines("    notes: { 13: \"x\" }\n"),
+            "o.yaml:10:14: unknown key '13' in notes; expected 1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11 "
+            "or 12"},
+        Row{"a quote left open at the end", with_site_lines("    chart_hour: \"21:30\n"),
+            "o.yaml:10:17: a quote is opened and not closed; close it with another quote"},
+        Row{"a single quote left open at the end", with_site_lines("    elevation: 'it''s\n\n"),
+            "o.yaml:10:16: a quote is opened and not closed; close it with another quote"},
+        Row{"quotes that need no closing, or close lines below",
+            with_site_lines("    notes:\n      3: |\n        \"Come\n      4: \"a \\\"\n        "
+                            "b\"\n      5: it's\n"),
+            "no error"},
         Row{"a link without its scheme",
             with_site_lines("    masthead: { link: reed-lake.example }\n"),
             "o.yaml:10:23: link is 'reed-lake.example'; expected an address that begins with "

@@ -55,6 +55,8 @@ TEST(NamedFiles, MissingOrBrokenLogoIsRefused) {
   const std::string logo = folder.file("logo.png"), at = order + ":10:23: " + logo + ": ";
   const std::string note = "; expected a PNG picture, named relative to the order";
   EXPECT_EQ(error_of(order), at + "there is no such file" + note);
+  folder.write("logo.png", "");
+  EXPECT_EQ(error_of(order), at + "the file is empty" + note);
   folder.write("logo.png", "GIF89a");
   EXPECT_THAT(error_of(order), testing::AllOf(testing::StartsWith(at + "not a whole PNG picture ("),
                                               testing::EndsWith(note)));
@@ -76,6 +78,45 @@ TEST(NamedFiles, MissingOrBrokenFontIsRefused) {
   EXPECT_EQ(error_of(order), at + "there is no such file" + note);
   folder.write("b.ttf", "not a font");
   EXPECT_EQ(error_of(order), at + "this is not a font" + note);
+  folder.write("b.ttf", "ttcf and more");
+  EXPECT_EQ(error_of(order), at + "this is a collection of several fonts" + note);
+}
+
+/// A font's table directory (OpenType 1.9) with empty tables of these names; the last may claim
+/// more bytes than there are.
+std::string font_bytes(const std::vector<std::string>& tables, char last_length = 0) {
+  std::string bytes("\0\1\0\0\0", 5);
+  bytes += static_cast<char>(tables.size());
+  bytes.append(6, '\0');
+  for (std::size_t i = 0; i < tables.size(); ++i) {
+    bytes += tables[i];
+    bytes.append(11, '\0');
+    bytes += i + 1 < tables.size() ? '\0' : last_length;
+  }
+  return bytes;
+}
+
+// The bug: proof passed a font cut short in copying, and press failed after it had made the folder.
+TEST(NamedFiles, FontThatIsCutShortIsRefused) {
+  const ScratchFolder folder;
+  const std::string order =
+      folder.write("o.yaml", with_head("year: 2027\nfonts: { bold: b.ttf }\n"));
+  const std::string at = order + ":2:16: " + folder.file("b.ttf") + ": ";
+  const std::string note =
+      "; expected a TrueType or OpenType font file, named relative to the order";
+  const std::vector<std::string> all = {"cmap", "glyf", "head", "hhea", "hmtx", "loca", "maxp"};
+  folder.write("b.ttf", font_bytes(all));
+  EXPECT_EQ(read_order(order).fonts.bold, folder.file("b.ttf"));
+  folder.write("b.ttf", font_bytes(all).substr(0, 40));
+  EXPECT_EQ(error_of(order), at + "the font is cut short" + note);
+  folder.write("b.ttf", std::string("\0\1\0\0", 4));
+  EXPECT_EQ(error_of(order), at + "the font is cut short" + note);
+  folder.write("b.ttf", font_bytes(all, 127));
+  EXPECT_EQ(error_of(order), at + "the font is cut short" + note);
+  folder.write("b.ttf", font_bytes({"cmap", "glyf", "head", "hhea", "loca", "maxp"}));
+  EXPECT_EQ(error_of(order), at + "the font lacks its table 'hmtx'" + note);
+  folder.write("b.ttf", font_bytes({"cmap", "head", "hhea", "hmtx", "maxp"}));
+  EXPECT_EQ(error_of(order), at + "the font has no outlines" + note);
 }
 
 TEST(SitesCsv, RowsBecomeSites) {
@@ -140,10 +181,23 @@ INSTANTIATE_TEST_SUITE_P(
         CsvRow{"a skyline without colons", header + "a,A,1,2,UTC,0:3 90\n",
                ":2:17: a point of the skyline is '90'; expected azimuth:altitude in degrees, such "
                "as 90:8"},
-        CsvRow{"no name", header + "a,,1,2,UTC,\n",
-               ":1:4: 'name' has no value; this key is needed"},
+        CsvRow{"no name: the cell's place, not its header's", header + "a,,1,2,UTC,\n",
+               ":2:3: 'name' has no value; this key is needed"},
+        CsvRow{"a chart hour of two words",
+               "id,name,latitude,longitude,time_zone,chart_hour\na,A,1,2,UTC,9 pm\n",
+               ":2:13: chart_hour is '9 pm'; expected a time of day from 00:00 to 23:59, dusk, or "
+               "a list of twelve of them"},
         CsvRow{"not UTF-8", "id,n\xE9\n",
                ":1:5: byte 0xE9 is not UTF-8; save the file as UTF-8 text"}));
+
+// The bug: the rows of commas that spreadsheets leave at the end were refused as sites without id.
+TEST(SitesCsv, RowsOfEmptyCellsAreNoSites) {
+  const ScratchFolder folder;
+  folder.write("s.csv", header + "a,A,1,2,UTC,\n,,,,,\n , ,,,,\n");
+  const std::string path = folder.write(
+      "o.yaml", "year: 2027\npublications: [{ template: monthly-handout }]\nsites_from: s.csv\n");
+  EXPECT_EQ(read_order(path).sites.size(), 1u);
+}
 
 TEST(SitesCsv, DuplicateIdNamesBothPlaces) {
   const ScratchFolder folder;
