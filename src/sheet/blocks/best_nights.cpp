@@ -47,7 +47,7 @@ std::string reason_text(const BlockContext& c, const NightRank& night, const Nig
   if (reason.key == "darkest-limit") return {};  // said once, beside the title
   const std::string key = "best-nights.reason-" + reason.key;
   if (reason.key == "dark-hours")
-    return c.words(key, {{"n", c.words.duration(night.dark_minutes)}});
+    return c.words(key, {{"n", c.words.duration(night.dark_rounded)}});
   if (reason.at) return c.words(key, {{"time", c.words.time(c.year.place.zone.civil(*reason.at))}});
   if (!reason.number) return c.words(key);
   if (reason.key == "planets-visible" && *reason.number < 0.5) return {};

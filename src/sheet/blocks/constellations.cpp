@@ -73,10 +73,11 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
               cell);
     set.right(highest_x, baseline, row->highest ? c.words.time(zone.civil(*row->highest)) : "–",
               cell);
-    set.right(
-        sets_x, baseline,
-        row->sets ? c.words.time(zone.civil(*row->sets)) : c.words("constellations.never-sets"),
-        cell);
+    set.right(sets_x, baseline,
+              row->sets              ? c.words.time(zone.civil(*row->sets))
+              : row->half_never_sets ? c.words("constellations.never-sets")
+                                     : std::string("–"),
+              cell);
     for (std::size_t m = 0; m < 12; ++m) {
       const double x = months_x + month_cell * static_cast<double>(m);
       if (row->evening_sight[m])

@@ -6,19 +6,38 @@
 namespace duskleaf {
 namespace {
 
-std::string when_seen(const BlockContext& c, const PlanetMonth& planet) {
+std::string short_date(const BlockContext& c, Date d) {
+  return c.words("date.day-month",
+                 {{"day", std::to_string(day_of(d))}, {"month", c.words.month_short(month_of(d))}});
+}
+
+/// "evenings, until 22 Mar": the part of the night, and the dates where it does not last all month.
+std::string with_dates(const BlockContext& c, const std::string& key,
+                       const std::optional<Date>& first_seen,
+                       const std::optional<Date>& last_seen) {
   const auto [year, month] = c.year.span.month(c.month_index);
-  const Date first = make_date(year, month, 1),
-             last = make_date(year, month, days_in_month(year, month));
-  PlanetSight sight = planet.sight;
-  if (sight == PlanetSight::not_visible && planet.first_evening)
-    sight = PlanetSight::evening;  // on other evenings than the 15th
+  const bool late = first_seen && day_of(*first_seen) > 1;
+  const bool early = last_seen && day_of(*last_seen) < days_in_month(year, month);
+  const std::string& part = c.words(key);
+  if (late && early)
+    return c.words(
+        "planets.between",
+        {{"part", part}, {"from", short_date(c, *first_seen)}, {"to", short_date(c, *last_seen)}});
+  if (late) return c.words("planets.from", {{"part", part}, {"from", short_date(c, *first_seen)}});
+  if (early) return c.words("planets.until", {{"part", part}, {"to", short_date(c, *last_seen)}});
+  return part;
+}
+
+std::string when_seen(const BlockContext& c, const PlanetMonth& planet) {
   std::string text;
-  switch (sight) {
+  switch (planet.sight) {
     case PlanetSight::not_visible:
       return c.words(planet.optics_only ? "planets.too-faint" : "planets.not-visible");
     case PlanetSight::morning:
-      text = c.words("planets.morning");
+      text = with_dates(c, "planets.morning", planet.first_morning, planet.last_morning);
+      break;
+    case PlanetSight::evening:
+      text = with_dates(c, "planets.evening", planet.first_evening, planet.last_evening);
       break;
     case PlanetSight::all_night:
       text = c.words("planets.all-night");
@@ -26,23 +45,6 @@ std::string when_seen(const BlockContext& c, const PlanetMonth& planet) {
     case PlanetSight::evening_and_morning:
       text = c.words("planets.evening-and-morning");
       break;
-    case PlanetSight::evening:
-      text = c.words("planets.evening");
-      break;
-  }
-  if (sight == PlanetSight::evening && planet.first_evening && planet.last_evening) {
-    const bool late = *planet.first_evening > first, early = *planet.last_evening < last;
-    const auto day = [&](Date d) {
-      return c.words("date.day-month", {{"day", std::to_string(day_of(d))},
-                                        {"month", c.words.month_short(month_of(d))}});
-    };
-    if (late && early)
-      text = c.words("planets.evening-between",
-                     {{"from", day(*planet.first_evening)}, {"to", day(*planet.last_evening)}});
-    else if (late)
-      text = c.words("planets.evening-from", {{"from", day(*planet.first_evening)}});
-    else if (early)
-      text = c.words("planets.evening-until", {{"to", day(*planet.last_evening)}});
   }
   return planet.optics_only ? c.words("planets.with-optics", {{"when", text}}) : text;
 }
@@ -70,10 +72,14 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
     const double baseline = y + 2.6;
     set.left(area.x, baseline, c.words("body." + std::string(body_name(planet.planet))),
              set.strong(cell));
-    set.fitted(when_x, baseline, when_seen(c, planet), cell,
-               best_x - (c.order.clock_12 ? 11.5 : 9) - when_x);
+    const double best_room =
+        (c.order.clock_12 ? 11.5 : 9) + (planet.best && day_of(planet.best_date) != 15 ? 9.5 : 0);
+    set.fitted(when_x, baseline, when_seen(c, planet), cell, best_x - best_room - when_x);
     if (planet.best && planet.place) {
-      set.right(best_x, baseline, c.words.time(zone.civil(*planet.best)), cell);
+      // Where the 15th does not show it, the nearest date that does stands with the time.
+      std::string best = c.words.time(zone.civil(*planet.best));
+      if (day_of(planet.best_date) != 15) best = short_date(c, planet.best_date) + ", " + best;
+      set.right(best_x, baseline, best, cell);
       set.right(where_x, baseline,
                 c.words("constellations.at",
                         {{"direction", c.words.direction_short(planet.place->azimuth)},

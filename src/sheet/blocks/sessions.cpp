@@ -1,5 +1,6 @@
 #include <algorithm>
 
+#include "almanac/nights.hpp"
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/setting.hpp"
 
@@ -28,14 +29,13 @@ std::string dates_text(const BlockContext& c, const std::vector<Date>& dates) {
 std::string daylight(const BlockContext& c, const Session& session,
                      const std::vector<Date>& dates) {
   if (!session.from || *session.from < std::chrono::hours(12)) return {};
-  const Zone& zone = c.year.place.zone;
-  for (const Night& night : c.year.nights) {
-    if (night.date != dates.front()) continue;
-    if (night.sun == Presence::up_throughout) return c.words("sessions.sun-up");
-    if (night.sunset && *night.sunset > zone.instant(night.date, *session.from))
-      return c.words("sessions.sunset", {{"time", c.words.time(zone.civil(*night.sunset))}});
-  }
-  return {};
+  for (const Night& night : c.year.nights)
+    if (night.date == dates.front() && night.sun == Presence::up_throughout)
+      return c.words("sessions.sun-up");
+  const auto sunset = sunset_after(c.year, dates.front(), *session.from);
+  return sunset ? c.words("sessions.sunset",
+                          {{"time", c.words.time(c.year.place.zone.civil(*sunset))}})
+                : std::string();
 }
 
 }  // namespace
