@@ -124,18 +124,24 @@ void LabelPlacer::add_line(Point from, Point to, double cost_per_mm) {
   }
 }
 
-void LabelPlacer::reserve(const Box& box) {
+void LabelPlacer::reserve(const Box& box, double side_gap_mm) {
   const auto index = static_cast<std::uint32_t>(boxes_.size());
   boxes_.push_back(box);
+  side_gaps_.push_back(side_gap_mm);
+  largest_gap_ = std::max(largest_gap_, side_gap_mm);
   for_cells(box, [&](std::size_t cell) { cells_[cell].boxes.push_back(index); });
 }
 
-std::optional<double> LabelPlacer::cost_of(const Box& box, double limit) const {
+std::optional<double> LabelPlacer::cost_of(const Box& box, double limit, double side_gap_mm) const {
   const Box padded = grown(box, padding_mm);
   if (!region_.contains(padded)) return std::nullopt;
   bool stands = true;
-  for_cells(padded, [&](std::size_t cell) {
-    for (const auto i : cells_[cell].boxes) stands = stands && !overlap(padded, boxes_[i]);
+  const auto widened = [&](double gap) {
+    return Box{box.x - gap, padded.y, box.width + 2 * gap, padded.height};
+  };
+  for_cells(widened(std::max(side_gap_mm, largest_gap_)), [&](std::size_t cell) {
+    for (const auto i : cells_[cell].boxes)
+      stands = stands && !overlap(widened(std::max(side_gap_mm, side_gaps_[i])), boxes_[i]);
   });
   if (!stands) return std::nullopt;
 
@@ -212,8 +218,9 @@ std::optional<PlacedLabel> LabelPlacer::seat(const LabelRequest& request) const 
     const auto consider = [&](double x, double y, double extra) {
       if (extra >= least) return;
       const Box box{x, y, size.width, size.height};
-      const auto cost = cost_of(box, least - extra);
+      const auto cost = cost_of(box, least - extra, request.side_gap_mm);
       if (!cost || *cost + extra >= least) return;
+      if (request.nearest && nearer_to_another(box, request)) return;
       least = *cost + extra;
       best = box;
     };
@@ -239,6 +246,9 @@ std::optional<PlacedLabel> LabelPlacer::seat(const LabelRequest& request) const 
     }
     if (best) return PlacedLabel{0, f, *best, set(request.forms[f], *best, request.ink)};
   }
+  if (request.leader)
+    for (std::size_t f = 0; f < request.forms.size(); ++f)
+      if (auto label = seat_with_leader(request, f)) return label;
   return std::nullopt;
 }
 
@@ -253,10 +263,80 @@ std::vector<PlacedLabel> LabelPlacer::place(const std::vector<LabelRequest>& req
     auto label = seat(requests[i]);
     if (!label) continue;
     label->request = i;
-    reserve(label->box);
+    reserve(label->box, requests[i].side_gap_mm);
+    if (label->leader) add_line(label->leader->first, label->leader->second, 8);
     placed.push_back(std::move(*label));
   }
   return placed;
+}
+
+bool LabelPlacer::nearer_to_another(const Box& box, const LabelRequest& request) const {
+  const auto gap_to = [&](Point p, double radius) {
+    return std::hypot(std::max({box.x - p.x, 0.0, p.x - box.right()}),
+                      std::max({box.y - p.y, 0.0, p.y - box.bottom()})) -
+           radius;
+  };
+  constexpr double margin = 0.5;
+  const double own = gap_to(request.point, request.clearance_mm);
+  bool nearer = false;
+  for_cells(grown(box, std::max(0.0, own) + margin + largest_dot_), [&](std::size_t cell) {
+    for (const auto i : cells_[cell].dots) {
+      const Dot& dot = dots_[i];
+      const double off = std::hypot(dot.centre.x - request.point.x, dot.centre.y - request.point.y);
+      nearer = nearer || (dot.hard && off > 0.01 && gap_to(dot.centre, dot.radius) < own + margin);
+    }
+  });
+  return nearer;
+}
+
+bool LabelPlacer::leader_is_clear(Point from, Point to, Point own) const {
+  constexpr double margin = 0.3;
+  for (const Box& box : boxes_)
+    if (length_inside(from, to, grown(box, margin)) > 0) return false;
+  const double dx = to.x - from.x, dy = to.y - from.y, square = dx * dx + dy * dy;
+  for (const Dot& dot : dots_) {
+    if (!dot.hard || std::hypot(dot.centre.x - own.x, dot.centre.y - own.y) < 0.01) continue;
+    const double t = std::clamp(
+        ((dot.centre.x - from.x) * dx + (dot.centre.y - from.y) * dy) / square, 0.0, 1.0);
+    if (std::hypot(from.x + t * dx - dot.centre.x, from.y + t * dy - dot.centre.y) <
+        dot.radius + margin)
+      return false;
+  }
+  return true;
+}
+
+std::optional<PlacedLabel> LabelPlacer::seat_with_leader(const LabelRequest& request,
+                                                         std::size_t form) const {
+  const Box size = measure(request.forms[form]);
+  const Point own = request.point;
+  std::optional<PlacedLabel> best;
+  double least = 2 * request.cost_limit;
+  constexpr int directions = 24;
+  for (const double far : {2.5, 4.0, 5.5, 7.0, 9.0, 11.5, 14.0})
+    for (int k = 0; k < directions; ++k) {
+      const double turn = 2 * std::numbers::pi * k / directions, c = std::cos(turn),
+                   s = -std::sin(turn);
+      const double reach = request.clearance_mm + far;
+      const Box box{own.x + reach * c + (c - 1) / 2 * size.width,
+                    own.y + reach * s + (s - 1) / 2 * size.height, size.width, size.height};
+      const auto cost = cost_of(box, least - far, request.side_gap_mm);
+      if (!cost || *cost + far >= least) continue;
+      // To the nearest letter's edge, a hair short of it.
+      const Point near{std::clamp(own.x, box.x, box.right()),
+                       std::clamp(own.y, box.y, box.bottom())};
+      const double length = std::hypot(near.x - own.x, near.y - own.y);
+      const double start = request.clearance_mm + 0.1, end = length - 0.3;
+      if (end - start < 0.8) continue;
+      const auto along = [&](double mm) {
+        return Point{own.x + mm / length * (near.x - own.x),
+                     own.y + mm / length * (near.y - own.y)};
+      };
+      if (!leader_is_clear(along(start), along(end), own)) continue;
+      least = *cost + far;
+      best = PlacedLabel{0, form, box, {}, std::pair{along(start), along(end)}};
+    }
+  if (best) best->texts = set(request.forms[form], best->box, request.ink);
+  return best;
 }
 
 double length_inside(Point from, Point to, const Box& box) {

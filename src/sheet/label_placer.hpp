@@ -35,13 +35,18 @@ struct LabelRequest {
   std::vector<Point> places;     // centres to stand on, best first; empty: beside the point
   double cost_limit = 8;         // how much it may cover before it takes a shorter form or goes
   Ink ink;
+  double side_gap_mm =
+      0.55;              // free room to its left and right, so that two names do not read as one
+  bool nearest = false;  // no other hard dot may stand as near to the label as its own
+  bool leader = false;   // with no seat beside its point, it may stand off with a leader line
 };
 
 struct PlacedLabel {
   std::size_t request;
   std::size_t form;
-  Box box;                  // of the letters, without padding
-  std::vector<Text> texts;  // ready to draw
+  Box box;                                             // of the letters, without padding
+  std::vector<Text> texts;                             // ready to draw
+  std::optional<std::pair<Point, Point>> leader = {};  // from the point's edge to the letters
 };
 
 /// Finds room for labels among stars and lines. Greedy, in falling importance; the same input gives
@@ -63,8 +68,9 @@ class LabelPlacer {
 
   /// What a box would cover; nullopt where it cannot stand or where that comes to more than
   /// `limit`. Labels of another make (turned ones) ask and then reserve.
-  std::optional<double> cost_of(const Box&, double limit = 1e9) const;
-  void reserve(const Box&);
+  std::optional<double> cost_of(const Box&, double limit = 1e9,
+                                double side_gap_mm = padding_mm) const;
+  void reserve(const Box&, double side_gap_mm = padding_mm);
   const std::vector<Box>& reserved() const { return boxes_; }
 
   /// The box of a form whose upper left corner is at the origin.
@@ -87,6 +93,9 @@ class LabelPlacer {
   template <class Visit>
   void for_cells(const Box&, Visit) const;
   std::optional<PlacedLabel> seat(const LabelRequest&) const;
+  std::optional<PlacedLabel> seat_with_leader(const LabelRequest&, std::size_t form) const;
+  bool nearer_to_another(const Box&, const LabelRequest&) const;
+  bool leader_is_clear(Point from, Point to, Point own) const;
   std::vector<Text> set(const LabelForm&, const Box&, Ink) const;
 
   const TypeSet& type_;
@@ -96,7 +105,8 @@ class LabelPlacer {
   std::vector<Dot> dots_;
   std::vector<Line> lines_;
   std::vector<Box> boxes_;
-  double largest_dot_ = 0;
+  std::vector<double> side_gaps_;  // of the boxes
+  double largest_dot_ = 0, largest_gap_ = padding_mm;
   // The last question that met each line, so that none counts twice.
   mutable std::vector<std::uint32_t> line_seen_;
   mutable std::uint32_t question_ = 0;

@@ -44,6 +44,12 @@ std::span<const ChartStar> chart_stars() {
   return found;
 }
 
+Ink figure_ink(const Theme& theme) {
+  const auto between = [](double a, double b) { return 0.45 * a + 0.55 * b; };
+  return {between(theme.figure.r, theme.soft.r), between(theme.figure.g, theme.soft.g),
+          between(theme.figure.b, theme.soft.b)};
+}
+
 SkyChart::SkyChart(const BlockContext& context, const LabelRegion& outline,
                    const LabelRegion& labels, Path clip, double dot_scale)
     : context_(context),
@@ -141,25 +147,8 @@ void SkyChart::label_on_line(const std::string& words, const std::vector<Point>&
   if (!places.empty()) wish(std::move(request));
 }
 
-void SkyChart::add_planet(Point p, double magnitude, const std::string& name) {
-  const double diameter = std::clamp(star_dot_mm(magnitude), 1.3, 2.3);
-  // A ring, so that a planet differs from a star under any light.
-  bodies_.push_back(Fill{Path::circle(p, diameter / 2 + 0.25), context_.theme.paper});
-  bodies_.push_back(
-      Stroke{Path::circle(p, diameter / 2 - 0.12), 0.36, context_.theme.black, {}, false});
-  placer_.add_dot(p, diameter + 0.5, true);
-  LabelRequest request;
-  request.forms = {{{name}, Face::bold, context_.theme.label_pt + 0.7, 0}};
-  request.importance = 1000 - magnitude;
-  request.point = p;
-  request.clearance_mm = diameter / 2;
-  request.cost_limit = 14;
-  request.ink = context_.theme.black;
-  wish(std::move(request));
-}
-
 void SkyChart::add_mark(Mark mark, Point centre, double diameter_mm) {
-  bodies_.push_back(std::move(mark));
+  bodies_.push_back({std::move(mark), {}});
   placer_.add_dot(centre, diameter_mm, true);
 }
 
@@ -169,8 +158,14 @@ void SkyChart::finish(std::vector<Mark>& out) {
     if (!guide.label.empty() && guide.first) label_guide(guide, texts);
   labels_ = placer_.place(wishes_);
   context_.tally.labels_left_out += static_cast<int>(wishes_.size() - labels_.size());
-  for (const PlacedLabel& label : labels_)
+  for (const PlacedLabel& label : labels_) {
+    if (label.leader) {
+      Path leader;
+      leader.move(label.leader->first).line(label.leader->second);
+      texts.push_back(Stroke{leader, 0.2, context_.theme.black, {}, false});
+    }
     for (const Text& text : label.texts) texts.push_back(text);
+  }
   for (const Guide& guide : guides_)
     if (!guide.label.empty() && !guide.first) label_guide(guide, texts);
 
@@ -192,10 +187,14 @@ void SkyChart::finish(std::vector<Mark>& out) {
     for (const auto& piece : break_at(line, placer_.reserved(), 0.3))
       figure_path.move(piece.front()).line(piece.back());
   if (!figure_path.verbs.empty())
-    group->marks.push_back(Stroke{figure_path, 0.18, context_.theme.figure, {}, false});
+    group->marks.push_back(
+        Stroke{figure_path, figure_line_mm, figure_ink(context_.theme), {}, false});
   if (!dots_.dots.empty()) group->marks.push_back(dots_);
   out.push_back(group);
-  out.insert(out.end(), bodies_.begin(), bodies_.end());
+  std::vector<std::uint8_t> named(wishes_.size(), 0);
+  for (const PlacedLabel& label : labels_) named[label.request] = 1;
+  for (const Body& body : bodies_)
+    if (!body.wish || named[*body.wish]) out.push_back(body.mark);
   out.insert(out.end(), texts.begin(), texts.end());
 }
 
@@ -227,7 +226,7 @@ void SkyChart::label_guide(const Guide& guide, std::vector<Mark>& texts) {
         below = std::max(below, -off);
       }
       for (const bool over : {true, false}) {
-        const double clear = LabelPlacer::padding_mm + 0.1;
+        const double clear = LabelPlacer::padding_mm + 0.1 + guide.style.label_lift_mm;
         const double lift = over ? above + drop + clear : -(below + top + clear);
         const Point start{a.x + 0.5 * c - lift * s, a.y - 0.5 * s - lift * c};
         // Axis-parallel boxes along the turned line of text.

@@ -26,12 +26,17 @@ struct ChartStar {
 };
 std::span<const ChartStar> chart_stars();
 
+/// What joins the stars of a figure: dark enough for a copy of a copy.
+inline constexpr double figure_line_mm = 0.2;
+Ink figure_ink(const Theme&);
+
 /// How a curve across a chart is drawn.
 struct GuideStyle {
   double width_mm;
   Ink ink;
   std::vector<double> dash_mm;
   double label_cost_per_mm;  // what a label pays for lying across it
+  double label_lift_mm = 0;  // how much farther off its own label stands
 };
 
 /// A chart being made: stars, figures, curves, bodies and labels gather here, then `finish` finds
@@ -52,12 +57,14 @@ class SkyChart {
   void set_period(double mm) { period_ = mm; }
   /// Lines of the figures of which at least two stars are drawn.
   void add_figures();
-  /// Names of constellations that `wanted` lets through, near their figures.
-  void name_constellations(const std::function<bool(int figure)>& wanted, Face face, double size_pt,
-                           double importance);
+  /// Names of constellations that `wanted` lets through, near their figures: the main ones in
+  /// `face` with `importance`, the others quieter in `quiet` and after everything else.
+  void name_constellations(const std::function<bool(int figure)>& wanted, Face face, Face quiet,
+                           double size_pt, double importance);
   /// Names of the brightest named stars, at most `most` and none fainter than `faintest`; `always`
-  /// ones whatever comes. Where the name finds no room, its Greek letter may stand (`letters`).
-  void name_stars(double faintest, std::size_t most, std::span<const int> always_hr, bool letters);
+  /// ones whatever comes.
+  void name_stars(double faintest, std::size_t most, std::span<const int> always_hr);
+  /// Asterisms and the landmarks among them, which come before the constellations.
   void name_asterisms();
 
   /// A curve, given as the stretches of it that the chart holds. A label is set along it where
@@ -67,16 +74,17 @@ class SkyChart {
   /// A label that interrupts a line, on the first free one of these points.
   void label_on_line(const std::string& words, const std::vector<Point>& places);
 
+  // Planets, Moon and Sun with a name are drawn only where the name finds room.
   void add_planet(Point, double magnitude, const std::string& name);
-  void add_moon(Point, double lit, Angle bright_limb_from_up, const std::string& name,
-                double radius_mm = 2.1);
+  void add_moon(Point, double lit, Angle bright_limb_from_up, const std::string& name);
   /// A small Moon with its date; the one of the chart's own evening is larger and bold.
   void add_passing_moon(Point, double lit, Angle bright_limb_from_up, const std::string& date,
                         bool own_evening);
+  static constexpr double sun_radius_mm = 1.5;
   void add_sun(Point, const std::string& name);
   /// Any other mark; its dot-like extent keeps labels away.
   void add_mark(Mark, Point centre, double diameter_mm);
-  void add_mark(Mark mark) { bodies_.push_back(std::move(mark)); }
+  void add_mark(Mark mark) { bodies_.push_back({std::move(mark), {}}); }
   void wish(LabelRequest request) { wishes_.push_back(std::move(request)); }
 
   bool holds(Point p) const;
@@ -99,7 +107,12 @@ class SkyChart {
     std::string label;
     bool first;
   };
+  struct Body {
+    Mark mark;
+    std::optional<std::size_t> wish;  // drawn only with this label
+  };
   void label_guide(const Guide&, std::vector<Mark>& texts);
+  void wish_for_body(std::vector<Mark> marks, LabelRequest request);
   LabelForm plain(std::string words) const;
 
   const BlockContext& context_;
@@ -114,7 +127,7 @@ class SkyChart {
   Dots dots_;
   std::vector<Guide> guides_;
   std::vector<std::vector<Point>> figure_lines_;
-  std::vector<Mark> bodies_;
+  std::vector<Body> bodies_;
   std::vector<LabelRequest> wishes_;
   std::vector<PlacedLabel> labels_;
 };

@@ -32,6 +32,12 @@ std::vector<Step> way_of(const BlockContext& context, Body body, Date date) {
 
 }  // namespace
 
+bool moon_up_that_day(const BlockContext& context) {
+  for (const Step& step : way_of(context, Body::moon, context.evening().date))
+    if (step.place.altitude.degrees() > 0) return true;
+  return false;
+}
+
 void add_paths_of_day(SkyChart& chart, const DomeView& view, bool with_message) {
   const BlockContext& context = chart.context();
   const Theme& theme = context.theme;
@@ -43,8 +49,8 @@ void add_paths_of_day(SkyChart& chart, const DomeView& view, bool with_message) 
     const std::vector<Step> way = way_of(context, body, evening.date);
     std::vector<Horizontal> curve;
     for (const Step& step : way) curve.push_back(step.place);
-    const GuideStyle style = sun ? GuideStyle{0.4, theme.black, {}, 0.8}
-                                 : GuideStyle{0.25, theme.blue_soft, {1.6, 0.8}, 0.4};
+    const GuideStyle style = sun ? GuideStyle{0.4, theme.black, {}, 0.8, 0.5}
+                                 : GuideStyle{0.25, theme.blue_soft, {1.6, 0.8}, 0.4, 0.3};
     chart.add_guide(view.trace(curve), style,
                     context.words(sun ? "dome.way-of-sun" : "dome.way-of-moon"), true);
     // A dot at each full hour, its civil time at every second one.

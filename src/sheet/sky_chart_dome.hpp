@@ -55,6 +55,9 @@ void add_pole(SkyChart&, const DomeView&);
 /// stars come back.
 void add_paths_of_day(SkyChart&, const DomeView&, bool with_message);
 
+/// Whether the Moon stands above the horizon at some time of the evening's civil day.
+bool moon_up_that_day(const BlockContext&);
+
 /// A dome with its direction letters and title, fitted into `area`: its labels, for checks, and the
 /// height used.
 struct DomeDrawing {

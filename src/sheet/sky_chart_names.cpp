@@ -1,14 +1,15 @@
 #include <algorithm>
+#include <array>
 #include <cmath>
 
 #include "catalogue/constellations.hpp"
 #include "catalogue/stars.hpp"
-#include "sheet/moon_mark.hpp"
 #include "sheet/sky_chart.hpp"
 
-// What a chart names, and in which order of importance: planets and Moon (1000), the bright stars
-// (800), constellations (600), asterisms (450), fainter stars (400), curves last. The choice is
-// this project's own.
+// What a chart names, and in which order of importance: planets and Moon (1000), the brightest
+// stars (900), bright stars (800), landmarks (700), the main constellations (600), asterisms (450),
+// fainter stars (400), the other constellations (200), curves last. The choice is this project's
+// own.
 
 namespace duskleaf {
 namespace {
@@ -43,6 +44,14 @@ std::vector<Point> seats_within(const std::vector<Point>& points) {
   return seats;
 }
 
+/// The constellations that a beginner learns first: bright, large, or of the zodiac.
+bool is_main(std::string_view abbreviation) {
+  constexpr std::string_view main =
+      "And Aql Aqr Ari Aur Boo CMa CMi Cap Car Cas Cen Cnc CrB Cru Cyg Del Dra Eri Gem Her Hya Leo "
+      "Lib Lyr Ori Peg Per Psc Sco Sgr Tau UMa UMi Vir";
+  return main.find(abbreviation) != std::string_view::npos;
+}
+
 std::vector<std::string> words_of(std::string_view text) {
   std::vector<std::string> parts;
   std::size_t at = 0;
@@ -57,7 +66,7 @@ std::vector<std::string> words_of(std::string_view text) {
 }  // namespace
 
 void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted, Face face,
-                                   double size_pt, double importance) {
+                                   Face quiet, double size_pt, double importance) {
   for (std::size_t f = 0; f < figures().size(); ++f) {
     const Figure& figure = figures()[f];
     if (!wanted(static_cast<int>(f))) continue;
@@ -78,8 +87,9 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
     std::string part;
     if (!figure.part.empty()) part = capitals(figure.part);
     LabelRequest request;
+    const bool main = is_main(constellation.abbreviation);
     const auto form = [&](std::vector<std::string> lines) {
-      request.forms.push_back({std::move(lines), face, size_pt, 0.06});
+      request.forms.push_back({std::move(lines), main ? face : quiet, size_pt, 0.06});
     };
     if (part.empty()) {
       form({name});
@@ -89,21 +99,20 @@ void SkyChart::name_constellations(const std::function<bool(int figure)>& wanted
       form({name + " " + part});
       form({name, part});
     }
-    form({capitals(constellation.abbreviation)});
-    request.importance = importance - 8 * brightest +
+    request.importance = (main ? importance : 200) - 8 * brightest +
                          0.5 * static_cast<double>(std::min<std::size_t>(points.size(), 20));
     request.places = seats_within(points);
     if (period_ > 0)
       for (Point& p : request.places) p.x -= period_ * std::floor((p.x - outline_.box.x) / period_);
     // The brighter the figure, the more its name may cover.
-    request.cost_limit = 9 + std::max(0.0, 1.2 * (3.5 - brightest));
-    request.ink = context_.theme.blue;
+    request.cost_limit = main ? 9 + std::max(0.0, 1.2 * (3.5 - brightest)) : 7;
+    request.ink = main ? context_.theme.blue : context_.theme.blue_soft;
+    request.side_gap_mm = 2.5;
     wish(std::move(request));
   }
 }
 
-void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int> always_hr,
-                          bool letters) {
+void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int> always_hr) {
   std::size_t named = 0;
   for (const ChartStar& candidate : chart_stars()) {
     const int index = candidate.index;
@@ -113,21 +122,24 @@ void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int
     if (!p || star.name.empty()) continue;
     if (!always && (star.magnitude > faintest || named >= most)) continue;
     ++named;
+    const bool brightest = star.magnitude < 1.5;
     const bool bright = star.magnitude < 1.65 || always;
     LabelRequest request;
     request.forms = {plain(std::string(star.name))};
-    if (letters && bright && !star.bayer.empty())
-      request.forms.push_back(plain(std::string(star.bayer)));
-    request.importance = (bright ? 800 : 400) - 10 * star.magnitude;
+    request.importance = (brightest ? 900 : bright ? 800 : 400) - 10 * star.magnitude;
+    request.nearest = true;
+    request.leader = brightest;
     request.point = *p;
     request.clearance_mm = dot_scale_ * star_dot_mm(star.magnitude) / 2;
-    request.cost_limit = bright ? 7 : 4.5;
+    request.cost_limit = brightest ? 8 : bright ? 7 : 4.5;
     request.ink = context_.theme.black;
     wish(std::move(request));
   }
 }
 
 void SkyChart::name_asterisms() {
+  constexpr std::array<std::string_view, 4> landmarks = {"southern-cross", "pointers-south",
+                                                         "plough", "belt"};
   for (const Asterism& asterism : asterisms()) {
     const std::string key = "asterism." + std::string(asterism.key);
     if (!context_.words.has(key)) continue;
@@ -137,58 +149,29 @@ void SkyChart::name_asterisms() {
     if (points.size() < asterism.asterism_stars.size() || points.empty()) continue;
     LabelRequest request;
     request.forms = {{{context_.words(key)}, Face::italic, context_.theme.label_pt, 0}};
-    request.importance = 450;
+    const bool landmark =
+        std::find(landmarks.begin(), landmarks.end(), asterism.key) != landmarks.end();
+    request.importance = landmark ? 700 : 450;
     request.places = seats_within(points);
-    request.cost_limit = 6;
-    request.ink = context_.theme.soft;
+    request.cost_limit = landmark ? 9 : 6;
+    request.ink = landmark ? context_.theme.black : context_.theme.soft;
+    request.side_gap_mm = 1.2;
     wish(std::move(request));
   }
-}
-
-void SkyChart::add_moon(Point p, double lit, Angle bright_limb_from_up, const std::string& name,
-                        double radius_mm) {
-  bodies_.push_back(Fill{Path::circle(p, radius_mm + 0.35), context_.theme.paper});
-  draw_moon(p, radius_mm, lit, bright_limb_from_up, context_.theme, bodies_);
-  placer_.add_dot(p, 2 * radius_mm + 0.7, true);
-  if (name.empty()) return;
-  LabelRequest request;
-  request.forms = {{{name}, Face::bold, context_.theme.label_pt + 0.7, 0}};
-  request.importance = 1100;
-  request.point = p;
-  request.clearance_mm = radius_mm + 0.2;
-  request.cost_limit = 14;
-  request.ink = context_.theme.black;
-  wish(std::move(request));
-}
-
-void SkyChart::add_passing_moon(Point p, double lit, Angle bright_limb_from_up,
-                                const std::string& date, bool own_evening) {
-  const double radius = own_evening ? 1.7 : 1.15;
-  add_moon(p, lit, bright_limb_from_up, {}, radius);
-  LabelRequest request;
-  request.forms = {{{date}, own_evening ? Face::bold : Face::regular, context_.theme.label_pt, 0}};
-  request.importance = own_evening ? 1100 : 860;
-  request.point = p;
-  request.clearance_mm = radius + 0.1;
-  request.cost_limit = 9;
-  request.ink = context_.theme.black;
-  wish(std::move(request));
-}
-
-void SkyChart::add_sun(Point p, const std::string& name) {
-  constexpr double radius = 1.5;
-  bodies_.push_back(Fill{Path::circle(p, radius), context_.theme.paper});
-  bodies_.push_back(Stroke{Path::circle(p, radius), 0.3, context_.theme.black, {}, false});
-  bodies_.push_back(Fill{Path::circle(p, 0.45), context_.theme.black});
-  placer_.add_dot(p, 2 * radius + 0.4, true);
-  LabelRequest request;
-  request.forms = {{{name}, Face::bold, context_.theme.label_pt + 0.7, 0}};
-  request.importance = 1090;
-  request.point = p;
-  request.clearance_mm = radius;
-  request.cost_limit = 14;
-  request.ink = context_.theme.black;
-  wish(std::move(request));
+  constexpr int hr_alcyone = 1165;
+  if (const auto p = drawn_star(star_index(hr_alcyone))) {
+    LabelRequest request;
+    request.forms = {
+        {{context_.words("asterism.pleiades")}, Face::italic, context_.theme.label_pt, 0}};
+    request.importance = 700;
+    request.point = *p;
+    request.clearance_mm = 1.6 * dot_scale_;  // the cluster's
+    request.cost_limit = 9;
+    request.ink = context_.theme.black;
+    request.side_gap_mm = 1.2;
+    request.leader = true;
+    wish(std::move(request));
+  }
 }
 
 }  // namespace duskleaf

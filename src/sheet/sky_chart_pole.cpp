@@ -122,13 +122,14 @@ void add_pole(SkyChart& chart, const DomeView& view) {
   const auto gacrux = star(hr_gacrux), acrux = star(hr_acrux);
   const auto alpha = star(hr_alpha_cen), beta = star(hr_beta_cen);
   if (gacrux && acrux) {
-    chart.add_guide({straight(*acrux, *pole, 1.2, 1.9)}, finder,
-                    context.words("dome.finder-south"));
+    chart.add_guide({straight(*acrux, *pole, 1.2, 1.9)}, finder, context.words("dome.finder-south"),
+                    true);
   }
   if (alpha && beta) {
     const Point between{(alpha->x + beta->x) / 2, (alpha->y + beta->y) / 2};
     chart.add_guide({straight(*alpha, *beta, 1.2, 1.2)}, finder);
-    chart.add_guide({straight(between, *pole, 0.3, 2.2)}, finder);
+    chart.add_guide({straight(between, *pole, 0.3, 2.2)}, finder,
+                    context.words("dome.finder-south"));
   }
 }
 

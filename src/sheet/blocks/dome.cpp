@@ -24,6 +24,9 @@ void draw_ground(const DomeView& view, const Theme& theme, std::vector<Mark>& ou
   out.push_back(Fill{view.outline_path(), theme.lap});
   Path within = Path::arc(view.middle(), view.unit(), 0, 180);
   out.push_back(Fill{within.close(), theme.sky});
+  // Its edge, where a copy has lost the tone.
+  out.push_back(
+      Stroke{Path::arc(view.middle(), view.unit(), 0, 180), 0.13, theme.blue_soft, {}, false});
 }
 
 void draw_frame(const DomeView& view, const BlockContext& context, std::vector<Mark>& out) {
@@ -145,8 +148,13 @@ void add_bodies(SkyChart& chart, const DomeView& view) {
   const Angle from_zenith =
       bright_limb_from_zenith(context.ephemeris, observer.latitude, observer.longitude,
                               observer.elevation_m, evening.moment);
-  chart.add_moon(*p, evening.moon_lit, from_zenith + view.up_at(evening.moon),
-                 context.words("body.moon"));
+  chart.add_moon(
+      *p, evening.moon_lit, from_zenith + view.up_at(evening.moon),
+      context.words(
+          "dome.moon",
+          {{"date", context.words("date.day-month", {{"day", std::to_string(day_of(evening.date))},
+                                                     {"month", context.words.month_short(
+                                                                   month_of(evening.date))}})}}));
 }
 
 }  // namespace
@@ -177,8 +185,9 @@ DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const B
     const std::array<int, 3> finders = {424, 4301, 4295};  // Polaris, Dubhe, Merak
     chart.name_stars(
         2.5, 24,
-        facing == DomeFacing::pole ? std::span<const int>(finders) : std::span<const int>(), true);
-    chart.name_constellations([](int) { return true; }, Face::regular, context.theme.label_pt, 600);
+        facing == DomeFacing::pole ? std::span<const int>(finders) : std::span<const int>());
+    chart.name_constellations([](int) { return true; }, Face::regular, Face::light,
+                              context.theme.label_pt, 600);
     chart.name_asterisms();
   }
   chart.finish(out);

@@ -51,6 +51,37 @@ void add_horizons(SkyChart& chart, const RibbonView& view) {
   }
 }
 
+/// Says once on each side what the tone means.
+void add_below_horizon(SkyChart& chart, const RibbonView& view) {
+  const BlockContext& context = chart.context();
+  const Angle latitude = context.site.place.observer.latitude;
+  LabelForm form{{context.words("ribbon.below")}, Face::italic, context.theme.label_pt, 0};
+  const double half_width = chart.placer().measure(form).width / 2;
+  const double half_degrees = half_width * 360 / view.band().width;
+  for (const double side : {-1.0, 1.0}) {
+    LabelRequest request;
+    request.forms = {form};
+    // Level with the equator's neighbourhood first, then farther off; all of it under the horizon.
+    for (const double declination : {-6.0, 6.0, -12.0, 12.0, -20.0, 20.0, -30.0, 30.0, -36.0, 36.0})
+      for (double h = 110; h + half_degrees < 179; h += 4) {
+        bool below = true;
+        for (const double end : {-1.0, 1.0})
+          below = below && horizontal_of(Angle::from_degrees(side * (h + end * half_degrees)),
+                                         Angle::from_degrees(declination), latitude)
+                                   .altitude.degrees() < -4;
+        if (below)
+          request.places.push_back(
+              view.at(Angle::from_degrees(side * h), Angle::from_degrees(declination)));
+      }
+    if (request.places.empty()) continue;
+    request.importance = 880;
+    request.cost_limit = 9;
+    request.side_gap_mm = 2;
+    request.ink = context.theme.blue;
+    chart.wish(std::move(request));
+  }
+}
+
 void add_circles(SkyChart& chart, const RibbonView& view) {
   const BlockContext& context = chart.context();
   const Theme& theme = context.theme;
@@ -166,10 +197,20 @@ void draw_title(const Box& area, const BlockContext& context, std::vector<Mark>&
   const Theme& theme = context.theme;
   const double size = theme.label_pt + 1.5;
   const double baseline = area.y + context.type.cap_height(Face::bold, size) + 0.3;
-  out.emplace_back(
-      Text{{area.x, baseline}, context.words("ribbon.title"), Face::bold, size, theme.blue, 0.08});
-  const std::string aside = context.words("ribbon.aside");
-  const double width = context.type.width(aside, Face::regular, theme.label_pt);
+  const std::string title = context.words("ribbon.title");
+  out.emplace_back(Text{{area.x, baseline}, title, Face::bold, size, theme.blue, 0.08});
+  // The fuller of two captions that fits beside the title.
+  const std::string time =
+      context.words.time(context.site.place.zone.civil(context.evening().moment));
+  const bool bright = context.evening().shift == EveningShift::no_stars;
+  const double room = area.width - 4 - context.type.width(title, Face::bold, size, 0.08);
+  std::string aside;
+  double width = 0;
+  for (const char* key : {"ribbon.aside", "ribbon.aside-short"}) {
+    aside = context.words(bright ? "ribbon.aside-bright" : key, {{"time", time}});
+    width = context.type.width(aside, Face::regular, theme.label_pt);
+    if (width <= room) break;
+  }
   out.emplace_back(
       Text{{area.right() - width, baseline}, aside, Face::regular, theme.label_pt, theme.soft});
 }
@@ -181,25 +222,43 @@ void add_bodies(SkyChart& chart, const RibbonView& view) {
   const auto point = [&](const EquatorialPlace& p) {
     return view.at(view.hour_angle(p.right_ascension), p.declination);
   };
-  const EquatorialPlace sun = where(Body::sun, evening.moment);
-  chart.add_sun(point(sun), context.words("body.sun"));
+  // None over the frame: at the seam, where the two ends show the same sky, it stands a little in.
+  const Box& band = view.band();
+  const auto inward = [&](Point p, double radius) {
+    return Point{std::clamp(p.x, band.x + radius + 0.6, band.right() - radius - 0.6), p.y};
+  };
+  const auto apart = [](Point a, Point b) { return std::hypot(a.x - b.x, a.y - b.y); };
+  const Point sun = inward(point(where(Body::sun, evening.moment)), SkyChart::sun_radius_mm);
+  chart.add_sun(sun, context.words("body.sun"));
+  std::vector<Point> taken = {sun};
   for (const PlanetEvening& planet : evening.planets) {
     if (planet.magnitude > ribbon_limit) continue;
-    chart.add_planet(point(where(planet.planet, evening.moment)), planet.magnitude,
+    const Point p = inward(point(where(planet.planet, evening.moment)), 1.2);
+    // In front of the Sun's disc on paper it is lost in the glare anyway.
+    if (apart(p, sun) < SkyChart::sun_radius_mm + 1.3) continue;
+    chart.add_planet(p, planet.magnitude,
                      context.words("body." + std::string(body_name(planet.planet))));
+    taken.push_back(p);
   }
   // The Moon on this evening, and as it passes every third day at the same hour.
   const int days = days_in_month(evening.year, evening.month), today = day_of(evening.date);
   for (int day = 1; day <= days; ++day) {
     if ((day - today) % 3 != 0) continue;
+    const bool own = day == today;
     const Ut at = evening.moment + Days(day - today);
     const Eigen::Vector3d moon = context.ephemeris.apparent(Body::moon, to_tt(at));
     const Eigen::Vector3d light = context.ephemeris.apparent(Body::sun, to_tt(at));
     const Angle lean = position_angle(moon, light, Eigen::Vector3d::UnitZ());
+    const Point at_scale = point(to_equatorial(moon));
+    const Point p = inward(at_scale, own ? 1.9 : 1.4);
+    if (!own && (p.x != at_scale.x || std::any_of(taken.begin(), taken.end(), [&](Point other) {
+                   return apart(p, other) < 3.2;
+                 })))
+      continue;
     const double cosine = moon.normalized().dot(light.normalized());
-    chart.add_passing_moon(point(to_equatorial(moon)), (1 - cosine) / 2,
+    chart.add_passing_moon(p, (1 - cosine) / 2,
                            view.faces_south() ? lean : lean + Angle::from_degrees(180),
-                           context.words.number(day, 0), day == today);
+                           context.words.number(day, 0), own);
   }
 }
 
@@ -233,13 +292,14 @@ RibbonDrawing compose_ribbon(const BlockContext& context, const Box& area, std::
   add_bodies(chart, view);
   add_circles(chart, view);
   add_horizons(chart, view);
-  chart.name_stars(1.3, 16, {}, false);
+  add_below_horizon(chart, view);
+  chart.name_stars(1.3, 16, {});
   chart.name_constellations(
       [](int figure) {
         const int index = figures()[static_cast<std::size_t>(figure)].constellation;
         return constellations()[static_cast<std::size_t>(index)].near_equator;
       },
-      Face::condensed, theme.label_pt, 850);
+      Face::condensed, Face::condensed, theme.label_pt, 850);
   chart.finish(out);
   out.insert(out.end(), scales.begin(), scales.end());
   out.emplace_back(Stroke{Path::rectangle(band), 0.3, theme.blue, {}, false});
