@@ -44,6 +44,26 @@ std::vector<Point> seats_within(const std::vector<Point>& points) {
   return seats;
 }
 
+/// Seats beside a small figure, to all four sides; none beside a large one.
+std::vector<Point> seats_about(const std::vector<Point>& points, const Box& name) {
+  double left = 1e9, right = -1e9, top = 1e9, bottom = -1e9;
+  for (const Point& p : points) {
+    left = std::min(left, p.x), right = std::max(right, p.x);
+    top = std::min(top, p.y), bottom = std::max(bottom, p.y);
+  }
+  std::vector<Point> seats;
+  if (right - left > 1.3 * name.width) return seats;
+  const double x = (left + right) / 2, y = (top + bottom) / 2;
+  for (const double gap : {1.2, 2.4, 4.0, 6.0})
+    for (const double slip : {0.0, -2.5, 2.5, -5.0, 5.0}) {
+      seats.push_back({right + gap + name.width / 2, y + slip});
+      seats.push_back({left - gap - name.width / 2, y + slip});
+      seats.push_back({x + 1.5 * slip, top - gap - name.height / 2});
+      seats.push_back({x + 1.5 * slip, bottom + gap + name.height / 2});
+    }
+  return seats;
+}
+
 /// The constellations that a beginner learns first: bright, large, or of the zodiac.
 bool is_main(std::string_view abbreviation) {
   constexpr std::string_view main =
@@ -122,12 +142,13 @@ void SkyChart::name_stars(double faintest, std::size_t most, std::span<const int
     if (!p || star.name.empty()) continue;
     if (!always && (star.magnitude > faintest || named >= most)) continue;
     ++named;
-    const bool brightest = star.magnitude < 1.5;
+    const bool brightest = star.magnitude < 1.5 || always;
     const bool bright = star.magnitude < 1.65 || always;
     LabelRequest request;
     request.forms = {plain(std::string(star.name))};
     request.importance = (brightest ? 900 : bright ? 800 : 400) - 10 * star.magnitude;
-    request.nearest = true;
+    // Polaris stands in the very mark of the pole.
+    request.nearest = !always;
     request.leader = brightest;
     request.point = *p;
     request.clearance_mm = dot_scale_ * star_dot_mm(star.magnitude) / 2;
@@ -151,9 +172,11 @@ void SkyChart::name_asterisms() {
     request.forms = {{{context_.words(key)}, Face::italic, context_.theme.label_pt, 0}};
     const bool landmark =
         std::find(landmarks.begin(), landmarks.end(), asterism.key) != landmarks.end();
-    request.importance = landmark ? 700 : 450;
-    request.places = seats_within(points);
-    request.cost_limit = landmark ? 9 : 6;
+    request.importance = landmark ? 895 : 450;
+    // A landmark smaller than its name has the name beside it.
+    if (landmark) request.places = seats_about(points, placer_.measure(request.forms[0]));
+    for (const Point& p : seats_within(points)) request.places.push_back(p);
+    request.cost_limit = landmark ? 12 : 6;
     request.ink = landmark ? context_.theme.black : context_.theme.soft;
     request.side_gap_mm = 1.2;
     wish(std::move(request));

@@ -254,6 +254,45 @@ TEST(Domes, SayWhichWayTheyFace) {
   EXPECT_THAT(texts_of(c), testing::Contains("FACING SOUTH"));
 }
 
+TEST(Domes, NameEveryPlanetAndTheMoonsDate) {
+  for (const double latitude : {54.0, -43.0}) {
+    Scene scene(latitude, 0, make_date(2027, 3, 15), 21.5, 5);
+    std::vector<Mark> marks;
+    for (const DomeFacing facing : {DomeFacing::equator, DomeFacing::pole})
+      compose_dome(scene.context(), facing, dome_area, marks);
+    const std::vector<std::string> found = texts_of(marks);
+    EXPECT_THAT(found, testing::Contains("Moon, 15\u00A0Mar")) << latitude;
+    for (const PlanetEvening& planet : scene.evening().planets)
+      if (planet.place.altitude.degrees() > 2) {
+        EXPECT_THAT(found,
+                    testing::Contains(scene.words("body." + std::string(body_name(planet.planet)))))
+            << latitude;
+      }
+  }
+}
+
+TEST(Domes, NameTheSouthsLandmarksInFull) {
+  Scene scene(-43, 0, make_date(2027, 4, 15), 21.5, 5);
+  std::vector<Mark> marks;
+  compose_dome(scene.context(), DomeFacing::pole, dome_area, marks);
+  EXPECT_THAT(texts_of(marks),
+              testing::IsSupersetOf({"Southern Cross", "the Pointers", "Rigil Kentaurus"}));
+}
+
+TEST(ChartKey, ListsWhatIsDrawn) {
+  Scene scene(70, 19, make_date(2027, 6, 15), 22, 5);
+  const BlockOptions corner{{{"corner", "top-left"}}};
+  std::vector<Mark> dark, bright;
+  draw_chart_key(scene.context(), corner, {12, 30, 60, 40}, dark);
+  scene.evening().shift = EveningShift::no_stars;
+  draw_chart_key(scene.context(), corner, {12, 30, 60, 40}, bright);
+  const std::string figure = scene.words("key.figure"), sun = scene.words("dome.way-of-sun");
+  EXPECT_THAT(texts_of(dark), testing::Contains(figure));
+  EXPECT_THAT(texts_of(dark), testing::Not(testing::Contains(sun)));
+  EXPECT_THAT(texts_of(bright), testing::Contains(sun));
+  EXPECT_THAT(texts_of(bright), testing::Not(testing::Contains(figure)));
+}
+
 TEST(Domes, WithoutStarsShowTheSunsWayAndTheDateOfReturn) {
   Scene scene(70, 19, make_date(2027, 6, 15), 22, -4);
   scene.evening().shift = EveningShift::no_stars;

@@ -158,6 +158,50 @@ TEST(LabelPlacer, KeepsFromReservedBoxes) {
   EXPECT_FALSE(too_near(placed[0].box, taken, 0.4));
 }
 
+TEST(LabelPlacer, SetsANameNearerToItsOwnDotThanToAnother) {
+  LabelPlacer placer(type(), {{0, 0, 80, 40}, {}, 0});
+  LabelRequest left = one_request("Mars", {40, 20}), right = one_request("Jupiter", {42.5, 20});
+  for (LabelRequest* r : {&left, &right}) {
+    placer.add_dot(r->point, 2, true);
+    r->clearance_mm = 0.8;
+    r->nearest = r->leader = true;
+  }
+  const auto placed = placer.place({left, right});
+  ASSERT_EQ(placed.size(), 2u);
+  for (const PlacedLabel& label : placed) {
+    const bool is_left = label.request == 0;
+    const Point own = is_left ? left.point : right.point,
+                other = is_left ? right.point : left.point;
+    EXPECT_TRUE(label.leader || distance(own, label.box) < distance(other, label.box)) << is_left;
+  }
+}
+
+TEST(LabelPlacer, DrawsALeaderFromADotThatIsHemmedIn) {
+  LabelPlacer placer(type(), {{0, 0, 80, 40}, {}, 0});
+  LabelRequest r = one_request("Mercury", {40, 20});
+  for (const auto& [dx, dy] : {std::pair{-2.0, 0.0}, {2.0, 0.0}, {0.0, -2.0}})
+    placer.add_dot({40 + dx, 20 + dy}, 1.2, true);
+  placer.reserve({36, 21.2, 3, 2});
+  placer.reserve({41, 21.2, 3, 2});
+  r.nearest = true;
+  EXPECT_TRUE(placer.place({r}).empty());
+  r.leader = true;
+  const auto placed = placer.place({r});
+  ASSERT_EQ(placed.size(), 1u);
+  ASSERT_TRUE(placed[0].leader);
+  const auto& [from, to] = *placed[0].leader;
+  EXPECT_LT(std::hypot(from.x - 40, from.y - 20), 0.8);
+  EXPECT_LT(distance(to, placed[0].box), 0.4);
+}
+
+TEST(LabelPlacer, KeepsTheWiderOfTwoSideGaps) {
+  LabelPlacer placer(type(), {{0, 0, 80, 20}, {}, 0});
+  placer.reserve({20, 8, 10, 3}, 2.5);
+  EXPECT_FALSE(placer.cost_of({32, 8, 10, 3}));
+  EXPECT_TRUE(placer.cost_of({32.6, 8, 10, 3}));
+  EXPECT_TRUE(placer.cost_of({32, 12, 10, 3}));  // on another line
+}
+
 TEST(LabelRegion, HoldsABoxOnlyWithAllItsCornersInTheDome) {
   const LabelRegion dome{{0, 0, 100, 50}, {50, 50}, 50};
   EXPECT_TRUE(dome.contains({45, 10, 10, 5}));

@@ -24,9 +24,16 @@ void draw_ground(const DomeView& view, const Theme& theme, std::vector<Mark>& ou
   out.push_back(Fill{view.outline_path(), theme.lap});
   Path within = Path::arc(view.middle(), view.unit(), 0, 180);
   out.push_back(Fill{within.close(), theme.sky});
-  // Its edge, where a copy has lost the tone.
-  out.push_back(
-      Stroke{Path::arc(view.middle(), view.unit(), 0, 180), 0.13, theme.blue_soft, {}, false});
+}
+
+/// Where the tone begins, for copies that have lost it; it makes way for names.
+void add_lap_edge(SkyChart& chart, const DomeView& view) {
+  std::vector<Point> arc;
+  for (int i = 0; i <= 60; ++i) {
+    const Angle a = Angle::from_degrees(3 * i);
+    arc.push_back({view.middle().x + view.unit() * cos(a), view.middle().y - view.unit() * sin(a)});
+  }
+  chart.add_guide({arc}, {0.13, chart.context().theme.blue_soft, {}, 0.1});
 }
 
 void draw_frame(const DomeView& view, const BlockContext& context, std::vector<Mark>& out) {
@@ -173,6 +180,7 @@ DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const B
                     const Horizontal& place = evening.stars[static_cast<std::size_t>(star)];
                     return place.altitude.degrees() < -25 ? std::nullopt : view.project(place);
                   });
+  add_lap_edge(chart, view);
   add_zenith(chart, view);
   add_bodies(chart, view);
   add_altitudes(chart, view);

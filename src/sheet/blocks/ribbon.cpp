@@ -63,7 +63,7 @@ void add_below_horizon(SkyChart& chart, const RibbonView& view) {
     request.forms = {form};
     // Level with the equator's neighbourhood first, then farther off; all of it under the horizon.
     for (const double declination : {-6.0, 6.0, -12.0, 12.0, -20.0, 20.0, -30.0, 30.0, -36.0, 36.0})
-      for (double h = 110; h + half_degrees < 179; h += 4) {
+      for (double h = 70; h + half_degrees < 179; h += 2) {
         bool below = true;
         for (const double end : {-1.0, 1.0})
           below = below && horizontal_of(Angle::from_degrees(side * (h + end * half_degrees)),
@@ -74,8 +74,8 @@ void add_below_horizon(SkyChart& chart, const RibbonView& view) {
               view.at(Angle::from_degrees(side * h), Angle::from_degrees(declination)));
       }
     if (request.places.empty()) continue;
-    request.importance = 880;
-    request.cost_limit = 9;
+    request.importance = 955;
+    request.cost_limit = 16;
     request.side_gap_mm = 2;
     request.ink = context.theme.blue;
     chart.wish(std::move(request));
