@@ -56,7 +56,7 @@ CLI::App* add_press(CLI::App& app, PressArguments& a) {
   command->add_option("--jobs", a.jobs, "Threads (default: one for each core)")
       ->check(CLI::Range(1, 1024));
   command->add_option("--share", a.share, "K/N: part K of N of the sites, for array jobs");
-  command->add_flag("--again", a.again, "Press what is already there");
+  command->add_flag("--again", a.again, "Press what is already there; this version always does");
   command->add_flag("--verbose", a.verbose,
                     "Tell of every file, and what found no room on its pages");
   return command;

@@ -1,10 +1,12 @@
 // press: orders to PDFs. On a terminal a line of progress is kept; in a pipe only what went wrong
 // is told.
+#include <algorithm>
 #include <csignal>
 #include <fmt/format.h>
 #include <unistd.h>
 
 #include "cli/commands.hpp"
+#include "run/characters.hpp"
 #include "run/press.hpp"
 #include "run/workers.hpp"
 
@@ -62,9 +64,21 @@ class TerminalProgress : public Progress {
   std::size_t files_ = 0, done_ = 0;
 };
 
+/// Options that leave nothing to press are no mistake of form, and yet a surprise.
+std::string why_nothing(const PressReport& report) {
+  if (report.rows.empty()) return "nothing to press: no site falls to this part";
+  const bool one_reason =
+      std::all_of(report.rows.begin(), report.rows.end(),
+                  [&](const ReportRow& row) { return row.reason == report.rows[0].reason; });
+  return "nothing to press: " +
+         (one_reason ? report.rows[0].reason : "the order has no file for what was asked");
+}
+
 }  // namespace
 
 ExitCode run_press(const PressArguments& arguments) {
+  if (arguments.out.empty())  // an unset variable of a script, not the folder one stands in
+    throw CommandLineError("--out: expected the name of a folder");
   PressOptions options;
   options.out = arguments.out;
   options.site = arguments.site;
@@ -79,7 +93,10 @@ ExitCode run_press(const PressArguments& arguments) {
     if (arguments.year) change_year(orders.back(), *arguments.year);
   }
   if (options.site) check_site(orders, *options.site);
-  for (const Order& order : orders) say_doubts(doubts(order), false);
+  for (const Order& order : orders) {
+    say_doubts(doubts(order), false);
+    say_doubts(missing_characters(order), false);
+  }
 
   std::signal(SIGINT, stop_at_signal);
   std::signal(SIGTERM, stop_at_signal);
@@ -92,6 +109,7 @@ ExitCode run_press(const PressArguments& arguments) {
   if (progress.terminal() || arguments.verbose)
     say(fmt::format("{} {} written below {}", pressed, pressed == 1 ? "file" : "files",
                     options.out.string()));
+  if (pressed + failed == 0 && !stop_requested()) say(why_nothing(report));
   if (failed > 0)
     say(fmt::format("{} {} failed; see the report in {}", failed, failed == 1 ? "file" : "files",
                     arguments.out));

@@ -3,6 +3,7 @@
 
 #include "cli/commands.hpp"
 #include "order/outputs.hpp"
+#include "run/characters.hpp"
 #include "run/printable.hpp"
 
 namespace duskleaf {
@@ -61,9 +62,10 @@ ExitCode run_proof(const ProofArguments& arguments) {
        arguments.files) {  // a wrong order does not hide the mistakes of the next
     try {
       const Order order = read_order(file);
-      const std::vector<Doubt> later = unprinted(order);
+      const std::vector<Doubt> later = unprinted(order), missing = missing_characters(order);
       print(summary(order));
       say_doubts(doubts(order), true);
+      say_doubts(missing, true);
       say_doubts(later, true);
     } catch (const OrderError& error) {
       say(error.what());

@@ -11,6 +11,7 @@
 
 #include "ink/pdf.hpp"
 #include "order/outputs.hpp"
+#include "run/characters.hpp"
 #include "run/printable.hpp"
 #include "run/whole_file.hpp"
 #include "run/workers.hpp"
@@ -90,14 +91,6 @@ void check_apart(const PressReport& report, const std::vector<Order>& orders) {
               site.where,
               fmt::format("{} would also be written by {}", row.file, first->second->order),
               "press the two orders into different folders, or give the site another id");
-  }
-}
-
-std::unique_ptr<TypeSet> load_type(const Order::Fonts& fonts) {
-  try {
-    return std::make_unique<TypeSet>(TypeSet::Files{fonts.regular, fonts.bold, fonts.italic});
-  } catch (const std::runtime_error& error) {
-    throw FileError(error.what());
   }
 }
 
@@ -182,12 +175,12 @@ PressReport press_orders(const std::vector<Order>& orders, const PressOptions& o
   for (const Order& order : orders) check_printable(order);
   Plan plan = make_plan(orders, options);
   check_apart(plan.report, orders);
-  check_writable_folder(options.out);
   std::size_t files = 0;
   for (const SiteTask& task : plan.tasks) files += task.jobs.size();
-  progress.begin(files);
 
-  Press press(orders, options, progress, plan);
+  Press press(orders, options, progress, plan);  // throws for a font that cannot be set
+  check_writable_folder(options.out);
+  progress.begin(files);
   run_tasks(plan.tasks.size(), options.jobs,
             [&](std::size_t i) { press.press_site(plan.tasks[i]); });
 

@@ -17,6 +17,16 @@ bool is_printed(const Publication& publication) {
   return publication.template_is_path || is_printable_template(publication.template_name);
 }
 
+/// A template file that cannot be read is told where the order names it.
+void check_template_file(const Order& order, const Publication& publication) {
+  try {
+    check_template(order, publication);
+  } catch (const FileError& error) {
+    throw OrderError(publication.where, error.what(),
+                     "expected a page template, named relative to the order");
+  }
+}
+
 }  // namespace
 
 std::vector<Doubt> unprinted(const Order& order) {
@@ -28,7 +38,7 @@ std::vector<Doubt> unprinted(const Order& order) {
          true});
   for (const Publication& publication : order.publications) {
     if (is_printed(publication))
-      check_template(order, publication);
+      check_template_file(order, publication);
     else
       list.push_back({publication.where,
                       fmt::format("the template {} is not printed yet by this version",

@@ -125,5 +125,60 @@ TEST(Press, WarnsOfAPlaceThatLooksWrong) {
             "longitude's sign right (east positive)?\n");
 }
 
+// The bug: emoji and such came out as question marks, and nobody was told.
+TEST(Press, WarnsOfCharactersThatTheFontsLack) {
+  const ScratchFolder folder;
+  folder.write("o.yaml",
+               "year: 2027\npublications: [{ template: monthly-handout, months: [1] }]\n"
+               "sites: [{ id: a, name: \"Ó Πάρνηθα, Лес?\", latitude: 40, longitude: 5, time_zone: "
+               "Europe/Paris, notes: { 1: \"Come! \U0001F31F 星 \U0001F31F\" } }]\n");
+  const std::string warning =
+      "o.yaml:3:15: warning: a: the fonts lack \U0001F31F 星; each is printed as a question mark\n";
+  for (const char* command : {"proof", "press"}) {
+    const Answer answer = run(folder, {command, "o.yaml"});
+    EXPECT_EQ(answer.code, 0);
+    EXPECT_EQ(answer.err, warning);
+  }
+}
+
+// The bug: a year file and --month gave no file, no word and success.
+TEST(Press, SaysWhyNothingIsPressed) {
+  const ScratchFolder folder;
+  folder.write(
+      "o.yaml",
+      "year: 2027\npublications: [{ template: monthly-handout, files: year }]\n"
+      "sites: [{ id: a, name: A, latitude: 40, longitude: 5, time_zone: Europe/Paris }]\n");
+  const Answer answer = run(folder, {"press", "o.yaml", "--month", "3"});
+  EXPECT_EQ(answer.code, 0);
+  EXPECT_EQ(answer.err,
+            "nothing to press: one file holds the whole year; press it without --month\n");
+  EXPECT_EQ(run(folder, {"press", "o.yaml", "--share", "2/2"}).err,
+            "nothing to press: no site falls to this part\n");
+}
+
+TEST(Press, NeedsAFolderWithAName) {
+  const ScratchFolder folder;
+  folder.write("o.yaml", three_sites);
+  const Answer answer = run(folder, {"press", "o.yaml", "-o", "", "--month", "3"});
+  EXPECT_EQ(answer.code, 2);
+  EXPECT_EQ(answer.err, "duskleaf: --out: expected the name of a folder\n");
+  EXPECT_THAT(files_below(folder.path().string()), ElementsAre("o.yaml"));
+}
+
+TEST(Press, MissingTemplateIsToldWhereItIsNamed) {
+  const ScratchFolder folder;
+  folder.write(
+      "o.yaml",
+      "year: 2027\npublications:\n  - template: mine.yaml\n"
+      "sites: [{ id: a, name: A, latitude: 40, longitude: 5, time_zone: Europe/Paris }]\n");
+  for (const char* command : {"proof", "press"}) {
+    const Answer answer = run(folder, {command, "o.yaml"});
+    EXPECT_EQ(answer.code, 3);
+    EXPECT_EQ(answer.err,
+              "o.yaml:3:5: mine.yaml: there is no such file; expected a page template, named "
+              "relative to the order\n");
+  }
+}
+
 }  // namespace
 }  // namespace duskleaf
