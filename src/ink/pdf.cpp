@@ -116,6 +116,13 @@ void add_bookmarks(QPDF& pdf, const SheetDocument& document) {
   pdf.getRoot().replaceKey("/Outlines", outlines);
 }
 
+/// Metadata and bookmarks are single lines.
+std::string one_line(std::string text) {
+  for (char& c : text)
+    if (static_cast<unsigned char>(c) < 0x20 || c == 0x7F) c = ' ';
+  return text;
+}
+
 std::string xml(std::string_view text) {
   std::string escaped;
   for (const char c : text) {
@@ -125,7 +132,7 @@ std::string xml(std::string_view text) {
       escaped += "&lt;";
     else if (c == '>')
       escaped += "&gt;";
-    else if (static_cast<unsigned char>(c) >= 0x20)
+    else
       escaped += c;
   }
   return escaped;
@@ -134,7 +141,7 @@ std::string xml(std::string_view text) {
 void add_metadata(QPDF& pdf, const SheetDocument& document) {
   Object info = Object::newDictionary();
   const auto put = [&](const char* key, const std::string& value) {
-    if (!value.empty()) info.replaceKey(key, text_string(value));
+    if (!value.empty()) info.replaceKey(key, text_string(one_line(value)));
   };
   put("/Title", document.title);
   put("/Author", document.author);
@@ -154,7 +161,7 @@ void add_metadata(QPDF& pdf, const SheetDocument& document) {
                            const std::string& value) {
     if (!value.empty())
       packet += fmt::format("<dc:{0}><rdf:{1}><rdf:li{2}>{3}</rdf:li></rdf:{1}></dc:{0}>\n", name,
-                            list, attribute, xml(value));
+                            list, attribute, xml(one_line(value)));
   };
   element("title", "Alt", " xml:lang=\"x-default\"", document.title);
   element("creator", "Seq", "", document.author);

@@ -114,6 +114,19 @@ TEST(PdfDocument, NamesOutsideAsciiSurvive) {
             "Μάρτιος");
 }
 
+// The bug: a site's name of two lines put a line break into the document's title.
+TEST(PdfDocument, MetadataAreSingleLines) {
+  SheetDocument document = busy_document();
+  document.title = "Tern\nPoint";
+  document.author = "A\tB";
+  ReadPdf read(document);
+  QPDFObjectHandle info = read.pdf.getTrailer().getKey("/Info");
+  EXPECT_EQ(info.getKey("/Title").getUTF8Value(), "Tern Point");
+  EXPECT_EQ(info.getKey("/Author").getUTF8Value(), "A B");
+  EXPECT_NE(ReadPdf::data(read.pdf.getRoot().getKey("/Metadata")).find(">Tern Point<"),
+            std::string::npos);
+}
+
 TEST(PdfDocument, BookmarksLeadToTheirPages) {
   SheetDocument document = document_of({});
   document.sheets = {{210, 297, "March", {}}, {210, 297, "", {}}, {297, 210, "April", {}}};
