@@ -1,6 +1,7 @@
 // What is allowed and yet looks like a slip. The Sun's mean time at a longitude is longitude / 15
 // hours from Greenwich's; civil clocks seldom stray three hours from it (common practice).
 #include <algorithm>
+#include <chrono>
 #include <cmath>
 #include <fmt/format.h>
 
@@ -39,6 +40,23 @@ void doubt_place(const Site& site, const Span& span, std::vector<Doubt>& out) {
                                site.place.id)});
 }
 
+/// "9:30" for half past nine in the evening is a slip of those who read twelve hours.
+void doubt_chart_hours(const Site& site, std::vector<Doubt>& out) {
+  using std::chrono::hours;
+  const auto& all = site.place.chart_hours;
+  const auto by_day = std::find_if(all.begin(), all.end(), [](const ChartHour& hour) {
+    return hour.after_midnight && *hour.after_midnight >= hours(5) &&
+           *hour.after_midnight < hours(14);
+  });
+  if (by_day == all.end()) return;
+  const auto minutes = by_day->after_midnight->count();
+  std::string text = fmt::format("{}: chart_hour {:02}:{:02} is by day", site.place.id,
+                                 minutes / 60, minutes % 60);
+  if (minutes < 12 * 60)
+    text += fmt::format("; is {:02}:{:02} meant?", minutes / 60 + 12, minutes % 60);
+  out.push_back({site.where, text});
+}
+
 void doubt_dates(const Site& site, const Span& span, std::vector<Doubt>& out) {
   for (const Session& session : site.sessions) {
     const auto* dates = std::get_if<std::vector<Date>>(&session.when);
@@ -65,6 +83,7 @@ std::vector<Doubt> doubts(const Order& order) {
     list.push_back({walled->where, walled->place.id + ": the skyline is not printed yet", true});
   for (const Site& site : order.sites) {
     doubt_place(site, order.span, list);
+    doubt_chart_hours(site, list);
     doubt_dates(site, order.span, list);
   }
   return list;

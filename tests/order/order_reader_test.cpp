@@ -179,6 +179,11 @@ TEST(Doubts, NameWhatLooksWrong) {
   EXPECT_THAT(texts("year: 2027\npublications: [{ template: monthly-handout }]\n"
                     "sites: [{ id: a, name: A, latitude: 0, longitude: 0, time_zone: UTC }]\n"),
               ElementsAre("3: a: latitude 0, longitude 0 is in the sea; is the place filled in?"));
+  EXPECT_THAT(texts(with_site_lines("    chart_hour: \"9:30\"\n")),
+              ElementsAre("5: reed-lake: chart_hour 09:30 is by day; is 21:30 meant?"));
+  EXPECT_THAT(texts(with_site_lines("    chart_hour: [dusk, 20:00, 20:00, 21:00, 22:00, 23:00, "
+                                    "4:59, 12:05, 14:00, 20:00, 19:00, 18:00]\n")),
+              ElementsAre("5: reed-lake: chart_hour 12:05 is by day"));
   EXPECT_THAT(texts(with_site_lines("    skyline: [[0, 3]]\n")),
               ElementsAre("5: reed-lake: the skyline is not printed yet"));
   EXPECT_THAT(texts(with_publications("  - { template: monthly-handout, binding: edge }\n")),
