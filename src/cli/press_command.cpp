@@ -110,6 +110,9 @@ ExitCode run_press(const PressArguments& arguments) {
     say(fmt::format("{} {} written below {}", pressed, pressed == 1 ? "file" : "files",
                     options.out.string()));
   if (pressed + failed == 0 && !stop_requested()) say(why_nothing(report));
+  if (const int crowded = report.with_notes(); crowded > 0)
+    say(fmt::format("{} {} a page whose words hardly fit; see the report in {}", crowded,
+                    crowded == 1 ? "file has" : "files have", arguments.out));
   if (failed > 0)
     say(fmt::format("{} {} failed; see the report in {}", failed, failed == 1 ? "file" : "files",
                     arguments.out));

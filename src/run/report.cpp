@@ -16,6 +16,12 @@ std::string cell(const std::string& text) {
   return quoted + '"';
 }
 
+std::string reason(const ReportRow& row) {
+  std::string text = row.reason;
+  for (const std::string& note : row.notes) text.append(text.empty() ? "" : "; ").append(note);
+  return text;
+}
+
 std::string status_name(ReportRow::Status status) {
   switch (status) {
     case ReportRow::Status::pressed:
@@ -35,11 +41,16 @@ int PressReport::count(ReportRow::Status status) const {
       rows.begin(), rows.end(), [&](const ReportRow& row) { return row.status == status; }));
 }
 
+int PressReport::with_notes() const {
+  return static_cast<int>(std::count_if(rows.begin(), rows.end(),
+                                        [](const ReportRow& row) { return !row.notes.empty(); }));
+}
+
 std::string report_csv(const PressReport& report) {
   std::string text = "order,site,publication,file,status,reason\n";
   for (const ReportRow& row : report.rows)
     text += cell(row.order) + ',' + cell(row.site) + ',' + cell(row.publication) + ',' +
-            cell(row.file) + ',' + status_name(row.status) + ',' + cell(row.reason) + '\n';
+            cell(row.file) + ',' + status_name(row.status) + ',' + cell(reason(row)) + '\n';
   return text;
 }
 

@@ -180,5 +180,21 @@ TEST(Press, MissingTemplateIsToldWhereItIsNamed) {
   }
 }
 
+TEST(Press, SaysThatOwnWordsHardlyFit) {
+  const ScratchFolder folder;
+  std::string note;
+  for (int i = 0; i < 300; ++i) note += "Bring a blanket. ";
+  folder.write("o.yaml",
+               "year: 2027\npublications: [{ template: monthly-handout, months: [1] }]\n"
+               "sites: [{ id: a, name: A, latitude: 40, longitude: 5, time_zone: Europe/Paris, "
+               "notes: { 1: \"" +
+                   note + "\" } }]\n");
+  const Answer answer = run(folder, {"press", "o.yaml"});
+  EXPECT_EQ(answer.code, 0);
+  EXPECT_EQ(answer.err, "1 file has a page whose words hardly fit; see the report in out\n");
+  EXPECT_THAT(bytes_of(folder.file("out/report.csv")),
+              HasSubstr(",pressed,a page is too full by "));
+}
+
 }  // namespace
 }  // namespace duskleaf

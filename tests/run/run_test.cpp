@@ -70,6 +70,19 @@ TEST(Workers, DoEachTaskOnce) {
   run_tasks(0, 4, [](std::size_t) { FAIL() << "there is no task"; });
 }
 
+// The bug: only --verbose told of a page that was too full.
+TEST(Report, GivesThePressedFilesNotes) {
+  PressReport report;
+  report.rows.push_back(
+      {"o.yaml", "a", "h", "a/h.pdf", ReportRow::Status::pressed, "", 0, {"one", "two"}});
+  report.rows.push_back({"o.yaml", "b", "h", "b/h.pdf", ReportRow::Status::pressed, "", 9, {}});
+  EXPECT_EQ(report.with_notes(), 1);
+  EXPECT_EQ(report_csv(report),
+            "order,site,publication,file,status,reason\n"
+            "o.yaml,a,h,a/h.pdf,pressed,one; two\n"
+            "o.yaml,b,h,b/h.pdf,pressed,\n");
+}
+
 TEST(Report, QuotesWhatCsvMust) {
   PressReport report;
   report.rows.push_back(
