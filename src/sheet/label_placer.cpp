@@ -220,7 +220,7 @@ std::optional<PlacedLabel> LabelPlacer::seat(const LabelRequest& request) const 
       const Box box{x, y, size.width, size.height};
       const auto cost = cost_of(box, least - extra, request.side_gap_mm);
       if (!cost || *cost + extra >= least) return;
-      if (request.nearest && nearer_to_another(box, request)) return;
+      if (request.nearest && nearer_to_another(box, request, false)) return;
       least = *cost + extra;
       best = box;
     };
@@ -270,14 +270,16 @@ std::vector<PlacedLabel> LabelPlacer::place(const std::vector<LabelRequest>& req
   return placed;
 }
 
-bool LabelPlacer::nearer_to_another(const Box& box, const LabelRequest& request) const {
+bool LabelPlacer::nearer_to_another(const Box& box, const LabelRequest& request,
+                                    bool on_leader) const {
   const auto gap_to = [&](Point p, double radius) {
     return std::hypot(std::max({box.x - p.x, 0.0, p.x - box.right()}),
                       std::max({box.y - p.y, 0.0, p.y - box.bottom()})) -
            radius;
   };
   constexpr double margin = 0.5;
-  const double own = gap_to(request.point, request.clearance_mm);
+  const double own =
+      on_leader ? request.leader_room_mm : gap_to(request.point, request.clearance_mm);
   bool nearer = false;
   for_cells(grown(box, std::max(0.0, own) + margin + largest_dot_), [&](std::size_t cell) {
     for (const auto i : cells_[cell].dots) {
@@ -331,7 +333,8 @@ std::optional<PlacedLabel> LabelPlacer::seat_with_leader(const LabelRequest& req
         return Point{own.x + mm / length * (near.x - own.x),
                      own.y + mm / length * (near.y - own.y)};
       };
-      if (!leader_is_clear(along(start), along(end), own)) continue;
+      if (nearer_to_another(box, request, true) || !leader_is_clear(along(start), along(end), own))
+        continue;
       least = *cost + far;
       best = PlacedLabel{0, form, box, {}, std::pair{along(start), along(end)}};
     }

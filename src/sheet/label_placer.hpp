@@ -38,7 +38,8 @@ struct LabelRequest {
   double side_gap_mm =
       0.55;              // free room to its left and right, so that two names do not read as one
   bool nearest = false;  // no other hard dot may stand as near to the label as its own
-  bool leader = false;   // with no seat beside its point, it may stand off with a leader line
+  double leader_room_mm = 0;  // on a leader line: how far (and 0.5 mm) from other hard dots
+  bool leader = false;        // with no seat beside its point, it may stand off with a leader line
 };
 
 struct PlacedLabel {
@@ -94,7 +95,7 @@ class LabelPlacer {
   void for_cells(const Box&, Visit) const;
   std::optional<PlacedLabel> seat(const LabelRequest&) const;
   std::optional<PlacedLabel> seat_with_leader(const LabelRequest&, std::size_t form) const;
-  bool nearer_to_another(const Box&, const LabelRequest&) const;
+  bool nearer_to_another(const Box&, const LabelRequest&, bool on_leader) const;
   bool leader_is_clear(Point from, Point to, Point own) const;
   std::vector<Text> set(const LabelForm&, const Box&, Ink) const;
 

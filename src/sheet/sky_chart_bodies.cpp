@@ -13,6 +13,7 @@ void SkyChart::wish_for_body(std::vector<Mark> marks, LabelRequest request) {
   for (Mark& mark : marks) bodies_.push_back({std::move(mark), wishes_.size()});
   request.nearest = true;
   request.leader = true;
+  request.leader_room_mm = 1.5;
   request.ink = context_.theme.black;
   wish(std::move(request));
 }

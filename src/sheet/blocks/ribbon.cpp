@@ -63,7 +63,7 @@ void add_below_horizon(SkyChart& chart, const RibbonView& view) {
     request.forms = {form};
     // Level with the equator's neighbourhood first, then farther off; all of it under the horizon.
     for (const double declination : {-6.0, 6.0, -12.0, 12.0, -20.0, 20.0, -30.0, 30.0, -36.0, 36.0})
-      for (double h = 70; h + half_degrees < 179; h += 2) {
+      for (double h = 70; h + half_degrees < 179; h += 5) {
         bool below = true;
         for (const double end : {-1.0, 1.0})
           below = below && horizontal_of(Angle::from_degrees(side * (h + end * half_degrees)),
