@@ -18,7 +18,9 @@ std::string cell(const std::string& text) {
 
 std::string reason(const ReportRow& row) {
   std::string text = row.reason;
-  for (const std::string& note : row.notes) text.append(text.empty() ? "" : "; ").append(note);
+  for (auto note = row.notes.begin(); note != row.notes.end(); ++note)
+    if (std::find(row.notes.begin(), note, *note) == note)  // twelve months may say the same
+      text.append(text.empty() ? "" : "; ").append(*note);
   return text;
 }
 

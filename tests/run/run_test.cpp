@@ -74,7 +74,7 @@ TEST(Workers, DoEachTaskOnce) {
 TEST(Report, GivesThePressedFilesNotes) {
   PressReport report;
   report.rows.push_back(
-      {"o.yaml", "a", "h", "a/h.pdf", ReportRow::Status::pressed, "", 0, {"one", "two"}});
+      {"o.yaml", "a", "h", "a/h.pdf", ReportRow::Status::pressed, "", 0, {"one", "two", "one"}});
   report.rows.push_back({"o.yaml", "b", "h", "b/h.pdf", ReportRow::Status::pressed, "", 9, {}});
   EXPECT_EQ(report.with_notes(), 1);
   EXPECT_EQ(report_csv(report),
