@@ -130,8 +130,10 @@ std::vector<ConstellationEvening> constellation_evenings(
     row.circumpolar = times.circumpolar;
     row.never_rises = times.never_rises;
     row.half_never_sets = times.half_never_sets;
-    for (std::size_t m = 0; m < 12; ++m)
-      row.evening_sight[m] = evenings[m] && 2 * stand_higher(sight_altitude, *evenings[m]) >= count;
+    for (std::size_t m = 0; m < 12; ++m) {
+      const std::optional<Angle>& evening = evenings[m];
+      row.evening_sight[m] = evening && 2 * stand_higher(sight_altitude, *evening) >= count;
+    }
     rows.push_back(row);
   }
   return rows;

@@ -24,8 +24,9 @@ absl::Time to_absl(Ut t) {
 
 Ut from_absl(absl::Time t) {
   const std::int64_t whole = absl::ToUnixSeconds(t);
+  const std::int64_t whole_days = whole / 86400;
   const double rest = absl::ToDoubleSeconds(t - absl::FromUnixSeconds(whole));
-  return Ut(Days(unix_epoch_from_j2000 + static_cast<double>(whole / 86400)) +
+  return Ut(Days(unix_epoch_from_j2000 + static_cast<double>(whole_days)) +
             Days(Seconds(static_cast<double>(whole % 86400) + rest)));
 }
 
