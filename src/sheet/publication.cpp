@@ -148,6 +148,12 @@ std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& pag
   return marks;
 }
 
+/// A template's title is a key of the words, or a user's own text.
+std::string own_or_known(const Words& words, const std::string& text,
+                         std::initializer_list<std::pair<std::string_view, std::string>> values) {
+  return words.has(text) ? words(text, values) : text;
+}
+
 }  // namespace
 
 SheetDocument make_handout(const Order& order, const Site& site, const Publication& publication,
@@ -167,8 +173,10 @@ SheetDocument make_handout(const Order& order, const Site& site, const Publicati
   };
   std::string period = month_of_index(month_indices.front());
   if (month_indices.size() > 1) period += " – " + month_of_index(month_indices.back());
-  document.title = words(page_template.title, {{"site", site.name}, {"period", period}});
-  document.subject = words(page_template.subject, {{"site", site.name}, {"period", period}});
+  document.title =
+      own_or_known(words, page_template.title, {{"site", site.name}, {"period", period}});
+  document.subject =
+      own_or_known(words, page_template.subject, {{"site", site.name}, {"period", period}});
   document.author = group;
   document.language = order.language;
   for (int index : month_indices) {
@@ -178,8 +186,8 @@ SheetDocument make_handout(const Order& order, const Site& site, const Publicati
       Sheet sheet{width, height, {}, draw_page(context, page_template, page, width, height)};
       if (!page.bookmark.empty()) {
         const auto [y, m] = year.span.month(index);
-        sheet.bookmark =
-            words(page.bookmark, {{"month", words.month_name(m)}, {"year", std::to_string(y)}});
+        sheet.bookmark = own_or_known(
+            words, page.bookmark, {{"month", words.month_name(m)}, {"year", std::to_string(y)}});
       }
       document.sheets.push_back(std::move(sheet));
     }

@@ -168,12 +168,13 @@ TypeSet::TypeSet(const Files& files) : impl_(std::make_unique<Impl>()) {
     at(Face::bold) = built_in("fonts/bold");
     at(Face::italic) = built_in("fonts/italic");
     at(Face::light) = built_in("fonts/light");
-    at(Face::condensed) = built_in("fonts/condensed");
-    at(Face::condensed_bold) = built_in("fonts/condensed-bold");
   } else {
     faces.fill(Font::read(files.regular));
   }
-  if (!files.bold.empty()) at(Face::bold) = at(Face::condensed_bold) = Font::read(files.bold);
+  // Tables are laid out for narrow digits and words: a wide face would run its columns together.
+  at(Face::condensed) = built_in("fonts/condensed");
+  at(Face::condensed_bold) = built_in("fonts/condensed-bold");
+  if (!files.bold.empty()) at(Face::bold) = Font::read(files.bold);
   if (!files.italic.empty()) at(Face::italic) = Font::read(files.italic);
   for (std::size_t i = 0; i < face_count; ++i) {
     const auto same =

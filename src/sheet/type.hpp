@@ -23,10 +23,10 @@ struct SetGlyph {
 };
 
 /// The fonts of a document, measured. Thread-safe for reading. Faces named in the order replace the
-/// built-in ones; once a regular face is named, bold and italic that are not are set in it, and
-/// light and condensed too (condensed bold in the bold). Digits have equal widths; there are no
-/// ligatures; base letter and combining accent join where Unicode has the letter; control
-/// characters count as spaces, and invisible ones (soft hyphens, joiners) are left out.
+/// built-in ones; once a regular face is named, light, and bold and italic that are not named, are
+/// set in it. The condensed faces of the tables stay the built-in ones. Digits have equal widths;
+/// there are no ligatures; base letter and combining accent join where Unicode has the letter;
+/// control characters count as spaces, and invisible ones (soft hyphens, joiners) are left out.
 class TypeSet {
  public:
   struct Files {

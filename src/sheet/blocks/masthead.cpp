@@ -98,19 +98,19 @@ double draw_masthead(const BlockContext& c, const BlockOptions& options, const B
   const std::string& group = c.site.masthead.group;
   const auto row = [&](const std::string& text, const Style& style, double pitch) {
     if (text.empty()) return;
-    Style fit = style;
-    const double room = right - left_end;
-    if (set.width(text, fit) > room)
-      fit.size_pt = std::max(style.size_pt * room / set.width(text, fit), 7.0);
-    set.right(right, baseline, text, fit);
-    baseline += pitch;
+    // A long name runs over several lines beside the month.
+    for (const std::string& piece :
+         break_lines(c.type, text, style.face, style.size_pt, right - left_end)) {
+      set.right(right, baseline, piece, style);
+      baseline += pitch;
+    }
   };
   row(group.empty() ? c.site.name : group, {Face::bold, 11, c.theme.black}, 4.3);
   row(group.empty() || group == c.site.name ? position(c) : c.site.name + "  ·  " + position(c),
       set.small(), 3.5);
   row(c.site.masthead.contact, set.small(), 3.5);
   const Style charts{Face::regular, 9, c.theme.black};
-  double used = 13.2;
+  double used = std::max(13.2, baseline - area.y - 2.2);
   for (const std::string& text :
        break_lines(c.type, line, charts.face, charts.size_pt, text_room)) {
     set.left(area.x, area.y + used + 3.0, text, charts);
