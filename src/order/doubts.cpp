@@ -52,7 +52,7 @@ void doubt_chart_hours(const Site& site, std::vector<Doubt>& out) {
   const auto minutes = by_day->after_midnight->count();
   std::string text = fmt::format("{}: chart_hour {:02}:{:02} is by day", site.place.id,
                                  minutes / 60, minutes % 60);
-  if (minutes < 12 * 60)
+  if (*by_day->after_midnight < std::chrono::hours(12))
     text += fmt::format("; is {:02}:{:02} meant?", minutes / 60 + 12, minutes % 60);
   out.push_back({site.where, text});
 }
