@@ -94,7 +94,8 @@ void LabelPlacer::for_cells(const Box& box, Visit visit) const {
   };
   for (int r = row(box.y); r <= row(box.bottom()); ++r)
     for (int c = column(box.x); c <= column(box.right()); ++c)
-      visit(static_cast<std::size_t>(r * columns_ + c));
+      visit(static_cast<std::size_t>(r) * static_cast<std::size_t>(columns_) +
+            static_cast<std::size_t>(c));
 }
 
 void LabelPlacer::add_dot(Point centre, double diameter_mm, bool hard) {
