@@ -22,7 +22,7 @@ PieceLayout PieceLayout::covering(double from, double to, double piece_days, int
 
 std::vector<double> PieceLayout::node_times() const {
   std::vector<double> times;
-  times.reserve(static_cast<std::size_t>(pieces * nodes));
+  times.reserve(static_cast<std::size_t>(pieces) * static_cast<std::size_t>(nodes));
   for (int p = 0; p < pieces; ++p)
     for (int k = 0; k < nodes; ++k)
       times.push_back(from + piece_days * (p + 0.5 * (1.0 + node(k, nodes))));
@@ -35,7 +35,7 @@ ChebyshevTable::ChebyshevTable(const PieceLayout& layout,
   for (int p = 0; p < layout.pieces; ++p) {
     slots_.push_back(pieces_.size());
     add_piece(layout.from + layout.piece_days * (p + 0.5), 0.5 * layout.piece_days,
-              values.data() + p * layout.nodes);
+              values.data() + static_cast<std::ptrdiff_t>(p) * layout.nodes);
   }
 }
 

@@ -126,7 +126,7 @@ std::string read_id(const YamlValue& value, std::string_view what) {
     return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || (c >= '0' && c <= '9') || c == '-' ||
            c == '_';
   };
-  const std::string text = read_text(value, what);
+  std::string text = read_text(value, what);
   if (text.size() > 64 || !std::all_of(text.begin(), text.end(), allowed))
     throw OrderError(value.at, fmt::format("{} is {}", what, described(value)),
                      "expected at most 64 letters (a to z), digits, hyphens and underscores");
