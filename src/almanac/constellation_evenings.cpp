@@ -125,7 +125,8 @@ std::vector<ConstellationEvening> constellation_evenings(
       return moment + Days(*difference / (2 * pi) * sidereal_day);
     };
     row.rises = instant(times.rises);
-    if (row.mean_place_rises) row.highest = instant(times.highest);
+    if (row.mean_place_rises || times.rises || times.half_never_sets)
+      row.highest = instant(times.highest);
     row.sets = instant(times.sets);
     row.circumpolar = times.circumpolar;
     row.never_rises = times.never_rises;

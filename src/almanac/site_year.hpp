@@ -104,7 +104,8 @@ struct ConstellationEvening {
   bool mean_place_rises;                   // ever above -34' at this latitude
   std::optional<Ut> rises, highest, sets;  // nearest to the chart's moment, within the sidereal day
                                            // about it; empty where it does not
-                                           // (highest: where the mean place never rises)
+                                           // (highest: where neither the mean place nor
+                                           // half of the stars ever rises)
   bool half_never_sets;                    // half or more of its stars never set: only then may a
                                            // page say "never sets" of an empty `sets`
   bool circumpolar;                        // all stars of its figure never set
