@@ -131,6 +131,7 @@ std::string dark_hours(const BlockContext& c, const Night& night) {
 /// Moon cells: a time where it happens between sunset and sunrise, else whether the Moon is up at
 /// that end of the night.
 std::string moon_cell(const BlockContext& c, const Night& night, bool rise) {
+  if (night.from == night.to) return "–";  // a date that the zone skipped
   const Ut begin = night.sunset.value_or(night.from), end = night.sunrise.value_or(night.to);
   for (Ut t : rise ? night.moonrises : night.moonsets)
     if (t >= begin && t <= end) return c.words.time(c.year.place.zone.civil(t));
