@@ -37,7 +37,34 @@ enum class EventKind {
   december_solstice,
   perihelion,
   aphelion,
-  clock_change
+  clock_change,
+  opposition,
+  conjunction,
+  inferior_conjunction,
+  superior_conjunction,
+  stationary_then_retrograde,
+  stationary_then_direct,
+  greatest_elongation_east,
+  greatest_elongation_west,
+  closest_approach,
+  occultation_disappears,
+  occultation_reappears,
+  transit_begins,
+  transit_greatest,
+  transit_ends,
+  lunar_eclipse_penumbral_begins,
+  lunar_eclipse_partial_begins,
+  lunar_eclipse_total_begins,
+  lunar_eclipse_greatest,
+  lunar_eclipse_total_ends,
+  lunar_eclipse_partial_ends,
+  lunar_eclipse_penumbral_ends,
+  solar_eclipse_partial_begins,
+  solar_eclipse_central_begins,
+  solar_eclipse_greatest,
+  solar_eclipse_central_ends,
+  solar_eclipse_partial_ends,
+  shower_peak
 };
 std::string event_name(EventKind);  // "civil-dawn"
 
@@ -45,11 +72,13 @@ struct Event {
   EventKind kind;
   Body body;  // what it is of; the Earth's seasons and apsides carry Body::sun, clock changes too
   Ut at;
-  std::optional<double> value;  // km, au, hours: see event_unit
+  std::optional<double> value;  // km, au, hours, degrees: see event_unit
+  std::string_view subject =
+      {};  // where it is of more than a body: "moon+venus", "total", "PER"; text that never dies
 };
-/// What the body column says: "sun", "moon", "earth", "site".
+/// What the body column says: "sun", "moon", "earth", "site", or the event's subject.
 std::string_view event_body(const Event&);
-/// "km", "au", "h" or empty.
+/// "km", "au", "h", "deg" or empty.
 std::string_view event_unit(EventKind);
 
 /// Where an observer stands: geodetic WGS 84; longitude positive east. Elevation enters the
@@ -59,8 +88,8 @@ struct Observer {
   double elevation_m = 0.0;
 };
 
-/// Everything in [from, to) that is the same everywhere: phases, seasons, apsides; in order of
-/// time.
+/// Phases, seasons and apsides in [from, to), the same everywhere; in order of time. What else is
+/// the same everywhere: planet_configurations, closest_approaches, lunar_eclipses, shower_peaks.
 std::vector<Event> global_events(const YearEphemeris&, Ut from, Ut to);
 /// Rise, set, transit of Sun and Moon and the three twilights at a site in [from, to), in order of
 /// time.

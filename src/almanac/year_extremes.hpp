@@ -1,0 +1,31 @@
+#pragma once
+
+#include <optional>
+#include <vector>
+
+#include "almanac/site_year.hpp"
+
+namespace duskleaf {
+
+/// A date and what stands on it.
+struct DayExtreme {
+  Date date;
+  Ut at;        // of the rise or set
+  Days length;  // of the day or night; 0 for a single instant
+};
+struct DateSpan {
+  Date first, last;                // both included
+  bool begins_before, ends_after;  // it reaches out of the year
+};
+
+/// A site's Sun over the year. Empty where the Sun does not rise or set on every date.
+struct YearExtremes {
+  std::optional<DayExtreme> earliest_sunset, latest_sunset, earliest_sunrise, latest_sunrise;
+  std::optional<DayExtreme> longest_day, shortest_day;
+  std::optional<DayExtreme> longest_night, shortest_night;  // by the date of the evening
+  std::vector<DateSpan> no_astronomical_night;  // evenings' dates: the Sun stays above -18 degrees
+  std::vector<DateSpan> midnight_sun, polar_night;
+};
+YearExtremes year_extremes(const SiteYear&);
+
+}  // namespace duskleaf

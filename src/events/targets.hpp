@@ -1,0 +1,38 @@
+#pragma once
+
+#include <Eigen/Dense>
+#include <span>
+#include <string_view>
+
+#include "events/events.hpp"
+
+namespace duskleaf {
+
+/// Something that the Moon and the planets meet or that the Moon covers.
+struct Target {
+  enum class Sort { body, star, cluster };
+  std::string_view name;  // as the tables spell it: "moon", "venus", "regulus", "pleiades"
+  Sort sort;
+  Body body = Body::moon;                               // of a body
+  int star = -1;                                        // index into stars(), of a star
+  Eigen::Vector3d direction = Eigen::Vector3d::Zero();  // star, cluster: ICRS unit vector, J2000
+  Eigen::Vector3d proper_motion = Eigen::Vector3d::Zero();  // radians per Julian year
+  double magnitude = 0.0;                                   // star, cluster; a planet's changes
+  Angle radius;                                             // of a cluster as the eye sees it
+  bool meets = true;                                        // closest approaches are sought with it
+};
+
+/// In the order of pair names: the Moon, the planets outward, the stars (those that meet: bright
+/// and near the ecliptic; then those that the Moon alone can cover, to V 3.5), the clusters of
+/// Taurus and Cancer.
+std::span<const Target> targets();
+/// Index into targets() of a body or a name; -1 when there is none.
+int target_index(Body);
+int target_index(std::string_view name);
+/// "moon+venus": the names of two targets in the order of targets(). Lives as long as the program.
+std::string_view pair_name(int a, int b);
+/// Geocentric apparent direction, true equator and equinox of date: a unit vector for a star or
+/// cluster (proper motion, aberration; no parallax), au for a body.
+Eigen::Vector3d apparent_direction(const YearEphemeris&, const Target&, Tt);
+
+}  // namespace duskleaf
