@@ -41,6 +41,6 @@ struct SiteHappenings {
   std::vector<SkylineDay> skyline;
   std::vector<Event> events;  // the site's own among these as instants, in order
 };
-SiteHappenings make_site_happenings(const SiteSky&, const SiteYear&, const SkyYear&);
+SiteHappenings make_site_happenings(const YearEphemeris&, const SiteYear&, const SkyYear&);
 
 }  // namespace duskleaf
