@@ -65,7 +65,9 @@ CLI::App* add_press(CLI::App& app, PressArguments& a) {
 CLI::App* add_data(CLI::App& app, DataArguments& a) {
   CLI::App* command = app.add_subcommand("data", "The computed almanac as data");
   command->add_option("FILE", a.file, "Order")->required();
-  command->add_option("--table", a.table, "instants, nights, constellations or planets")
+  command
+      ->add_option("--table", a.table,
+                   "instants, nights, constellations, planets, showers or eclipses")
       ->required();
   command->add_option("--as", a.form, "csv or json")->capture_default_str();
   command->add_option("-o,--out", a.out, "File to write (default: standard output)");

@@ -14,10 +14,6 @@ namespace {
 
 TableName read_table(const std::string& name) {
   if (const auto table = find_table(name)) return *table;
-  if (name == "showers" || name == "eclipses")
-    throw CommandLineError(
-        fmt::format("--table {}: this table is not made yet by this version; expected {}", name,
-                    listed(table_names())));
   const std::string near = nearest_name(name, table_names());
   throw CommandLineError(fmt::format("--table {}: there is no such table; {}", name,
                                      near.empty() ? "expected " + listed(table_names())
@@ -37,16 +33,16 @@ void write_table(const Order& order, const std::optional<std::string>& only, Tab
   const auto [from, to] = ephemeris_span(order.span);
   const YearEphemeris ephemeris(from, to);
   TableWriter writer(out, table, form);
-  const std::vector<Event> global =
-      table == TableName::instants ? global_events(ephemeris, ut_midnight(order.span.first_day()),
-                                                   ut_midnight(order.span.end_day()))
-                                   : std::vector<Event>();
-  writer.add(global_rows(table, global, order.span));
+  const bool happens = table_needs_happenings(table);
+  const SkyYear sky_year = happens ? make_sky_year(ephemeris, order.span) : SkyYear();
+  writer.add(global_rows(table, sky_year, order.span));
   for (const Site& site : order.sites) {
     if (only && site.place.id != *only) continue;
     const SiteYear year = make_site_year(ephemeris, site.place, order.span,
                                          AlmanacParts{table_needs_evenings(table)});
-    writer.add(site_rows(table, ephemeris, year));
+    const SiteHappenings happenings =
+        happens ? make_site_happenings(ephemeris, year, sky_year) : SiteHappenings();
+    writer.add(site_rows(table, ephemeris, year, happenings));
     if (!out) return;  // the reader is gone or the disk is full: the caller tells
   }
   writer.finish();

@@ -8,6 +8,7 @@
 #include "almanac/planets.hpp"
 #include "almanac/time_spans.hpp"
 #include "catalogue/constellations.hpp"
+#include "export/happening_rows.hpp"
 #include "export/tables.hpp"
 
 namespace duskleaf {
@@ -33,6 +34,16 @@ int value_decimals(EventKind kind) {
     case EventKind::perihelion:
     case EventKind::aphelion:
       return 7;
+    case EventKind::opposition:
+      return 5;
+    case EventKind::closest_approach:
+    case EventKind::lunar_eclipse_greatest:
+    case EventKind::solar_eclipse_greatest:
+      return 4;
+    case EventKind::greatest_elongation_east:
+    case EventKind::greatest_elongation_west:
+    case EventKind::shower_peak:
+      return 3;
     case EventKind::clock_change:
       return 2;
     default:
@@ -57,16 +68,20 @@ Row instant_row(const std::string& site, const Event& event, Cell local_time) {
 
 std::vector<Event> in_table_order(std::vector<Event> events) {
   std::stable_sort(events.begin(), events.end(), [](const Event& a, const Event& b) {
-    return a.at != b.at ? a.at < b.at : event_name(a.kind) < event_name(b.kind);
+    if (a.at != b.at) return a.at < b.at;
+    return a.kind != b.kind ? event_name(a.kind) < event_name(b.kind)
+                            : event_body(a) < event_body(b);
   });
   return events;
 }
 
-std::vector<Row> instants(const SiteYear& year) {
+std::vector<Row> instants(const SiteYear& year, const SiteHappenings& happenings) {
   std::vector<Row> rows;
   const Zone& zone = year.place.zone;
   const Date first = year.span.first_day(), end = year.span.end_day();
-  for (const Event& event : in_table_order(year.local)) {
+  std::vector<Event> events = year.local;
+  events.insert(events.end(), happenings.events.begin(), happenings.events.end());
+  for (const Event& event : in_table_order(std::move(events))) {
     const CivilMinute civil = zone.civil(event.at);
     if (civil.date() >= first && civil.date() < end)
       rows.push_back(instant_row(year.place.id, event, civil.iso()));
@@ -164,25 +179,30 @@ std::string utc_text(Ut t) {
                      tenths / 36000, tenths / 600 % 60, tenths / 10 % 60, tenths % 10);
 }
 
-std::vector<Row> global_rows(TableName name, const std::vector<Event>& global, const Span& span) {
+std::vector<Row> global_rows(TableName name, const SkyYear& sky_year, const Span& span) {
   std::vector<Row> rows;
   if (name != TableName::instants) return rows;
   const Ut from = ut_midnight(span.first_day()), to = ut_midnight(span.end_day());
-  for (const Event& event : in_table_order(global))
+  for (const Event& event : in_table_order(sky_year.events))
     if (from <= event.at && event.at < to) rows.push_back(instant_row("-", event, {}));
   return rows;
 }
 
-std::vector<Row> site_rows(TableName name, const YearEphemeris& ephemeris, const SiteYear& year) {
+std::vector<Row> site_rows(TableName name, const YearEphemeris& ephemeris, const SiteYear& year,
+                           const SiteHappenings& happenings) {
   switch (name) {
     case TableName::instants:
-      return instants(year);
+      return instants(year, happenings);
     case TableName::nights:
       return nights(year);
     case TableName::constellations:
       return constellations_rows(year);
     case TableName::planet_places:
       return planets_rows(ephemeris, year);
+    case TableName::showers:
+      return shower_rows(year, happenings);
+    case TableName::eclipses:
+      return eclipse_rows(year, happenings);
   }
   return {};
 }

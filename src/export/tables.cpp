@@ -12,8 +12,8 @@
 namespace duskleaf {
 namespace {
 
-constexpr std::array<std::string_view, 4> names = {"instants", "nights", "constellations",
-                                                   "planets"};
+constexpr std::array<std::string_view, 6> names = {"instants", "nights",  "constellations",
+                                                   "planets",  "showers", "eclipses"};
 
 double rounded(const Number& n) {
   const double scale = std::pow(10.0, n.decimals);
@@ -63,9 +63,12 @@ std::optional<TableName> find_table(std::string_view name) {
 std::vector<std::string_view> table_names() { return {names.begin(), names.end()}; }
 
 bool table_needs_evenings(TableName name) { return name == TableName::constellations; }
+bool table_needs_happenings(TableName name) {
+  return name == TableName::instants || name == TableName::showers || name == TableName::eclipses;
+}
 
 const std::vector<std::string_view>& table_columns(TableName name) {
-  static const std::array<std::vector<std::string_view>, 4> columns = {{
+  static const std::array<std::vector<std::string_view>, 6> columns = {{
       {"site", "event", "body", "utc", "local", "value", "unit"},
       {"site", "date", "sunset", "civil_dusk", "nautical_dusk", "astronomical_dusk",
        "astronomical_dawn", "nautical_dawn", "civil_dawn", "sunrise", "moonrise", "moonset",
@@ -74,6 +77,10 @@ const std::vector<std::string_view>& table_columns(TableName name) {
        "rises", "highest", "sets"},
       {"site", "date", "planet", "ra_deg", "dec_deg", "magnitude", "elongation_deg",
        "constellation", "rises", "highest", "sets", "altitude_at_chart_hour_deg"},
+      {"site", "shower", "name", "peak", "solar_longitude_deg", "zhr", "radiant_altitude_deg",
+       "best_from", "best_to", "moon_lit_percent", "expected_per_hour", "verdict"},
+      {"site", "kind", "body", "contact", "utc", "local", "altitude_deg", "azimuth_deg",
+       "magnitude", "obscuration_percent", "visible"},
   }};
   return columns[static_cast<std::size_t>(name)];
 }

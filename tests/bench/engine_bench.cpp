@@ -1,6 +1,7 @@
 // What one year costs before anything is drawn: tables of the bodies, a site's instants.
 #include <benchmark/benchmark.h>
 
+#include "almanac/happenings.hpp"
 #include "bench_site.hpp"
 #include "events/events.hpp"
 
@@ -61,6 +62,21 @@ void BM_SiteYear(benchmark::State& state) {
         make_site_year(shared_ephemeris(), place, year, {.evenings = state.range(0) != 0}));
 }
 BENCHMARK(BM_SiteYear)->ArgName("evenings")->Arg(0)->Arg(1)->Unit(benchmark::kMillisecond);
+
+// What happens in a year: the same everywhere, and for one site. The year's tables exist already.
+void BM_SkyYear(benchmark::State& state) {
+  for (auto _ : state) benchmark::DoNotOptimize(make_sky_year(shared_ephemeris(), year));
+}
+BENCHMARK(BM_SkyYear)->Unit(benchmark::kMillisecond);
+
+void BM_SiteHappenings(benchmark::State& state) {
+  const SkyYear sky_year = make_sky_year(shared_ephemeris(), year);
+  const SiteYear site = make_site_year(shared_ephemeris(), bench_order().sites.front().place, year,
+                                       {.evenings = false});
+  for (auto _ : state)
+    benchmark::DoNotOptimize(make_site_happenings(shared_ephemeris(), site, sky_year));
+}
+BENCHMARK(BM_SiteHappenings)->Unit(benchmark::kMillisecond);
 
 }  // namespace
 }  // namespace duskleaf

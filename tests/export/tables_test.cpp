@@ -47,8 +47,14 @@ const SiteYear& london() {
   }();
   return year;
 }
+const SkyYear& sky_2027() {
+  static const SkyYear year = make_sky_year(ephemeris_of({2027, 1}), {2027, 1});
+  return year;
+}
 std::vector<Row> rows_of(TableName name) {
-  return site_rows(name, ephemeris_of({2027, 1}), london());
+  static const SiteHappenings happenings =
+      make_site_happenings(ephemeris_of({2027, 1}), london(), sky_2027());
+  return site_rows(name, ephemeris_of({2027, 1}), london(), happenings);
 }
 
 TEST(UtcText, RoundsToATenthAndCarriesOver) {
@@ -113,7 +119,7 @@ TEST(TableWriter, DoesNotHeedTheLocale) {
 TEST(Tables, NamesAndColumns) {
   EXPECT_EQ(find_table("planets"), TableName::planet_places);
   EXPECT_FALSE(find_table("planet"));
-  EXPECT_EQ(table_names().size(), 4u);
+  EXPECT_EQ(table_names().size(), 6u);
   for (std::string_view name : table_names()) {
     const TableName table = find_table(name).value();
     for (const Row& row : rows_of(table))
@@ -122,10 +128,9 @@ TEST(Tables, NamesAndColumns) {
 }
 
 TEST(Instants, GlobalRowsFirstThenTheSitesOwn) {
-  const auto table =
-      cells(written(TableName::instants, TableFormat::csv,
-                    {global_rows(TableName::instants, london().global, london().span),
-                     rows_of(TableName::instants)}));
+  const auto table = cells(written(
+      TableName::instants, TableFormat::csv,
+      {global_rows(TableName::instants, sky_2027(), london().span), rows_of(TableName::instants)}));
   ASSERT_GT(table.size(), 3500u);
   bool site = false;
   std::string last;
@@ -147,11 +152,15 @@ TEST(Instants, GlobalRowsFirstThenTheSitesOwn) {
     EXPECT_LE(last, row[3]);
     last = row[3];
     events.insert(row[1]);
-    EXPECT_EQ(row[5].empty(), row[6].empty());
+    // An eclipse's magnitude alone is a number without a unit.
+    EXPECT_EQ(row[5].empty() || row[1].ends_with("-eclipse-greatest"), row[6].empty()) << row[1];
   }
   EXPECT_TRUE(site);
-  for (const char* name : {"sunrise", "astronomical-dusk", "moon-transit", "full-moon", "perigee",
-                           "march-equinox", "aphelion", "clock-change"})
+  for (const char* name :
+       {"sunrise", "astronomical-dusk", "moon-transit", "full-moon", "perigee", "march-equinox",
+        "aphelion", "clock-change", "opposition", "superior-conjunction", "stationary-then-direct",
+        "greatest-elongation-west", "closest-approach", "occultation-disappears",
+        "lunar-eclipse-greatest", "solar-eclipse-partial-begins", "shower-peak"})
     EXPECT_TRUE(events.contains(name)) << name;
 }
 
@@ -193,8 +202,9 @@ TEST(Nights, OneRowEachAndEmptyCellsForWhatDoesNotHappen) {
 
 TEST(Nights, ASkippedDateHasARowThatSaysSoAndNothingElse) {
   const SiteYear apia = year_of_site(test_place(-13.83, -171.77, "Pacific/Apia"), 2011);
-  const auto table = cells(written(TableName::nights, TableFormat::csv,
-                                   {site_rows(TableName::nights, ephemeris_of({2011, 1}), apia)}));
+  const auto table =
+      cells(written(TableName::nights, TableFormat::csv,
+                    {site_rows(TableName::nights, ephemeris_of({2011, 1}), apia, {})}));
   ASSERT_EQ(table.size(), 366u);
   std::vector<std::string> expected(17);
   expected[0] = "site";
@@ -235,6 +245,53 @@ TEST(Planets, JsonHasNumbersAndNulls) {
   EXPECT_EQ(table[0]["planet"], "mercury");
   EXPECT_EQ(table[6]["planet"], "neptune");
   EXPECT_EQ(table[7]["date"], "2027-01-11");
+}
+
+TEST(Showers, ARowForEachPeakOfTheYear) {
+  const auto table =
+      cells(written(TableName::showers, TableFormat::csv, {rows_of(TableName::showers)}));
+  ASSERT_GT(table.size(), 20u);
+  std::set<std::string> codes;
+  for (std::size_t i = 1; i < table.size(); ++i) {
+    const auto& row = table[i];
+    EXPECT_EQ(row[3].substr(0, 4), "2027");
+    EXPECT_TRUE(codes.insert(row[1]).second) << row[1];
+    EXPECT_EQ(row[7].empty(), row[8].empty()) << row[1];
+    EXPECT_TRUE(row[11] == "good" || row[11] == "fair" || row[11] == "poor" ||
+                row[11] == "not-seen")
+        << row[11];
+    // Not seen is not a rate.
+    if (row[11] == "not-seen" && !row[10].empty()) {
+      EXPECT_EQ(row[10], "0.0") << row[1];
+    }
+  }
+  EXPECT_TRUE(codes.contains("PER") && codes.contains("GEM") && codes.contains("QUA"));
+}
+
+// Dates and kinds: F. Espenak & J. Meeus, NASA/TP-2006-214141 and NASA/TP-2009-214172 (the annular
+// eclipse of 6 February 2027 passes London by).
+TEST(Eclipses, ContactsInOrderWithTheirPlaces) {
+  const auto table =
+      cells(written(TableName::eclipses, TableFormat::csv, {rows_of(TableName::eclipses)}));
+  std::set<std::string> seen;
+  for (std::size_t i = 1; i < table.size(); ++i) {
+    const auto& row = table[i];
+    seen.insert(row[4].substr(0, 10) + ' ' + row[1] + ' ' + row[2]);
+    EXPECT_EQ(row[8].empty(), row[3] != "greatest") << i;
+    EXPECT_EQ(row[9].empty(), row[3] != "greatest" || row[2] == "moon") << i;
+    if (i > 1) {
+      EXPECT_LE(table[i - 1][4], row[4]);
+    }
+    if (row[10] == "true") {
+      EXPECT_GT(std::stod(row[6]), -1.2) << i;
+    } else {
+      EXPECT_LT(std::stod(row[6]), 0.0) << i;
+    }
+  }
+  EXPECT_TRUE(seen.contains("2027-08-02 partial sun"));
+  EXPECT_TRUE(seen.contains("2027-02-20 penumbral moon"));
+  EXPECT_TRUE(seen.contains("2027-08-17 penumbral moon"));
+  EXPECT_FALSE(seen.contains("2027-02-06 partial sun"));
 }
 
 }  // namespace
