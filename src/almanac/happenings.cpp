@@ -48,11 +48,10 @@ SkyYear make_sky_year(const YearEphemeris& ephemeris, const Span& span) {
 }
 
 SiteHappenings make_site_happenings(const YearEphemeris& ephemeris, const SiteYear& year,
-                                    const SkyYear& sky_year) {
+                                    const SkyYear& sky_year, HappeningParts parts) {
   SiteHappenings site;
   const Ut from = year.nights.front().from - Days(1), to = year.nights.back().to;
   const SiteSky sky(ephemeris, year.place.observer, from - Days(1), to + Days(1));
-  site.meetings = meetings(sky, year, sky_year.approaches);
   site.occultations = occultations(sky, from, to);
   for (const LunarEclipse& eclipse : sky_year.lunar_eclipses)
     site.lunar_eclipses.push_back(at_site(sky, eclipse));
@@ -60,9 +59,12 @@ SiteHappenings make_site_happenings(const YearEphemeris& ephemeris, const SiteYe
     if (auto seen = at_site(sky, eclipse)) site.solar_eclipses.push_back(std::move(*seen));
   for (const SunTransit& transit : sky_year.sun_transits)
     if (auto seen = at_site(sky, transit)) site.sun_transits.push_back(std::move(*seen));
-  site.showers = shower_nights(sky, year, sky_year.shower_peaks);
-  site.extremes = year_extremes(year);
-  site.skyline = skyline_days(sky, year);
+  if (parts.looks) {
+    site.meetings = meetings(sky, year, sky_year.approaches);
+    site.showers = shower_nights(sky, year, sky_year.shower_peaks);
+    site.extremes = year_extremes(year);
+    site.skyline = skyline_days(sky, year);
+  }
 
   for (const Occultation& occultation : site.occultations)
     append(site.events, occultation_events(occultation));

@@ -41,6 +41,12 @@ struct SiteHappenings {
   std::vector<SkylineDay> skyline;
   std::vector<Event> events;  // the site's own among these as instants, in order
 };
-SiteHappenings make_site_happenings(const YearEphemeris&, const SiteYear&, const SkyYear&);
+/// What a page needs beyond the instants costs most: meetings' looks, showers' nights, extremes,
+/// the skyline.
+struct HappeningParts {
+  bool looks = true;
+};
+SiteHappenings make_site_happenings(const YearEphemeris&, const SiteYear&, const SkyYear&,
+                                    HappeningParts = {});
 
 }  // namespace duskleaf

@@ -41,7 +41,8 @@ void write_table(const Order& order, const std::optional<std::string>& only, Tab
     const SiteYear year = make_site_year(ephemeris, site.place, order.span,
                                          AlmanacParts{table_needs_evenings(table)});
     const SiteHappenings happenings =
-        happens ? make_site_happenings(ephemeris, year, sky_year) : SiteHappenings();
+        happens ? make_site_happenings(ephemeris, year, sky_year, {table == TableName::showers})
+                : SiteHappenings();
     writer.add(site_rows(table, ephemeris, year, happenings));
     if (!out) return;  // the reader is gone or the disk is full: the caller tells
   }
