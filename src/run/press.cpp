@@ -1,5 +1,6 @@
-// From orders to files. One YearEphemeris for each span of months is shared by all sites as const
-// data; a site is one task, so that its almanac is made once for all of its publications.
+// From orders to files. One YearEphemeris for each span of months, and what happens in it
+// everywhere, are shared by all sites as const data; a site is one task, so that its almanac is
+// made once for all of its publications.
 #include "run/press.hpp"
 
 #include <algorithm>
@@ -9,6 +10,7 @@
 #include <mutex>
 #include <set>
 
+#include "almanac/happenings.hpp"
 #include "ink/pdf.hpp"
 #include "order/outputs.hpp"
 #include "run/characters.hpp"
@@ -94,6 +96,15 @@ void check_apart(const PressReport& report, const std::vector<Order>& orders) {
   }
 }
 
+/// What all sites of one span share.
+struct Sky {
+  explicit Sky(const Span& span)
+      : ephemeris(ephemeris_span(span).first, ephemeris_span(span).second),
+        year(make_sky_year(ephemeris, span)) {}
+  YearEphemeris ephemeris;
+  SkyYear year;
+};
+
 class Press {
  public:
   Press(const std::vector<Order>& orders, const PressOptions& options, Progress& progress,
@@ -101,23 +112,21 @@ class Press {
       : options_(options), progress_(progress), plan_(plan) {
     for (const Order& order : orders) {
       const std::pair key{order.span.first_year, order.span.first_month};
-      if (!ephemerides_.contains(key)) {
-        const auto [from, to] = ephemeris_span(order.span);
-        ephemerides_.emplace(key, std::make_unique<YearEphemeris>(from, to));
-      }
+      if (!skies_.contains(key)) skies_.emplace(key, std::make_unique<Sky>(order.span));
       types_.emplace(&order, load_type(order.fonts));
     }
   }
 
   void press_site(const SiteTask& task) {
     const Order& order = *task.order;
-    const YearEphemeris& ephemeris =
-        *ephemerides_.at({order.span.first_year, order.span.first_month});
+    const Sky& sky = *skies_.at({order.span.first_year, order.span.first_month});
     std::optional<SiteYear> year;
+    std::optional<SiteHappenings> happenings;
     std::string trouble;
     if (!stop_requested()) {
       try {
-        year = make_site_year(ephemeris, task.site->place, order.span);
+        year = make_site_year(sky.ephemeris, task.site->place, order.span);
+        happenings = make_site_happenings(sky.ephemeris, *year, sky.year);
       } catch (const std::exception& error) {
         trouble = error.what();
       }
@@ -127,10 +136,10 @@ class Press {
       if (!trouble.empty()) {
         row.status = ReportRow::Status::failed;
         row.reason = trouble;
-      } else if (!year || stop_requested()) {
+      } else if (!year || !happenings || stop_requested()) {
         row.reason = "stopped before it";
       } else {
-        press_file(task, job, *year, ephemeris, row);
+        press_file(task, job, *year, *happenings, sky, row);
       }
       const std::lock_guard lock(mutex_);
       progress_.file_done(row);
@@ -139,12 +148,13 @@ class Press {
 
  private:
   void press_file(const SiteTask& task, const Job& job, const SiteYear& year,
-                  const YearEphemeris& ephemeris, ReportRow& row) const {
+                  const SiteHappenings& happenings, const Sky& sky, ReportRow& row) const {
     try {
       const TypeSet& type = *types_.at(task.order);
       Tally tally;
-      const SheetDocument document = make_handout(*task.order, *task.site, *job.publication, year,
-                                                  ephemeris, job.months, type, tally);
+      const SheetDocument document =
+          make_handout(*task.order, *task.site, *job.publication, year, sky.year, happenings,
+                       sky.ephemeris, job.months, type, tally);
       write_whole(options_.out / row.file, make_pdf(document, type));
       row.status = ReportRow::Status::pressed;
       row.labels_left_out = tally.labels_left_out;
@@ -159,8 +169,7 @@ class Press {
   Progress& progress_;
   Plan& plan_;
   std::mutex mutex_;
-  std::map<std::pair<int, int>, std::unique_ptr<YearEphemeris>>
-      ephemerides_;  // by first year and month
+  std::map<std::pair<int, int>, std::unique_ptr<Sky>> skies_;  // by first year and month
   std::map<const Order*, std::unique_ptr<TypeSet>> types_;
 };
 

@@ -5,6 +5,7 @@
 #include <string_view>
 #include <vector>
 
+#include "almanac/happenings.hpp"
 #include "almanac/site_year.hpp"
 #include "order/order.hpp"
 #include "sheet/marks.hpp"
@@ -28,6 +29,8 @@ struct BlockContext {
   const SiteYear& year;
   int month_index;  // 0..11 of the span
   const YearEphemeris& ephemeris;
+  const SkyYear& sky_year;
+  const SiteHappenings& happenings;
   const TypeSet& type;
   const Words& words;
   const Theme& theme;

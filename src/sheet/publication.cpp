@@ -157,7 +157,8 @@ std::string own_or_known(const Words& words, const std::string& text,
 }  // namespace
 
 SheetDocument make_handout(const Order& order, const Site& site, const Publication& publication,
-                           const SiteYear& year, const YearEphemeris& ephemeris,
+                           const SiteYear& year, const SkyYear& sky_year,
+                           const SiteHappenings& happenings, const YearEphemeris& ephemeris,
                            const std::vector<int>& month_indices, const TypeSet& type,
                            Tally& tally) {
   const PageTemplate page_template = load_template(order, publication);
@@ -180,8 +181,8 @@ SheetDocument make_handout(const Order& order, const Site& site, const Publicati
   document.author = group;
   document.language = order.language;
   for (int index : month_indices) {
-    const BlockContext context{order,     site, publication, year,  index,
-                               ephemeris, type, words,       theme, tally};
+    const BlockContext context{order,    site,       publication, year,  index, ephemeris,
+                               sky_year, happenings, type,        words, theme, tally};
     for (const PageTemplate::Page& page : page_template.pages) {
       Sheet sheet{width, height, {}, draw_page(context, page_template, page, width, height)};
       if (!page.bookmark.empty()) {

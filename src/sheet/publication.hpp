@@ -10,8 +10,8 @@ namespace duskleaf {
 /// 0..11 of the order's span). Throws OrderError when the template is wrong, FileError when it
 /// cannot be read.
 SheetDocument make_handout(const Order&, const Site&, const Publication&, const SiteYear&,
-                           const YearEphemeris&, const std::vector<int>& month_indices,
-                           const TypeSet&, Tally&);
+                           const SkyYear&, const SiteHappenings&, const YearEphemeris&,
+                           const std::vector<int>& month_indices, const TypeSet&, Tally&);
 
 /// Reads and checks the publication's template without drawing; throws as make_handout.
 void check_template(const Order&, const Publication&);

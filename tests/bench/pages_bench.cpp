@@ -2,6 +2,7 @@
 // a PDF.
 #include <benchmark/benchmark.h>
 
+#include "almanac/happenings.hpp"
 #include "bench_site.hpp"
 #include "ink/pdf.hpp"
 #include "sheet/publication.hpp"
@@ -13,12 +14,14 @@ struct Desk {
   Order order = bench_order();
   YearEphemeris ephemeris{ephemeris_span(order.span).first, ephemeris_span(order.span).second};
   SiteYear year = make_site_year(ephemeris, order.sites.front().place, order.span);
+  SkyYear sky_year = make_sky_year(ephemeris, order.span);
+  SiteHappenings happenings = make_site_happenings(ephemeris, year, sky_year);
   TypeSet type;
   Tally tally;
 
   SheetDocument handout(int month_index) {
-    return make_handout(order, order.sites.front(), order.publications.front(), year, ephemeris,
-                        {month_index}, type, tally);
+    return make_handout(order, order.sites.front(), order.publications.front(), year, sky_year,
+                        happenings, ephemeris, {month_index}, type, tally);
   }
 };
 Desk& desk() {

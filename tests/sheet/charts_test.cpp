@@ -30,6 +30,8 @@ struct Scene {
   Site site;
   Publication publication;
   SiteYear year{};
+  SkyYear sky_year;
+  SiteHappenings happenings;
   TypeSet type;
   Words words{"en"};
   Theme theme = Theme::colour();
@@ -76,7 +78,8 @@ struct Scene {
                          site.place.observer.latitude);
   }
   BlockContext context() {
-    return {order, site, publication, year, month_index, ephemeris(), type, words, theme, tally};
+    return {order,    site,       publication, year,  month_index, ephemeris(),
+            sky_year, happenings, type,        words, theme,       tally};
   }
   EveningSky& evening() { return year.evenings[static_cast<std::size_t>(month_index)]; }
   Horizontal star(int hr) { return evening().stars[static_cast<std::size_t>(star_index(hr))]; }

@@ -1,6 +1,7 @@
 #include <algorithm>
 #include <gtest/gtest.h>
 
+#include "almanac/happenings.hpp"
 #include "sheet/publication.hpp"
 
 namespace duskleaf {
@@ -72,11 +73,14 @@ TEST_P(Handout, EveryMonthFitsItsPages) {
   const auto [from, to] = ephemeris_span(order.span);
   const YearEphemeris ephemeris(from, to);
   const SiteYear year = make_site_year(ephemeris, order.sites[0].place, order.span);
+  const SkyYear sky_year = make_sky_year(ephemeris, order.span);
+  const SiteHappenings happenings = make_site_happenings(ephemeris, year, sky_year);
   const TypeSet type;
   for (int month = 0; month < 12; ++month) {
     Tally tally;
-    const SheetDocument document = make_handout(order, order.sites[0], order.publications[0], year,
-                                                ephemeris, {month}, type, tally);
+    const SheetDocument document =
+        make_handout(order, order.sites[0], order.publications[0], year, sky_year, happenings,
+                     ephemeris, {month}, type, tally);
     ASSERT_EQ(document.sheets.size(), 2u);
     for (const std::string& note : tally.notes)
       ADD_FAILURE() << "month " << month + 1 << ": " << note;

@@ -17,6 +17,8 @@ double draw_planets(const BlockContext&, const BlockOptions&, const Box&, std::v
 double draw_constellations(const BlockContext&, const BlockOptions&, const Box&,
                            std::vector<Mark>&);
 double draw_happenings(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
+double draw_eclipses(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
+double draw_show(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_best_nights(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_sessions(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_cautions(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
