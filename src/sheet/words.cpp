@@ -58,6 +58,8 @@ std::string Words::time_of_day(std::chrono::minutes after_midnight) const {
   const long total = ((after_midnight.count() % 1440) + 1440) % 1440;
   const long hour = total / 60, minute = total % 60;
   if (!clock_12_) return fmt::format("{:02}:{:02}", hour, minute);
+  if (total == 0) return (*this)("time.midnight");
+  if (total == 720) return (*this)("time.noon");
   return (*this)(hour < 12 ? "time.am" : "time.pm",
                  {{"time", fmt::format("{}:{:02}", hour % 12 == 0 ? 12 : hour % 12, minute)}});
 }
@@ -75,6 +77,8 @@ std::string Words::duration(double minutes) const {
 std::string Words::whole_hour(int hour) const {
   const int of_day = ((hour % 24) + 24) % 24;
   if (!clock_12_) return fmt::format("{:02}:00", of_day);
+  if (of_day == 0) return (*this)("time.midnight");
+  if (of_day == 12) return (*this)("time.noon");
   return (*this)(of_day < 12 ? "time.am" : "time.pm",
                  {{"time", std::to_string(of_day % 12 == 0 ? 12 : of_day % 12)}});
 }

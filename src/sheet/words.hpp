@@ -26,7 +26,7 @@ class Words {
                          std::initializer_list<std::pair<std::string_view, std::string>>) const;
   bool has(std::string_view key) const;
 
-  std::string time(const CivilMinute&) const;  // 21:30 or 9:30 pm
+  std::string time(const CivilMinute&) const;  // 21:30 or 9:30 pm; noon, midnight
   std::string time_of_day(std::chrono::minutes after_midnight) const;
   std::string duration(double minutes) const;  // 8 h 04
   std::string whole_hour(int hour) const;      // 21:00 or 9 pm

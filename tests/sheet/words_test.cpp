@@ -37,8 +37,13 @@ TEST(Words, ClockOfTwelveAndTwentyFour) {
   const Words twelve("en", true), twentyfour("en", false);
   EXPECT_EQ(twentyfour.time_of_day(21h + 5min), "21:05");
   EXPECT_EQ(twelve.time_of_day(21h + 5min), "9:05\u00A0pm");
-  EXPECT_EQ(twelve.time_of_day(0min), "12:00\u00A0am");
-  EXPECT_EQ(twelve.time_of_day(12h), "12:00\u00A0pm");
+  EXPECT_EQ(twelve.time_of_day(1min), "12:01\u00A0am");
+  EXPECT_EQ(twelve.time_of_day(12h + 1min), "12:01\u00A0pm");
+  // 12:00 am and pm are read either way: they have their names instead.
+  EXPECT_EQ(twelve.time_of_day(0min), "midnight");
+  EXPECT_EQ(twelve.time_of_day(12h), "noon");
+  EXPECT_EQ(twelve.whole_hour(24), "midnight");
+  EXPECT_EQ(twentyfour.time_of_day(0min), "00:00");
 }
 
 TEST(Words, NumbersHaveATrueMinusSign) {
