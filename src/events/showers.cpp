@@ -16,6 +16,7 @@
 namespace duskleaf {
 namespace {
 
+constexpr Days margin(5);
 constexpr double tropical_year = 365.2422;                            // days
 constexpr Angle obliquity_j2000 = Angle::from_arcseconds(84381.406);  // IAU 2006
 
@@ -41,12 +42,12 @@ std::vector<ShowerPeak> shower_peaks(const YearEphemeris& ephemeris, Ut from, Ut
     const auto ahead = [&](Ut t) {
       return (sun_longitude(ephemeris, t) - all[i].peak_longitude).centred().radians();
     };
-    // One within three days of where the mean motion puts it, each year; those that only touch the
-    // ends are sorted out afterwards.
+    // Within five days of where the mean motion puts it, each year: the equation of the centre,
+    // 1.9 degrees, can count twice.
     const double until = (all[i].peak_longitude - first).positive().radians() / per_day;
-    for (Ut about = from + Days(until - tropical_year); about < to + Days(3);
+    for (Ut about = from + Days(until - tropical_year); about < to + margin;
          about = about + Days(tropical_year)) {
-      const Ut low = std::max(from, about - Days(3)), high = std::min(to, about + Days(3));
+      const Ut low = std::max(from, about - margin), high = std::min(to, about + margin);
       if (!(low < high)) continue;
       const double a = ahead(low), b = ahead(high);
       if (a > 0.0 || b <= 0.0) continue;
