@@ -35,4 +35,14 @@ std::string_view pair_name(int a, int b);
 /// cluster (proper motion, aberration; no parallax), au for a body.
 Eigen::Vector3d apparent_direction(const YearEphemeris&, const Target&, Tt);
 
+/// What the directions of stars and clusters at an instant have in common: for whoever wants many.
+struct SkyFrame {
+  Eigen::Matrix3d icrs_to_date;
+  Eigen::Vector3d earth_velocity;  // of the speed of light, ICRS axes
+  double years_since_j2000;
+};
+SkyFrame sky_frame(const YearEphemeris&, Tt);
+/// The same as above, of a star or cluster.
+Eigen::Vector3d apparent_direction(const SkyFrame&, const Target&);
+
 }  // namespace duskleaf
