@@ -1,85 +1,73 @@
-#include <algorithm>
-#include <cmath>
-#include <fmt/format.h>
+#include <charconv>
 
 #include "sheet/blocks/blocks.hpp"
-#include "sheet/setting.hpp"
+#include "sheet/flow_text.hpp"
+#include "sheet/happening_lines.hpp"
 
 namespace duskleaf {
 namespace {
 
-struct Line {
-  Date date;
-  std::string when, text;
-  bool own = false;
-};
+// Named in the closing line; the others are counted alone.
+constexpr std::size_t most_named = 4;
 
-/// Kilometres to the nearest hundred, with a thin space between thousands.
-std::string thousands(double km) {
-  const long value = std::lround(km / 100) * 100;
-  return fmt::format("{}\u202F{:03}", value / 1000, value % 1000);
+std::size_t number_option(const BlockOptions& options, std::string_view name) {
+  const std::string& text = options.get(name);
+  std::size_t value = 100;
+  std::from_chars(text.data(), text.data() + text.size(), value);
+  return value;
 }
 
-/// A line for each instant that people notice; phases have their own block.
-std::vector<Line> lines_of_month(const BlockContext& c) {
-  const auto [year, month] = c.year.span.month(c.month_index);
-  const Zone& zone = c.year.place.zone;
-  std::vector<Line> lines;
-  const auto in_month = [&](Date d) { return year_of(d) == year && month_of(d) == month; };
-  for (const Event& event : c.year.global) {
-    const std::string key = "happening." + event_name(event.kind);
-    if (!c.words.has(key)) continue;
-    const CivilMinute at = zone.civil(event.at);
-    if (!in_month(at.date())) continue;
-    std::string value;
-    if (event.value)
-      value = event_unit(event.kind) == "km" ? thousands(*event.value)
-                                             : c.words.number(*event.value, 4);
-    lines.push_back({at.date(), c.words.time(at), c.words(key, {{"value", value}})});
-  }
-  for (const ClockChange& change : c.year.clock_changes) {
-    const CivilMinute at = zone.civil(change.at);
-    if (!in_month(at.date())) continue;
-    const double hours =
-        std::chrono::duration<double, std::ratio<3600>>(change.after - change.before).count();
-    const double size = std::abs(hours);
-    const std::string amount =
-        size == 1 ? c.words("happening.one-hour")
-                  : c.words("happening.hours",
-                            {{"n", c.words.number(size, size == std::floor(size) ? 0 : 1)}});
-    lines.push_back({at.date(), c.words.time(at),
-                     c.words(hours > 0 ? "happening.clocks-forward" : "happening.clocks-back",
-                             {{"amount", amount}})});
-  }
-  for (const OwnDate& own : c.site.dates) {
-    if (!in_month(own.from) && !in_month(own.to) &&
-        !(own.from < make_date(year, month, 1) && own.to > make_date(year, month, 1)))
-      continue;
-    const std::string when =
-        own.from == own.to ? "" : c.words("happening.until", {{"date", c.words.day_month(own.to)}});
-    lines.push_back({std::max(own.from, make_date(year, month, 1)), when, own.text, true});
-  }
-  std::stable_sort(lines.begin(), lines.end(),
-                   [](const Line& a, const Line& b) { return a.date < b.date; });
-  return lines;
+std::string closing_line(const BlockContext& c, const std::vector<HappeningLine>& left_out) {
+  std::string list;
+  for (std::size_t i = 0; i < std::min(left_out.size(), most_named); ++i)
+    list += (i > 0 ? c.words("happening.list-comma") : std::string()) +
+            c.words("happening.lesser-item", {{"brief", left_out[i].brief},
+                                              {"day", std::to_string(day_of(left_out[i].date))}});
+  return c.words(left_out.size() > most_named ? "happening.lesser-many" : "happening.lesser",
+                 {{"n", std::to_string(left_out.size())}, {"list", list}});
 }
 
 }  // namespace
 
-double draw_happenings(const BlockContext& c, const BlockOptions&, const Box& area,
+double draw_happenings(const BlockContext& c, const BlockOptions& options, const Box& area,
                        std::vector<Mark>& out) {
-  const std::vector<Line> lines = lines_of_month(c);
-  if (lines.empty()) return 0;
+  const HappeningChoice choice = choose_lines(happening_lines(c), number_option(options, "most"));
+  if (choice.shown.empty()) return 0;
+  const bool across_midnight = std::any_of(choice.shown.begin(), choice.shown.end(),
+                                           [](const auto& l) { return l.after_midnight; });
   Setter set(c, out);
-  double y = area.y + set.heading(area.x, area.y, area.width, c.words("happenings.title"));
+  double y =
+      area.y + set.heading(area.x, area.y, area.width, c.words("happenings.title"),
+                           across_midnight ? c.words("happenings.aside") : std::string_view());
   const Style body = set.body();
-  const double text_x = area.x + 14.5;
-  for (const Line& line : lines) {
+  Style day = set.table();
+  day.size_pt = body.size_pt;
+  const double day_right = area.x + 14.6, text_x = area.x + 16.4;
+  std::optional<HappeningLine> before;
+  for (const HappeningLine& line : choice.shown) {
     const double baseline = y + body.size_pt * mm_per_pt * 0.95;
-    set.left(area.x, baseline, c.words.weekday_short(weekday_of(line.date)), body);
-    set.right(area.x + 11.5, baseline, std::to_string(day_of(line.date)), set.strong(body));
-    y += set.lead_in(text_x, y, area.right() - text_x, line.when, line.text, body);
+    // A date is told once.
+    if (!before || before->date != line.date || before->after_midnight != line.after_midnight) {
+      const std::string evening = std::to_string(day_of(line.date));
+      set.left(area.x, baseline, c.words.weekday_short(weekday_of(line.date)), day);
+      set.right(day_right, baseline,
+                line.after_midnight
+                    ? c.words("happening.night-dates",
+                              {{"evening", evening},
+                               {"morning", std::to_string(day_of(*line.after_midnight))}})
+                    : evening,
+                set.strong(day));
+    }
+    before = line;
+    std::vector<Run> runs;
+    if (!line.when.empty()) runs.push_back({line.when, set.strong(body)});
+    runs.push_back({line.text, body});
+    if (!line.caution.empty()) runs.push_back({line.caution, set.strong(body)});
+    y += flow(set, text_x, y, area.right() - text_x, runs, 1.22) + 0.35;
   }
+  if (!choice.left_out.empty())
+    y += set.paragraph(text_x, y, area.right() - text_x, closing_line(c, choice.left_out),
+                       set.small(), 1.22);
   return y - area.y + 0.8;
 }
 

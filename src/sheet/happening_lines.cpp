@@ -1,0 +1,157 @@
+// Gathers the month's lines, orders them and chooses. Nights by the date of their evening: common
+// practice of observers' logs.
+#include "sheet/happening_lines.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+#include "almanac/skyline.hpp"
+#include "catalogue/constellations.hpp"
+#include "catalogue/stars.hpp"
+#include "sheet/happening_writer.hpp"
+
+namespace duskleaf {
+
+HappeningWriter::HappeningWriter(const BlockContext& c)
+    : c_(c),
+      first_([&] {
+        const auto [year, month] = c.year.span.month(c.month_index);
+        return make_date(year, month, 1);
+      }()),
+      end_(first_ + std::chrono::days(days_in_month(year_of(first_), month_of(first_)))),
+      sky_(c.ephemeris, c.year.place.observer, ut_midnight(first_) - Days(3),
+           ut_midnight(end_) + Days(3)) {}
+
+bool HappeningWriter::in_month(Date date) const { return first_ <= date && date < end_; }
+
+Date HappeningWriter::civil_date(Ut t) const { return c_.year.place.zone.civil(t).date(); }
+
+Date HappeningWriter::evening_of(Ut t) const {
+  const CivilMinute civil = c_.year.place.zone.civil(t);
+  Date date = civil.date();
+  if (civil.hour() >= 12) return date;
+  date -= std::chrono::days(1);
+  // A zone that has skipped a date goes on from the one before it.
+  while (c_.year.place.zone.start_of(date) ==
+         c_.year.place.zone.start_of(date + std::chrono::days(1)))
+    date -= std::chrono::days(1);
+  return date;
+}
+
+const Night* HappeningWriter::night(Date date) const {
+  const auto at = (date - c_.year.span.first_day()).count();
+  if (at < 0 || at >= static_cast<long>(c_.year.nights.size())) return nullptr;
+  return &c_.year.nights[static_cast<std::size_t>(at)];
+}
+
+std::string HappeningWriter::words(std::string_view key, Values values) const {
+  return c_.words("happening." + std::string(key), values);
+}
+std::string HappeningWriter::time(Ut t) const { return c_.words.time(c_.year.place.zone.civil(t)); }
+std::string HappeningWriter::span(Ut from, Ut to) const {
+  return words("span", {{"from", time(from)}, {"to", time(to)}});
+}
+std::string HappeningWriter::percent(double fraction) const {
+  const double shown = fraction < 1 ? std::min(std::round(100 * fraction), 99.0) : 100.0;
+  return words("percent", {{"n", c_.words.number(shown, 0)}});
+}
+std::string HappeningWriter::body(Body b) const {
+  return c_.words("body." + std::string(body_name(b)));
+}
+
+std::string HappeningWriter::place(const Horizontal& h) const {
+  const double altitude = std::max(h.altitude.degrees(), 0.0);
+  if (altitude >= 80) return words("overhead");
+  return words("place", {{"altitude", c_.words.number(altitude, 0)},
+                         {"direction", c_.words.direction(h.azimuth)}});
+}
+
+std::string HappeningWriter::target(const Target& target) const {
+  if (target.sort == Target::Sort::body) return body(target.body);
+  const std::string key = "happening.target-" + std::string(target.name);
+  if (c_.words.has(key)) return c_.words(key);
+  if (target.star < 0) return std::string(target.name);
+  const Star& star = stars()[static_cast<std::size_t>(target.star)];
+  if (!star.name.empty()) return std::string(star.name);
+  const std::string_view letter = star.bayer.empty() ? star.flamsteed : star.bayer;
+  return std::string(letter) + "\u00A0" +
+         std::string(constellations()[static_cast<std::size_t>(star.constellation)].genitive);
+}
+
+bool HappeningWriter::behind_skyline(const Horizontal& apparent) const {
+  return !c_.year.place.skyline.empty() && !above_skyline(c_.year.place.skyline, apparent);
+}
+Horizontal HappeningWriter::apparent(const Horizontal& h) {
+  return {h.altitude + refraction(h.altitude), h.azimuth};
+}
+
+HappeningLine* HappeningWriter::by_night(Ut at, int rank, std::string text, std::string brief) {
+  const Date evening = evening_of(at), date = civil_date(at);
+  if (!in_month(evening)) return nullptr;
+  HappeningLine line{evening, std::nullopt,     at,  time(at), std::move(text),
+                     {},      std::move(brief), rank};
+  if (date != evening) line.after_midnight = date;
+  return &lines_.emplace_back(std::move(line));
+}
+
+HappeningLine* HappeningWriter::by_day(Ut at, int rank, std::string text, std::string brief) {
+  const Date date = civil_date(at);
+  if (!in_month(date)) return nullptr;
+  return &lines_.emplace_back(
+      HappeningLine{date, std::nullopt, at, time(at), std::move(text), {}, std::move(brief), rank});
+}
+
+HappeningLine* HappeningWriter::on_date(Date date, int rank, std::string text, std::string brief) {
+  if (!in_month(date)) return nullptr;
+  return &lines_.emplace_back(HappeningLine{date,
+                                            std::nullopt,
+                                            c_.year.place.zone.start_of(date),
+                                            {},
+                                            std::move(text),
+                                            {},
+                                            std::move(brief),
+                                            rank});
+}
+
+namespace {
+void sort_by_date(std::vector<HappeningLine>& lines) {
+  std::stable_sort(lines.begin(), lines.end(), [](const HappeningLine& a, const HappeningLine& b) {
+    return a.date != b.date ? a.date < b.date : a.at < b.at;
+  });
+}
+}  // namespace
+
+std::vector<HappeningLine> happening_lines(const BlockContext& c) {
+  HappeningWriter writer(c);
+  write_calendar(writer);
+  write_year_extremes(writer);
+  write_eclipses(writer);
+  write_showers(writer);
+  write_configurations(writer);
+  write_meetings(writer);
+  std::vector<HappeningLine> lines = writer.take();
+  sort_by_date(lines);
+  return lines;
+}
+
+HappeningChoice choose_lines(std::vector<HappeningLine> lines, std::size_t most) {
+  HappeningChoice choice;
+  // The closing line takes a line itself: a single one is told rather than counted.
+  if (lines.size() <= most + 1) {
+    choice.shown = std::move(lines);
+    return choice;
+  }
+  std::stable_sort(lines.begin(), lines.end(), [](const HappeningLine& a, const HappeningLine& b) {
+    if (a.own != b.own) return a.own;
+    return a.rank < b.rank;
+  });
+  for (HappeningLine& line : lines) {
+    const bool stays = line.own || line.brief.empty() || choice.shown.size() < most;
+    (stays ? choice.shown : choice.left_out).push_back(std::move(line));
+  }
+  sort_by_date(choice.shown);
+  sort_by_date(choice.left_out);
+  return choice;
+}
+
+}  // namespace duskleaf
