@@ -25,20 +25,31 @@ double nanolamberts(double surface_brightness) {
   return 34.08 * std::exp(20.7233 - 0.92104 * surface_brightness);
 }
 
+// The eye's two relations: limit = zero - 5 log10(1 + factor * sqrt(sky in nanolamberts)).
+struct EyeRelation {
+  double zero, factor;
+  double limit(double sky_nl) const {
+    return zero - 5.0 * std::log10(1.0 + factor * std::sqrt(sky_nl));
+  }
+};
+const EyeRelation night{7.93, std::sqrt(0.0126)}, day{4.305, std::sqrt(1.259e-6)};
+
 double eye_limit(double sky_nl) {
-  const double night = 7.93 - 5.0 * std::log10(1.0 + std::sqrt(0.0126 * sky_nl));
-  const double day = 4.305 - 5.0 * std::log10(1.0 + std::sqrt(1.259e-6 * sky_nl));
-  return night >= day ? night : 0.5 * (night + day);
+  const double by_night = night.limit(sky_nl), by_day = day.limit(sky_nl);
+  return by_night >= by_day ? by_night : 0.5 * (by_night + by_day);
 }
 
-/// The sky that gives the limit, by halving; the limit falls steadily as the sky brightens.
+/// The sky that gives the limit, nanolamberts: eye_limit turned round.
 double sky_for_limit(double limit) {
-  double dark = -3.0, bright = 12.0;  // log10 nanolamberts
-  for (int i = 0; i < 60; ++i) {
-    const double middle = 0.5 * (dark + bright);
-    (eye_limit(std::pow(10.0, middle)) > limit ? dark : bright) = middle;
-  }
-  return std::pow(10.0, dark);
+  constexpr double darkest = 1e-3;
+  const double root = (std::pow(10.0, 0.2 * (night.zero - limit)) - 1.0) / night.factor;
+  const double night_sky = root > 0.0 ? std::max(darkest, root * root) : darkest;
+  if (night.limit(night_sky) >= day.limit(night_sky)) return night_sky;
+  // The mean: (1 + a x) (1 + b x) = k for x, the root of the sky.
+  const double k = std::pow(10.0, 0.2 * (night.zero + day.zero) - 0.4 * limit);
+  const double product = night.factor * day.factor, sum = night.factor + day.factor;
+  const double x = (std::sqrt(sum * sum + 4.0 * product * (k - 1.0)) - sum) / (2.0 * product);
+  return x * x;
 }
 
 double twilight_nl(Angle sun_altitude) {
