@@ -1,9 +1,11 @@
 #pragma once
 
+#include <chrono>
 #include <optional>
 #include <vector>
 
 #include "almanac/site_year.hpp"
+#include "sky/planet_disc.hpp"
 
 namespace duskleaf {
 
@@ -11,10 +13,26 @@ namespace duskleaf {
 /// practice: nobody sweeps with optics, or strains to see, near a Sun that has barely set).
 /// Evening: until an hour after the evening's drawn moment (EveningMoment; at least until the
 /// darkest moment where the Sun is down for less than six hours). Morning: from two hours before
-/// sunrise, or one before nautical dawn where that is earlier, but after the darkest moment. What
-/// is seen between the two alone goes by the side of the darkest moment on which it stands highest.
-/// All night: both, and at nine tenths or more of the time with the Sun below -12 degrees.
+/// sunrise, or one before nautical dawn where that is earlier, but after the darkest moment; and it
+/// must be seen in the last hour whose light lets it be seen: what has set before the day breaks is
+/// no sight of the morning. What is seen between the two alone goes by the side of the darkest
+/// moment on which it stands highest. All night: both, and at nine tenths or more of the time with
+/// the Sun below -12 degrees.
 enum class PlanetSight { not_visible, evening, morning, evening_and_morning, all_night };
+
+/// What begins or ends a planet's window: its height, the Sun's light, or the Moon's.
+enum class WindowEdge { height, twilight, moonlight };
+
+/// One night's stretch of time in which a planet is visible without a break.
+struct PlanetWindow {
+  Date date;    // of the night's evening
+  Ut from, to;  // within 10 s
+  WindowEdge begins, ends;
+  Ut best;  // when it stands highest while visible in that part of the night (5 minutes)
+  Horizontal at_from, at_best, at_to;      // refracted
+  std::optional<Ut> rises, highest, sets;  // before, within and after the window, in the night
+  std::optional<Ut> sunset, sunrise;       // about it, in the night
+};
 
 /// A planet's month at a site, as a page tells it.
 struct PlanetMonth {
@@ -38,10 +56,23 @@ struct PlanetMonth {
   Angle elongation;  // positive east of the Sun
   int constellation;
   std::optional<Ut> rises, highest, sets;
+  PlanetDisc disc;  // at `best`, or the darkest moment
+  // Each on the date nearest to the 15th (the earlier of two) on which it is a sight of that part
+  // of the night; both of the same date and stretch where it is seen from evening to morning.
+  std::optional<PlanetWindow> evening_window, morning_window;
 };
 
+/// How high a body stands, in a word: low below 20 degrees, high from 50 degrees on (this project's
+/// choice: a fist at arm's length is 10 degrees, common practice).
+enum class HeightWord { low, halfway, high };
+HeightWord height_word(Angle apparent_altitude);
+
+/// A time as people say it: to the quarter of an hour, beyond an hour and a half to the half;
+/// at least a quarter.
+std::chrono::minutes spoken_length(Days);
+
 /// The seven planets outward in the month (0..11 of the span); `year` needs its nights alone. About
-/// 15 ms a month.
+/// 2 ms a month.
 std::vector<PlanetMonth> planet_month(const YearEphemeris&, const SiteYear& year, int index);
 
 }  // namespace duskleaf

@@ -13,6 +13,8 @@
 namespace duskleaf {
 namespace {
 
+constexpr Angle refraction_ends = Angle::from_degrees(-1);
+
 std::optional<Ut> nearest(const std::vector<Ut>& instants, Ut to) {
   if (instants.empty()) return {};
   return *std::min_element(instants.begin(), instants.end(), [&](Ut a, Ut b) {
@@ -40,7 +42,9 @@ SkyLight sky_light(const SiteSky& sky, double site_limit, Ut t) {
 Horizontal apparent_place(const SiteSky& sky, Body planet, Ut t) {
   Horizontal place = to_horizontal(sky.ephemeris().apparent(planet, to_tt(t)),
                                    sky.local_sidereal_time(t), sky.observer().latitude);
-  place.altitude = place.altitude + refraction(place.altitude);
+  // Far below the horizon there is no light to bend.
+  if (place.altitude > refraction_ends)
+    place.altitude = place.altitude + refraction(place.altitude);
   return place;
 }
 

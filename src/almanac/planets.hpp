@@ -16,7 +16,7 @@ struct SkyLight {
 };
 SkyLight sky_light(const SiteSky&, double site_limit, Ut);
 
-/// Place of a planet with refraction.
+/// Place of a planet with refraction; below a true altitude of -1 degree, without.
 Horizontal apparent_place(const SiteSky&, Body planet, Ut);
 /// Least height at which a planet counts as visible: 5 degrees, 10 for Uranus and Neptune.
 Angle least_height(Body planet);
@@ -46,7 +46,7 @@ struct PlanetDay {
   Angle elongation;  // 0 to 180 degrees, positive east
   int constellation;
   std::optional<Ut> rises, highest, sets;  // in the night of the date
-  Angle altitude_at_chart_hour;            // refracted
+  Angle altitude_at_chart_hour;            // as apparent_place
 };
 /// The 1st, 11th and 21st of each month of the span, skipped dates left out; by date, then outward.
 std::vector<PlanetDay> planet_days(const YearEphemeris&, const SiteYear&);
