@@ -1,0 +1,329 @@
+// What there is to show, by the project's own rule (almanac/show_list.cpp). Bounds are common
+// practice among observers where nothing else is said.
+#include "almanac/show_list.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <gtest/gtest.h>
+#include <map>
+
+#include "almanac/planets.hpp"
+#include "sites.hpp"
+#include "sky/moon_look.hpp"
+
+namespace duskleaf {
+namespace {
+
+const ShowObject& object(std::string_view code) {
+  for (const ShowObject& o : show_objects())
+    if (o.code == code) return o;
+  throw std::runtime_error("no such object");
+}
+
+struct Site {
+  SiteYear year;
+  SiteSky sky;
+  Site(double latitude, double longitude, const char* zone, double limit, int year_number = 2027)
+      : year(make(latitude, longitude, zone, limit, year_number)),
+        sky(ephemeris_of({year_number, 1}), year.place.observer, year.nights.front().from,
+            year.nights.back().to) {}
+  std::vector<ShowItem> at(Ut t) const { return show_list(sky, year, t); }
+  /// A civil time of the evening; hours past midnight are the next date's.
+  Ut evening(int month, int day, int hour) const {
+    return year.place.zone.instant(make_date(2027, month, day), std::chrono::hours(hour));
+  }
+
+ private:
+  static SiteYear make(double latitude, double longitude, const char* zone, double limit,
+                       int year_number) {
+    Place place = test_place(latitude, longitude, zone);
+    place.limiting_magnitude = limit;
+    return make_site_year(ephemeris_of({year_number, 1}), place, {year_number, 1}, {false});
+  }
+};
+
+const ShowItem* find(const std::vector<ShowItem>& list, std::string_view code) {
+  const auto at = std::find_if(list.begin(), list.end(), [&](const ShowItem& item) {
+    return !item.body && show_objects()[static_cast<std::size_t>(item.object)].code == code;
+  });
+  return at == list.end() ? nullptr : &*at;
+}
+const ShowItem* find(const std::vector<ShowItem>& list, Body body) {
+  const auto at = std::find_if(list.begin(), list.end(),
+                               [&](const ShowItem& item) { return item.body == body; });
+  return at == list.end() ? nullptr : &*at;
+}
+
+TEST(ShowList, OpeningThatObserversKnow) {
+  struct Row {
+    const char* code;
+    double limit, least, most;  // mm
+  };
+  for (const Row& r : {
+           Row{"M31", 6.5, 0, 0},        // a bare-eye sight in the country ...
+           Row{"M31", 5.5, 0, 0},        //
+           Row{"M31", 4.0, 50, 80},      // ... and one for binoculars in town
+           Row{"M33", 6.5, 0, 50},       //
+           Row{"M45", 4.0, 0, 0},        //
+           Row{"M44", 6.0, 0, 0},        //
+           Row{"M44", 4.0, 50, 50},      //
+           Row{"M42", 5.5, 0, 0},        //
+           Row{"M42", 4.0, 50, 50},      //
+           Row{"M13", 6.5, 0, 0},        //
+           Row{"M13", 5.0, 50, 50},      //
+           Row{"M57", 5.0, 80, 100},     // not told from a star in binoculars
+           Row{"M27", 5.5, 50, 80},      //
+           Row{"M51", 5.0, 80, 150},     //
+           Row{"NGC 5139", 5.5, 0, 0},   //
+           Row{"NGC 4755", 5.5, 0, 0},   //
+           Row{"LMC", 6.0, 0, 0},        //
+           Row{"β Cyg", 5.0, 50, 50},    // steadily held binoculars
+           Row{"γ And", 5.0, 50, 80},    //
+           Row{"ε Boo", 5.0, 80, 150},   // hard for its distance: unequal
+           Row{"α Sco", 5.0, 100, 200},  //
+           Row{"β Ori", 5.0, 80, 150},   //
+           Row{"α UMi", 5.0, 60, 100},   //
+           Row{"α Cap", 5.5, 0, 0},      // two stars to the bare eye
+           Row{"ε Lyr", 5.5, 50, 50},    // for sharp eyes alone without binoculars
+           Row{"α Cen", 5.0, 50, 80},
+       }) {
+    const auto opening = least_opening_mm(object(r.code), r.limit);
+    ASSERT_TRUE(opening) << r.code << " under " << r.limit;
+    EXPECT_GE(*opening, r.least) << r.code << " under " << r.limit;
+    EXPECT_LE(*opening, r.most) << r.code << " under " << r.limit;
+  }
+}
+
+TEST(ShowList, FaintGalaxiesDrownInABrightSky) {
+  for (const char* code : {"M33", "M101", "NGC 4565", "LMC", "NGC 7000"})
+    EXPECT_FALSE(least_opening_mm(object(code), 4.0)) << code;
+  int dark = 0, bright = 0;
+  for (const ShowObject& o : show_objects()) {
+    dark += least_opening_mm(o, 6.0).has_value();
+    bright += least_opening_mm(o, 3.0).has_value();
+  }
+  EXPECT_EQ(dark, static_cast<int>(show_objects().size()));
+  EXPECT_LT(bright, dark - 15);
+}
+
+// Dawes (1867): 116"/D parts two stars alike, so no opening smaller than that may be given.
+TEST(ShowList, NoDoubleBelowDawes) {
+  int doubles = 0;
+  for (const ShowObject& o : show_objects()) {
+    if (o.sort != ShowClass::double_star) continue;
+    const auto opening = least_opening_mm(o, 5.5);
+    ASSERT_TRUE(opening) << o.code;
+    ++doubles;
+    if (*opening > 0) {
+      EXPECT_GE(*opening * o.size.arcseconds(), 116.0) << o.code;
+    } else {
+      EXPECT_GE(o.size.arcminutes(), 4.0) << o.code;
+    }
+  }
+  EXPECT_GT(doubles, 40);
+}
+
+TEST(ShowList, ABrighterSkyNeverAsksForLess) {
+  for (const ShowObject& o : show_objects()) {
+    double before = 1e9;
+    for (double limit = 2.0; limit <= 7.0; limit += 0.25) {
+      const double opening = least_opening_mm(o, limit).value_or(1e6);
+      EXPECT_LE(opening, before) << o.code << " " << limit;
+      before = opening;
+    }
+    EXPECT_LE(before, 300.0) << o.code;
+  }
+}
+
+TEST(ShowList, OmegaCentauriNeverFromSixtyNorth) {
+  const Site north(60, 25, "Europe/Helsinki", 6.0), south(-34, 18.5, "Africa/Johannesburg", 6.0);
+  int from_south = 0;
+  for (const Night& night : north.year.nights) {
+    const auto list = north.at(night.darkest);
+    EXPECT_FALSE(find(list, "NGC 5139")) << iso_date(night.date);
+    EXPECT_FALSE(find(list, "α Cru")) << iso_date(night.date);
+  }
+  for (const Night& night : south.year.nights) {
+    const auto list = south.at(night.darkest);
+    from_south += find(list, "NGC 5139") != nullptr;
+    EXPECT_FALSE(find(list, "M81")) << iso_date(night.date);
+    EXPECT_FALSE(find(list, "α UMi")) << iso_date(night.date);
+  }
+  EXPECT_GT(from_south, 100);
+}
+
+TEST(ShowList, SeasonsOfTheNorth) {
+  const Site site(50, 10, "Europe/Berlin", 6.0);
+  struct Row {
+    const char* code;
+    int month, day, hour;
+    std::optional<Standing> standing;
+  };
+  for (const Row& r :
+       {Row{"M42", 1, 8, 22, Standing::at_its_best}, Row{"M42", 4, 2, 21, Standing::last_chance},
+        Row{"M42", 7, 2, 23, std::nullopt}, Row{"M13", 5, 5, 22, Standing::rising},
+        Row{"M13", 7, 5, 23, Standing::at_its_best}, Row{"M13", 11, 1, 20, Standing::last_chance},
+        Row{"M31", 8, 3, 23, Standing::rising}, Row{"M31", 11, 1, 21, Standing::at_its_best},
+        Row{"β Cyg", 8, 30, 22, Standing::at_its_best}, Row{"M44", 3, 6, 21, Standing::at_its_best},
+        Row{"M44", 10, 1, 21, std::nullopt}}) {
+    const auto list = site.at(site.evening(r.month, r.day, r.hour));
+    ASSERT_FALSE(list.empty());
+    const ShowItem* item = find(list, r.code);
+    ASSERT_EQ(item != nullptr, r.standing.has_value()) << r.code << " " << r.month;
+    if (item != nullptr) {
+      EXPECT_EQ(item->standing, *r.standing) << r.code << " " << r.month;
+    }
+  }
+}
+
+// Over a year at four sites: heights, halves of the sky, order and what may stand under twilight.
+TEST(ShowList, EveryItemKeepsTheRules) {
+  int items = 0, twilight = 0;
+  for (const auto& [latitude, zone] : {std::pair{52.0, "Europe/Berlin"},
+                                       {-34.0, "Africa/Johannesburg"},
+                                       {69.6, "Europe/Oslo"},
+                                       {-1.3, "Africa/Nairobi"}}) {
+    const Site site(latitude, 15, zone, 5.5);
+    for (std::size_t i = 0; i < site.year.nights.size(); i += 3) {
+      const Night& night = site.year.nights[i];
+      for (const double part : {0.3, 0.5}) {
+        const Ut t = night.from + part * (night.to - night.from);
+        const SkyLight light = sky_light(site.sky, 5.5, t);
+        const auto list = site.at(t);
+        for (std::size_t k = 0; k < list.size(); ++k) {
+          const ShowItem& item = list[k];
+          SCOPED_TRACE(iso_date(night.date));
+          ++items;
+          EXPECT_LT(light.sun_altitude.degrees(), -50.0 / 60.0);
+          if (k > 0) {
+            EXPECT_GE(item.standing, list[k - 1].standing);
+            if (item.standing == list[k - 1].standing) {
+              EXPECT_LE(item.worth, list[k - 1].worth);
+            }
+          }
+          const double altitude = item.place.altitude.degrees();
+          const double azimuth = item.place.azimuth.degrees();
+          if (item.body == Body::moon) {
+            EXPECT_GE(altitude, 5.0);
+            EXPECT_GT(light.moon.altitude.degrees(), 4.5);
+            EXPECT_GT(light.moon_lit, 0.05);
+            EXPECT_LT(light.moon_lit, 0.95);
+            continue;
+          }
+          if (item.standing == Standing::rising) {
+            EXPECT_LT(azimuth, 180.0 + 1e-6);
+          }
+          if (item.standing == Standing::last_chance) {
+            EXPECT_GT(azimuth, 180.0 - 1e-6);
+          }
+          if (item.body) {
+            EXPECT_GE(altitude, 10.0);
+            EXPECT_LE(light.sun_altitude.degrees(), -4.0);
+            continue;
+          }
+          EXPECT_GE(altitude, 15.0);
+          EXPECT_LT(light.sun_altitude.degrees(), -6.0);
+          twilight += light.sun_altitude.degrees() > -9.0;
+          EXPECT_LE(item.opening_mm, 300.0);
+          // Not fainter than what the opening reaches: 12 magnitudes are out of all of these.
+          const ShowObject& o = show_objects()[static_cast<std::size_t>(item.object)];
+          EXPECT_LE(o.magnitude, light.faintest_star + 5 * std::log10(300.0 / 7.0));
+        }
+      }
+    }
+  }
+  EXPECT_GT(items, 10000);
+  EXPECT_GT(twilight, 50);
+}
+
+TEST(ShowList, TheMoonOnlyWhenItIsUpWithATerminator) {
+  const Site site(40.4, -3.7, "Europe/Madrid", 5.0);
+  const Observer& o = site.year.place.observer;
+  int shown = 0, down = 0, full = 0;
+  for (const Night& night : site.year.nights) {
+    const Ut t = site.year.place.zone.instant(night.date, std::chrono::hours(22));
+    const double altitude =
+        topocentric_horizontal(site.sky.ephemeris(), Body::moon, o.latitude, o.longitude, 0, t)
+            .altitude.degrees();
+    const bool listed = find(site.at(t), Body::moon) != nullptr;
+    if (altitude < 4.5) {
+      ++down;
+      EXPECT_FALSE(listed) << iso_date(night.date);
+    } else if (night.moon_lit > 0.97) {
+      ++full;
+      EXPECT_FALSE(listed) << iso_date(night.date);
+    } else if (altitude > 6 && night.moon_lit > 0.08 && night.moon_lit < 0.92) {
+      ++shown;
+      EXPECT_TRUE(listed) << iso_date(night.date);
+    }
+  }
+  EXPECT_GT(shown, 80);
+  EXPECT_GT(down, 120);
+  EXPECT_GT(full, 20);
+}
+
+// 69.6 N: no night in June, nothing to show; at 60 N what shines through the twilight.
+TEST(ShowList, FarNorthInSummer) {
+  const Site tromso(69.6, 18.9, "Europe/Oslo", 6.0), helsinki(60.2, 25, "Europe/Helsinki", 6.0);
+  for (int day = 1; day <= 30; ++day)
+    EXPECT_TRUE(tromso.at(night_of(tromso.year, 2027, 6, day).darkest).empty()) << day;
+  int items = 0;
+  for (int day = 10; day <= 30; ++day)
+    for (const ShowItem& item : helsinki.at(night_of(helsinki.year, 2027, 6, day).darkest)) {
+      if (item.body) continue;
+      ++items;
+      const ShowObject& o = show_objects()[static_cast<std::size_t>(item.object)];
+      EXPECT_NE(o.sort, ShowClass::galaxy) << o.code;
+      EXPECT_TRUE(o.sort != ShowClass::double_star || o.second_magnitude < 9.0) << o.code;
+    }
+  EXPECT_GT(items, 100);
+}
+
+TEST(ShowList, PlanetsAreThereWhenTheyShine) {
+  const Site site(52, 13, "Europe/Berlin", 5.0);
+  // February 2027: Jupiter and Mars near opposition in Leo (from memory); Saturn sets early.
+  const auto list = site.at(site.evening(2, 12, 23));
+  const ShowItem* jupiter = find(list, Body::jupiter);
+  ASSERT_TRUE(jupiter);
+  EXPECT_EQ(jupiter->opening_mm, 0.0);
+  EXPECT_EQ(jupiter->standing, Standing::at_its_best);
+  EXPECT_FALSE(find(list, Body::saturn));
+  // Neptune never without optics, and only in the dark.
+  int neptune = 0;
+  for (const Night& night : site.year.nights)
+    for (const double part : {0.3, 0.35, 0.45})
+      if (const Ut t = night.from + part * (night.to - night.from);
+          const ShowItem* item = find(site.at(t), Body::neptune)) {
+        ++neptune;
+        EXPECT_GE(item->opening_mm, 50.0);
+        EXPECT_LT(site.sky.altitude(Body::sun, t).degrees(), -12.0);
+      }
+  EXPECT_GT(neptune, 50);
+}
+
+// The first few of a list are of several kinds.
+TEST(ShowList, NotTenOpenClusters) {
+  int lists = 0;
+  for (const auto& [latitude, zone] :
+       {std::pair{52.0, "Europe/Berlin"}, {-34.0, "Africa/Johannesburg"}}) {
+    const Site site(latitude, 15, zone, 5.5);
+    for (int month = 1; month <= 12; ++month) {
+      const auto list = site.at(site.evening(month, 5, 22));
+      std::map<int, int> kinds;
+      int taken = 0;
+      for (const ShowItem& item : list)
+        if (!item.body && item.standing == Standing::at_its_best && taken < 8) {
+          ++taken;
+          ++kinds[static_cast<int>(show_objects()[static_cast<std::size_t>(item.object)].sort)];
+        }
+      if (taken < 8) continue;
+      ++lists;
+      EXPECT_GE(kinds.size(), 3u) << latitude << " month " << month;
+      for (const auto& [kind, count] : kinds) EXPECT_LE(count, 4) << latitude << " " << month;
+    }
+  }
+  EXPECT_GE(lists, 18);
+}
+
+}  // namespace
+}  // namespace duskleaf
