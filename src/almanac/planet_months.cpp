@@ -60,7 +60,10 @@ void note_dates(const std::vector<DaySeen>& days, Date first, PlanetMonth& row) 
 
 HeightWord height_word(Angle apparent_altitude) {
   const double h = apparent_altitude.degrees();
-  return h < 20.0 ? HeightWord::low : h < 50.0 ? HeightWord::halfway : HeightWord::high;
+  return h < 20.0   ? HeightWord::low
+         : h < 50.0 ? HeightWord::halfway
+         : h < 75.0 ? HeightWord::high
+                    : HeightWord::overhead;
 }
 
 std::chrono::minutes spoken_length(Days length) {

@@ -20,8 +20,9 @@ namespace duskleaf {
 /// the Sun below -12 degrees.
 enum class PlanetSight { not_visible, evening, morning, evening_and_morning, all_night };
 
-/// What begins or ends a planet's window: its height, the Sun's light, or the Moon's.
-enum class WindowEdge { height, twilight, moonlight };
+/// What begins or ends a planet's window: its height, the Sun's light, the Moon's, or the night's
+/// 24 hours (nothing does, where the Sun stays down).
+enum class WindowEdge { height, twilight, moonlight, open };
 
 /// One night's stretch of time in which a planet is visible without a break.
 struct PlanetWindow {
@@ -31,6 +32,7 @@ struct PlanetWindow {
   Ut best;  // when it stands highest while visible in that part of the night (5 minutes)
   Horizontal at_from, at_best, at_to;      // refracted
   std::optional<Ut> rises, highest, sets;  // before, within and after the window, in the night
+  std::optional<Horizontal> at_highest;    // refracted
   std::optional<Ut> sunset, sunrise;       // about it, in the night
 };
 
@@ -58,13 +60,13 @@ struct PlanetMonth {
   std::optional<Ut> rises, highest, sets;
   PlanetDisc disc;  // at `best`, or the darkest moment
   // Each on the date nearest to the 15th (the earlier of two) on which it is a sight of that part
-  // of the night; both of the same date and stretch where it is seen from evening to morning.
+  // of the night. Where it is seen from evening to morning both are of the same stretch.
   std::optional<PlanetWindow> evening_window, morning_window;
 };
 
-/// How high a body stands, in a word: low below 20 degrees, high from 50 degrees on (this project's
-/// choice: a fist at arm's length is 10 degrees, common practice).
-enum class HeightWord { low, halfway, high };
+/// How high a body stands, in a word: low below 20 degrees, high from 50, overhead from 75 degrees
+/// on (this project's choice; two fists at arm's length are 20 degrees, common practice).
+enum class HeightWord { low, halfway, high, overhead };
 HeightWord height_word(Angle apparent_altitude);
 
 /// A time as people say it: to the quarter of an hour, beyond an hour and a half to the half;

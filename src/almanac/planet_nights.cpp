@@ -17,7 +17,9 @@ constexpr Days sample_step(1.0 / 288.0);
 constexpr Days one_hour(1.0 / 24.0);
 constexpr Days short_night(6.0 / 24.0);
 constexpr Angle sun_low_enough = Angle::from_degrees(-5);
-// An edge of a window found higher than this above the least height is not the horizon's doing.
+// An edge of a window as near as this to the night's own ends, or as little above the least height,
+// is theirs.
+constexpr Days end_margin(2.0 / 1440.0);
 constexpr Angle edge_margin = Angle::from_degrees(0.2);
 
 /// A body's place through a night: the parabola through its beginning, middle and end.
@@ -210,6 +212,8 @@ PlanetWindow planet_window(const SiteSky& sky, double site_limit, const PlanetNi
     return inside;
   };
   const auto kind = [&](Ut t, const Horizontal& place) {
+    if (t - night.night().from < end_margin || night.night().to - t < end_margin)
+      return WindowEdge::open;
     if (place.altitude < least_height(planet) + edge_margin) return WindowEdge::height;
     return sky.altitude(Body::sun, t) > astronomical_altitude - edge_margin ? WindowEdge::twilight
                                                                             : WindowEdge::moonlight;
@@ -229,7 +233,10 @@ PlanetWindow planet_window(const SiteSky& sky, double site_limit, const PlanetNi
   for (Ut t : times.rises)
     if (t <= window.from) window.rises = t;
   for (Ut t : times.transits)
-    if (t >= window.from && t <= window.to) window.highest = t;
+    if (t >= window.from && t <= window.to) {
+      window.highest = t;
+      window.at_highest = apparent_place(sky, planet, t);
+    }
   for (auto t = times.sets.rbegin(); t != times.sets.rend(); ++t)
     if (*t >= window.to) window.sets = *t;
   for (const TimeSpan& down : night.night().sun_down)
