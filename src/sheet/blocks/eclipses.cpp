@@ -1,9 +1,228 @@
+// The month's eclipses and transits of the Sun as the site sees them, each with its contacts and a
+// drawing; the caution stands with every one of the Sun.
+#include <algorithm>
+#include <cmath>
+#include <functional>
+
 #include "sheet/blocks/blocks.hpp"
+#include "sheet/eclipse_drawing.hpp"
+#include "sheet/flow_text.hpp"
+#include "sheet/happening_writer.hpp"
 
 namespace duskleaf {
+namespace {
 
-double draw_eclipses(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&) {
-  return 0;
+/// A row of the table of contacts.
+struct Row {
+  std::string what;
+  Ut at;
+  Horizontal place;  // apparent
+  bool seen;
+  bool strong = false;
+};
+
+/// What one panel says; drawn by draw_panel.
+struct Panel {
+  std::string title, aside;
+  std::vector<Row> rows;
+  std::string text, caution;
+  std::string drawn;  // under the drawing
+};
+
+Row row(const HappeningWriter& w, std::string_view key, const Sighting& s, bool strong = false) {
+  return {w.context().words("eclipse." + std::string(key)), s.at,
+          HappeningWriter::apparent(s.place), s.visible, strong};
+}
+
+/// Rise or set of the Sun or Moon that cuts an eclipse.
+Row edge(const HappeningWriter& w, std::string_view key, Body body, Ut at) {
+  const Observer& o = w.sky().observer();
+  const Horizontal place = to_horizontal(w.context().ephemeris.apparent(body, to_tt(at)),
+                                         w.sky().local_sidereal_time(at), o.latitude);
+  return {w.context().words("eclipse." + std::string(key)), at, {Angle(), place.azimuth}, true};
+}
+
+void sort_rows(std::vector<Row>& rows) {
+  std::stable_sort(rows.begin(), rows.end(),
+                   [](const Row& a, const Row& b) { return a.at < b.at; });
+}
+
+std::string date_of_day(const BlockContext& c, Date date) {
+  return c.words("date.weekday-day-month", {{"weekday", c.words.weekday_name(weekday_of(date))},
+                                            {"date", c.words.day_month(date)}});
+}
+
+std::string duration(const HappeningWriter& w, Ut from, Ut to) {
+  const long seconds = std::lround(Seconds(to - from).count());
+  return w.words("minutes-seconds",
+                 {{"m", std::to_string(seconds / 60)}, {"s", std::to_string(seconds % 60)}});
+}
+
+Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
+  const BlockContext& c = w.context();
+  const std::string kind(eclipse_name(e.kind));
+  const bool central = e.central_begins && e.central_ends;
+  Panel p;
+  p.title = c.words("eclipse.solar-" + kind);
+  p.aside = date_of_day(c, w.civil_date(e.best.at));
+  p.rows.push_back(row(w, "partial-begins", e.partial_begins));
+  if (central) p.rows.push_back(row(w, kind + "-begins", *e.central_begins));
+  p.rows.push_back(row(w, "greatest", e.greatest, true));
+  if (central) p.rows.push_back(row(w, kind + "-ends", *e.central_ends));
+  p.rows.push_back(row(w, "partial-ends", e.partial_ends));
+  if (e.sunrise) p.rows.push_back(edge(w, "sunrise", Body::sun, *e.sunrise));
+  if (e.sunset) p.rows.push_back(edge(w, "sunset", Body::sun, *e.sunset));
+  sort_rows(p.rows);
+  const auto number = [&](double value) { return c.words.number(value, 2); };
+  if (central && e.central_begins->visible && e.central_ends->visible)
+    p.text = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
+                     {{"duration", duration(w, e.central_begins->at, e.central_ends->at)}}) +
+             " ";
+  p.text += c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)},
+                                           {"magnitude", number(e.best_magnitude)}});
+  if (!e.greatest.visible)
+    p.text += " " + c.words("eclipse.solar-cut", {{"percent", w.percent(e.obscuration)},
+                                                  {"magnitude", number(e.magnitude)}});
+  p.caution = c.words("eclipse.sun-caution");
+  if (kind == "total") p.caution += " " + c.words("eclipse.totality-caution");
+  p.drawn = w.time(e.best.at);
+  return p;
+}
+
+std::string_view contact_key(EventKind kind) {
+  switch (kind) {
+    case EventKind::lunar_eclipse_penumbral_begins:
+      return "penumbral-begins";
+    case EventKind::lunar_eclipse_partial_begins:
+      return "partial-begins";
+    case EventKind::lunar_eclipse_total_begins:
+      return "total-begins";
+    case EventKind::lunar_eclipse_total_ends:
+      return "total-ends";
+    case EventKind::lunar_eclipse_partial_ends:
+      return "partial-ends";
+    case EventKind::lunar_eclipse_penumbral_ends:
+      return "penumbral-ends";
+    default:
+      return "greatest";
+  }
+}
+
+Panel lunar_panel(const HappeningWriter& w, const SiteLunarEclipse& e) {
+  const BlockContext& c = w.context();
+  const LunarEclipse& eclipse = e.eclipse;
+  Panel p;
+  p.title = c.words("eclipse.lunar-" + std::string(eclipse_name(eclipse.kind)));
+  const Date evening = w.evening_of(eclipse.greatest);
+  p.aside = c.words.night_of(evening);
+  for (const auto& contact : e.contacts)
+    p.rows.push_back(row(w, contact_key(contact.kind), contact.moon,
+                         contact.kind == EventKind::lunar_eclipse_greatest));
+  if (e.moonrise) p.rows.push_back(edge(w, "moonrise", Body::moon, *e.moonrise));
+  if (e.moonset) p.rows.push_back(edge(w, "moonset", Body::moon, *e.moonset));
+  sort_rows(p.rows);
+  if (eclipse.kind == LunarEclipseKind::total)
+    p.text =
+        c.words("eclipse.lunar-total-size",
+                {{"duration", c.words.duration(std::round(
+                                  (*eclipse.total_ends - *eclipse.total_begins).count() * 1440))},
+                 {"magnitude", c.words.number(eclipse.umbral_magnitude, 2)}});
+  else
+    p.text = c.words("eclipse.lunar-partial-size",
+                     {{"percent", w.percent(eclipse.umbral_magnitude)},
+                      {"magnitude", c.words.number(eclipse.umbral_magnitude, 2)}});
+  p.text += " " + c.words("eclipse.lunar-safe");
+  p.drawn = w.time(e.drawn_at);
+  return p;
+}
+
+Panel transit_panel(const HappeningWriter& w, const SiteSunTransit& t) {
+  const BlockContext& c = w.context();
+  Panel p;
+  p.title = c.words("eclipse.transit", {{"body", w.body(t.planet)}});
+  p.aside = date_of_day(c, w.civil_date(t.greatest.at));
+  p.rows = {row(w, "transit-begins", t.begins), row(w, "transit-greatest", t.greatest, true),
+            row(w, "transit-ends", t.ends)};
+  p.text = c.words(t.planet == Body::mercury ? "eclipse.transit-mercury" : "eclipse.transit-venus");
+  p.caution = c.words("eclipse.transit-caution");
+  p.drawn = w.time(t.greatest.at);
+  return p;
+}
+
+using Draw = std::function<void(const Box&, std::vector<Mark>&)>;
+
+/// The drawing at the left, the contacts beside it, and the words right of them where there is room
+/// for that, else below.
+double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing, double x,
+                  double top, double width, std::vector<Mark>& out) {
+  const BlockContext& c = w.context();
+  Setter set(c, out);
+  double y = top + set.heading(x, top, width, p.title, p.aside);
+  const bool wide = width > 115;
+  const double side = 21, table_x = x + side + 3;
+  const Style cell = set.table(), small{Face::regular, c.theme.label_pt, c.theme.soft};
+  // The caution first: it is read before the times.
+  if (!p.caution.empty() && !wide)
+    y += flow(set, x, y, width, {{p.caution, set.strong(set.body())}}, 1.2) + 0.6;
+  const Box box{x, y, side, side};
+  drawing(box, out);
+  set.centre(x + side / 2, y + side + 2.6, c.words("eclipse.drawn", {{"time", p.drawn}}), small);
+  double row_y = y;
+  double widest = 0;
+  for (const Row& r : p.rows) widest = std::max(widest, set.width(r.what, set.strong(cell)));
+  const double time_right = table_x + widest + 2.5 + (c.order.clock_12 ? 14.0 : 9.0);
+  double table_right = time_right;
+  for (const Row& r : p.rows) {
+    Style s = r.strong ? set.strong(cell) : cell;
+    if (!r.seen) s.ink = c.theme.soft;
+    const double baseline = row_y + 2.6;
+    set.left(table_x, baseline, r.what, s);
+    set.right(time_right, baseline, w.time(r.at), s);
+    std::string where = r.seen ? w.place(r.place) : c.words("eclipse.below");
+    if (r.seen && w.behind_skyline(r.place)) where = c.words("eclipse.behind-skyline");
+    set.left(time_right + 2.5, baseline, where, s);
+    table_right = std::max(table_right, time_right + 2.5 + set.width(where, s));
+    row_y += 3.35;
+  }
+  const double drawn_bottom = y + side + 3.6;
+  if (wide) {
+    const double text_x = std::max(table_right + 5, x + 0.56 * width);
+    std::vector<Run> runs;
+    if (!p.caution.empty()) runs.push_back({p.caution, set.strong(set.body())});
+    runs.push_back({p.text, set.body()});
+    const double bottom = y + flow(set, text_x, y, x + width - text_x, runs, 1.22);
+    return std::max({bottom, drawn_bottom, row_y}) - top + 1.0;
+  }
+  row_y += 0.4 + flow(set, table_x, row_y + 0.4, x + width - table_x, {{p.text, set.body()}}, 1.2);
+  return std::max(drawn_bottom, row_y) - top + 1.0;
+}
+
+}  // namespace
+
+double draw_eclipses(const BlockContext& c, const BlockOptions&, const Box& area,
+                     std::vector<Mark>& out) {
+  const HappeningWriter w(c);
+  double y = area.y;
+  const auto add = [&](const Panel& panel, const Draw& drawing) {
+    y += draw_panel(w, panel, drawing, area.x, y, area.width, out);
+  };
+  for (const SiteSolarEclipse& e : c.happenings.solar_eclipses)
+    if (w.in_month(w.civil_date(e.best.at)))
+      add(solar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
+        draw_solar_phase(e, box, c.theme, marks);
+      });
+  for (const SiteSunTransit& t : c.happenings.sun_transits)
+    if (w.in_month(w.civil_date(t.begins.at)))
+      add(transit_panel(w, t), [&](const Box& box, std::vector<Mark>& marks) {
+        draw_sun_transit(w.sky(), t, box, c.theme, marks);
+      });
+  for (const SiteLunarEclipse& e : c.happenings.lunar_eclipses)
+    if (e.umbra_visible && e.eclipse.kind != LunarEclipseKind::penumbral &&
+        w.in_month(w.evening_of(e.eclipse.greatest)))
+      add(lunar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
+        draw_lunar_phase(e, box, c.theme, marks);
+      });
+  return y - area.y;
 }
 
 }  // namespace duskleaf
