@@ -68,7 +68,7 @@ HeightWord height_word(Angle apparent_altitude) {
 
 std::chrono::minutes spoken_length(Days length) {
   const double minutes = length.count() * 24.0 * 60.0, step = minutes < 82.5 ? 15.0 : 30.0;
-  return std::chrono::minutes(static_cast<int>(step * std::max(1.0, std::round(minutes / step))));
+  return std::chrono::minutes(static_cast<int>(std::max(30.0, step * std::round(minutes / step))));
 }
 
 std::vector<PlanetMonth> planet_month(const YearEphemeris& ephemeris, const SiteYear& year,

@@ -20,11 +20,12 @@ namespace duskleaf {
 /// the Sun below -12 degrees.
 enum class PlanetSight { not_visible, evening, morning, evening_and_morning, all_night };
 
-/// What begins or ends a planet's window: its height, the Sun's light, the Moon's, or the night's
-/// 24 hours (nothing does, where the Sun stays down).
-enum class WindowEdge { height, twilight, moonlight, open };
+/// What begins or ends a planet's window: its height, the Sun's light, or the night's 24 hours
+/// (nothing does, where the Sun stays down).
+enum class WindowEdge { height, twilight, open };
 
-/// One night's stretch of time in which a planet is visible without a break.
+/// One night's stretch of time in which a planet is visible without a break. Moonlight, which comes
+/// and goes in the month, is left out of it (it hides Uranus alone).
 struct PlanetWindow {
   Date date;    // of the night's evening
   Ut from, to;  // within 10 s
@@ -70,7 +71,7 @@ enum class HeightWord { low, halfway, high, overhead };
 HeightWord height_word(Angle apparent_altitude);
 
 /// A time as people say it: to the quarter of an hour, beyond an hour and a half to the half;
-/// at least a quarter.
+/// at least half an hour.
 std::chrono::minutes spoken_length(Days);
 
 /// The seven planets outward in the month (0..11 of the span); `year` needs its nights alone. About

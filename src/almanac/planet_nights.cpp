@@ -17,10 +17,10 @@ constexpr Days sample_step(1.0 / 288.0);
 constexpr Days one_hour(1.0 / 24.0);
 constexpr Days short_night(6.0 / 24.0);
 constexpr Angle sun_low_enough = Angle::from_degrees(-5);
-// An edge of a window as near as this to the night's own ends, or as little above the least height,
-// is theirs.
-constexpr Days end_margin(2.0 / 1440.0);
-constexpr Angle edge_margin = Angle::from_degrees(0.2);
+// An edge of a window is found within 5 seconds; as near as this to the night's own ends it is
+// theirs.
+constexpr Days end_margin(2.0 / 1440.0), beyond(20.0 / 86400.0);
+constexpr Angle moon_is_down = Angle::from_degrees(-90);
 
 /// A body's place through a night: the parabola through its beginning, middle and end.
 class Track {
@@ -62,10 +62,7 @@ class Watch {
         magnitude_(magnitude),
         optics_(optics) {}
   // What can be seen at the least height can be seen higher.
-  bool light_lets(const PlanetNight::Sample& s) const {
-    return optics_ ? s.dark
-                   : bare_eye_visible(planet_, magnitude_, least_height(planet_), s.faintest_star);
-  }
+  bool light_lets(const PlanetNight::Sample& s) const { return light_lets(s, s.faintest_star); }
   double sine(const PlanetNight::Sample& s) const {
     return sine_of_altitude(track_.at(s.day_part), s, site_);
   }
@@ -109,6 +106,7 @@ PlanetNight::PlanetNight(const SiteSky& sky, const SiteYear& year, const Night& 
                cos(sidereal_time),
                sin(sidereal_time),
                0.0,
+               0.0,
                Part::evening,
                false};
       const Vector sun_place = sun.at(s.day_part), moon_place = moon.at(s.day_part);
@@ -119,8 +117,11 @@ PlanetNight::PlanetNight(const SiteSky& sky, const SiteYear& year, const Night& 
       const Vector moon_to_sun = sun_place - moon_place;
       const double phase_cosine =
           -moon_to_sun.dot(moon_place) / (moon_to_sun.norm() * moon_place.norm());
-      s.faintest_star = faintest_star(year.place.limiting_magnitude, sun_altitude, moon_altitude,
-                                      0.5 * (1.0 + phase_cosine));
+      const double limit = year.place.limiting_magnitude;
+      s.faintest_moonless = faintest_star(limit, sun_altitude, moon_is_down, 0.0);
+      s.faintest_star = moon_altitude > Angle() ? faintest_star(limit, sun_altitude, moon_altitude,
+                                                                0.5 * (1.0 + phase_cosine))
+                                                : s.faintest_moonless;
       s.dark = sun_altitude < nautical_altitude;
       s.part = t <= evening_ends     ? Part::evening
                : t >= morning_begins ? Part::morning
@@ -189,19 +190,20 @@ PlanetWindow planet_window(const SiteSky& sky, double site_limit, const PlanetNi
   const std::vector<PlanetNight::Sample>& samples = night.samples();
   const Watch watch(sky, night, planet, magnitude, optics);
   const auto follow = [&](std::size_t a, std::size_t b) {
-    return samples[b].at - samples[a].at < 1.5 * sample_step && watch.visible(samples[b]) &&
-           watch.visible(samples[a]);
+    return samples[b].at - samples[a].at < 1.5 * sample_step &&
+           watch.visible_moonless(samples[b]) && watch.visible_moonless(samples[a]);
   };
   std::size_t first = best, last = best;
   while (first > 0 && follow(first - 1, first)) --first;
   while (last + 1 < samples.size() && follow(last, last + 1)) ++last;
 
   const auto visible = [&](Ut t) {
-    const SkyLight light = sky_light(sky, site_limit, t);
-    if (light.sun_altitude > sun_low_enough) return false;
+    const Angle sun_altitude = sky.altitude(Body::sun, t);
+    if (sun_altitude > sun_low_enough) return false;
     const Angle altitude = apparent_place(sky, planet, t).altitude;
-    return optics ? light.sun_altitude < nautical_altitude && altitude >= least_height(planet)
-                  : bare_eye_visible(planet, magnitude, altitude, light.faintest_star);
+    return optics ? sun_altitude < nautical_altitude && altitude >= least_height(planet)
+                  : bare_eye_visible(planet, magnitude, altitude,
+                                     faintest_star(site_limit, sun_altitude, moon_is_down, 0.0));
   };
   // Halving to 5 seconds between the last sample that shows it and where the next would be.
   const auto edge = [&](Ut inside, Ut outside) {
@@ -211,12 +213,13 @@ PlanetWindow planet_window(const SiteSky& sky, double site_limit, const PlanetNi
     }
     return inside;
   };
-  const auto kind = [&](Ut t, const Horizontal& place) {
+  // What stops it is seen a little beyond the edge.
+  const auto kind = [&](Ut t, Days outward) {
     if (t - night.night().from < end_margin || night.night().to - t < end_margin)
       return WindowEdge::open;
-    if (place.altitude < least_height(planet) + edge_margin) return WindowEdge::height;
-    return sky.altitude(Body::sun, t) > astronomical_altitude - edge_margin ? WindowEdge::twilight
-                                                                            : WindowEdge::moonlight;
+    return apparent_place(sky, planet, t + outward).altitude < least_height(planet)
+               ? WindowEdge::height
+               : WindowEdge::twilight;
   };
   PlanetWindow window{};
   window.date = night.night().date;
@@ -227,8 +230,8 @@ PlanetWindow planet_window(const SiteSky& sky, double site_limit, const PlanetNi
   window.at_from = apparent_place(sky, planet, window.from);
   window.at_best = apparent_place(sky, planet, window.best);
   window.at_to = apparent_place(sky, planet, window.to);
-  window.begins = kind(window.from, window.at_from);
-  window.ends = kind(window.to, window.at_to);
+  window.begins = kind(window.from, -1.0 * beyond);
+  window.ends = kind(window.to, beyond);
   const RiseSet times = planet_rise_set(sky, planet, night.night().from, night.night().to);
   for (Ut t : times.rises)
     if (t <= window.from) window.rises = t;

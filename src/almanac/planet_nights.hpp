@@ -20,7 +20,7 @@ class PlanetNight {
     Ut at;
     double day_part;      // -1 at the night's beginning, 1 at its end
     double cosine, sine;  // of the local sidereal time
-    double faintest_star;
+    double faintest_star, faintest_moonless;
     Part part;
     bool dark;  // the Sun below -12 degrees
   };
@@ -42,7 +42,8 @@ struct PlanetSeen {
 PlanetSeen see_planet(const SiteSky&, const PlanetNight&, Body planet, double magnitude,
                       bool optics);
 
-/// The stretch of the night's visibility that holds a sample in which the planet is visible.
+/// The stretch of the night's visibility, moonlight left out, that holds a sample in which the
+/// planet is visible.
 PlanetWindow planet_window(const SiteSky&, double site_limit, const PlanetNight&, Body planet,
                            double magnitude, bool optics, std::size_t best);
 

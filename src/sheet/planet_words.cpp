@@ -15,10 +15,16 @@ using namespace std::chrono_literals;
 constexpr std::chrono::minutes longest_length = 150min;
 // A planet that stands highest so much later than it comes into sight is worth coming back for.
 constexpr Days later(1.5 / 24.0);
-constexpr Angle near_the_sun = Angle::from_degrees(25);
+constexpr Angle near_the_sun = Angle::from_degrees(28);
+
+struct Teller {
+  const Words& words;
+  const Zone& zone;
+  int days;  // of the month
+};
 
 /// "Low in the west"; within a sentence "low in the west".
-std::string place_words(const BlockContext& c, const Horizontal& place, bool begins_sentence) {
+std::string place_words(const Teller& c, const Horizontal& place, bool begins_sentence) {
   const std::string direction = c.words.direction(place.azimuth);
   switch (height_word(place.altitude)) {
     case HeightWord::low:
@@ -36,81 +42,79 @@ std::string place_words(const BlockContext& c, const Horizontal& place, bool beg
   return c.words(begins_sentence ? "planet-words.start-overhead" : "planet-words.overhead");
 }
 
-std::string clock(const BlockContext& c, Ut t) { return c.words.time(c.year.place.zone.civil(t)); }
+std::string clock(const Teller& c, Ut t) { return c.words.time(c.zone.civil(t)); }
 
-std::string length_words(const BlockContext& c, std::chrono::minutes length) {
-  return c.words("planet-words.length-" + std::to_string(length.count()));
+/// By the clock, for what neither dusk nor dawn bounds.
+std::string by_the_clock(const Teller& c, const PlanetWindow& w) {
+  const std::string from = clock(c, w.from), to = clock(c, w.to);
+  if (w.highest)
+    return c.words("planet-words.from-to-highest",
+                   {{"from", from},
+                    {"to", to},
+                    {"time", clock(c, *w.highest)},
+                    {"place", place_words(c, *w.at_highest, false)}});
+  const Horizontal& higher = w.at_from.altitude > w.at_to.altitude ? w.at_from : w.at_to;
+  return c.words("planet-words.from-to",
+                 {{"place", place_words(c, higher, true)}, {"from", from}, {"to", to}});
 }
 
-bool by_light(WindowEdge edge) { return edge == WindowEdge::twilight; }
-
-/// From one moment to another by the clock.
-std::string by_the_clock(const BlockContext& c, const PlanetWindow& w) {
-  return c.words("planet-words.from-to", {{"place", place_words(c, w.at_best, true)},
-                                          {"from", clock(c, w.from)},
-                                          {"to", clock(c, w.to)}});
+/// "Low in the west for an hour after sunset"; `brief`: without the length.
+std::string beside_the_sun(const Teller& c, const PlanetWindow& w, bool evening,
+                           std::chrono::minutes length, bool brief) {
+  const std::string place = place_words(c, w.at_best, true);
+  if (brief)
+    return c.words(
+        evening ? "planet-words.after-sunset-brief" : "planet-words.before-sunrise-brief",
+        {{"place", place}});
+  return c.words(evening ? "planet-words.after-sunset" : "planet-words.before-sunrise",
+                 {{"place", place},
+                  {"length", c.words("planet-words.length-" + std::to_string(length.count()))}});
 }
 
-/// Seen from dusk to dawn, or around the clock.
-std::string all_night(const BlockContext& c, const PlanetWindow& w) {
-  if (!w.highest) return c.words("planet-words.all-night");
-  return c.words("planet-words.all-night-highest",
-                 {{"time", clock(c, *w.highest)}, {"place", place_words(c, *w.at_highest, false)}});
-}
-
-std::string evening_words(const BlockContext& c, const PlanetWindow& w) {
-  const bool to_dawn = w.ends == WindowEdge::twilight || w.ends == WindowEdge::open;
-  const bool from_dusk = w.begins == WindowEdge::twilight || w.begins == WindowEdge::open;
-  if (from_dusk && to_dawn) return all_night(c, w);
+std::string window_words(const Teller& c, const PlanetWindow& w, bool brief = false) {
   const bool climbs = w.highest && *w.highest - w.from > later;
-  if (by_light(w.begins) && w.ends == WindowEdge::height) {
+  const bool from_dusk = w.begins != WindowEdge::height, to_dawn = w.ends != WindowEdge::height;
+  if (from_dusk && to_dawn) {
+    if (!w.highest) return c.words("planet-words.all-night");
+    return c.words(
+        "planet-words.all-night-highest",
+        {{"time", clock(c, *w.highest)}, {"place", place_words(c, *w.at_highest, false)}});
+  }
+  if (w.begins == WindowEdge::twilight) {
     if (w.sunset) {
       const std::chrono::minutes length = spoken_length(w.to - *w.sunset);
-      if (length <= longest_length)
-        return c.words("planet-words.after-sunset", {{"place", place_words(c, w.at_best, true)},
-                                                     {"length", length_words(c, length)}});
+      if (length <= longest_length) return beside_the_sun(c, w, true, length, brief);
     }
     const std::string place = place_words(c, w.at_from, true);
-    if (climbs)
-      return c.words("planet-words.nightfall-highest",
-                     {{"place", place}, {"time", clock(c, *w.highest)}});
-    return c.words("planet-words.nightfall-sets",
-                   {{"place", place}, {"time", clock(c, w.sets.value_or(w.to))}});
+    return climbs ? c.words("planet-words.nightfall-highest",
+                            {{"place", place}, {"time", clock(c, *w.highest)}})
+                  : c.words("planet-words.nightfall-sets",
+                            {{"place", place}, {"time", clock(c, w.sets.value_or(w.to))}});
   }
-  if (w.begins == WindowEdge::height && to_dawn) {
+  if (w.ends == WindowEdge::twilight) {
+    if (w.sunrise) {
+      const std::chrono::minutes length = spoken_length(*w.sunrise - w.from);
+      if (length <= longest_length) return beside_the_sun(c, w, false, length, brief);
+    }
     const std::string direction = c.words.direction(w.at_from.azimuth), from = clock(c, w.from);
-    if (climbs)
-      return c.words("planet-words.from-highest",
-                     {{"direction", direction}, {"from", from}, {"time", clock(c, *w.highest)}});
-    return c.words(
-        "planet-words.from-dawn",
-        {{"direction", direction}, {"from", from}, {"place", place_words(c, w.at_to, false)}});
+    return climbs && w.to - *w.highest > later
+               ? c.words("planet-words.from-highest",
+                         {{"direction", direction}, {"from", from}, {"time", clock(c, *w.highest)}})
+               : c.words("planet-words.from-dawn", {{"direction", direction},
+                                                    {"from", from},
+                                                    {"place", place_words(c, w.at_to, false)}});
   }
   return by_the_clock(c, w);
 }
 
-std::string morning_words(const BlockContext& c, const PlanetWindow& w) {
-  if (w.begins == WindowEdge::height && by_light(w.ends) && w.sunrise) {
-    const std::chrono::minutes length = spoken_length(*w.sunrise - w.from);
-    if (length <= longest_length)
-      return c.words("planet-words.before-sunrise", {{"place", place_words(c, w.at_best, true)},
-                                                     {"length", length_words(c, length)}});
-    return c.words("planet-words.from-dawn", {{"direction", c.words.direction(w.at_from.azimuth)},
-                                              {"from", clock(c, w.from)},
-                                              {"place", place_words(c, w.at_to, false)}});
-  }
-  return evening_words(c, w);
-}
-
 /// ", until the 20th"
-std::string with_dates(const BlockContext& c, const std::string& phrase,
-                       const std::optional<Date>& first, const std::optional<Date>& last) {
-  const auto [year, month] = c.year.span.month(c.month_index);
+std::string with_dates(const Teller& c, const std::string& phrase, const std::optional<Date>& first,
+                       const std::optional<Date>& last) {
   const auto day_words = [&](Date date) {
     return c.words("planet-words.day-" + std::to_string(day_of(date)));
   };
   const bool late = first && day_of(*first) > 1;
-  const bool early = last && day_of(*last) < days_in_month(year, month);
+  const bool early = last && day_of(*last) < c.days;
   if (late && early && *first == *last)
     return c.words("planet-words.on", {{"phrase", phrase}, {"day", day_words(*first)}});
   if (late && early)
@@ -121,6 +125,10 @@ std::string with_dates(const BlockContext& c, const std::string& phrase,
   return phrase;
 }
 
+bool is_cut(const PlanetWindow& w) {
+  return w.begins == WindowEdge::open || w.ends == WindowEdge::open;
+}
+
 /// Whether two windows, of one date or of two, are the same stretch of the night's hours.
 bool overlap(const PlanetWindow& a, const PlanetWindow& b) {
   const Days apart((b.date - a.date).count());
@@ -129,7 +137,8 @@ bool overlap(const PlanetWindow& a, const PlanetWindow& b) {
 
 }  // namespace
 
-std::string planet_sentence(const BlockContext& c, const PlanetMonth& p) {
+std::string planet_sentence(const Words& words, const Zone& zone, const PlanetMonth& p) {
+  const Teller c{words, zone, days_in_month(year_of(p.best_date), month_of(p.best_date))};
   const auto sentence = [&](const std::string& phrase) {
     return c.words(p.optics_only ? "planet-words.sentence-optics" : "planet-words.sentence",
                    {{"phrase", phrase}});
@@ -139,22 +148,29 @@ std::string planet_sentence(const BlockContext& c, const PlanetMonth& p) {
     const bool beside_sun = p.elongation < near_the_sun && -p.elongation < near_the_sun;
     return c.words(beside_sun ? "planet-words.near-sun" : "planet-words.not-visible");
   }
-  const auto& evening = p.evening_window;
-  const auto& morning = p.morning_window;
-  if (evening && morning && overlap(*evening, *morning)) {
-    const bool by_evening = p.sight != PlanetSight::morning;
+  std::optional<PlanetWindow> evening = p.evening_window, morning = p.morning_window;
+  if (evening && morning && overlap(*evening, *morning))
     return sentence(with_dates(
-        c, by_evening ? evening_words(c, *evening) : morning_words(c, *morning),
+        c, window_words(c, p.sight == PlanetSight::morning ? *morning : *evening),
         std::min(p.first_evening, p.first_morning), std::max(p.last_evening, p.last_morning)));
-  }
+  // Where the Sun stays down a stretch may run on past the noon at which nights are cut.
+  if (evening && morning && is_cut(*evening) != is_cut(*morning))
+    (is_cut(*evening) ? evening : morning).reset();
+  const bool brief = evening && morning;
   std::string text;
   if (evening)
-    text = sentence(with_dates(c, evening_words(c, *evening), p.first_evening, p.last_evening));
+    text =
+        sentence(with_dates(c, window_words(c, *evening, brief), p.first_evening, p.last_evening));
   if (morning) {
-    if (!text.empty()) text += ' ';
-    text += sentence(with_dates(c, morning_words(c, *morning), p.first_morning, p.last_morning));
+    if (brief) text += ' ';
+    text +=
+        sentence(with_dates(c, window_words(c, *morning, brief), p.first_morning, p.last_morning));
   }
   return text;
+}
+
+std::string planet_sentence(const BlockContext& c, const PlanetMonth& p) {
+  return planet_sentence(c.words, c.year.place.zone, p);
 }
 
 }  // namespace duskleaf

@@ -11,5 +11,6 @@ namespace duskleaf {
 /// west for an hour after sunset, until the 20th." Times are of the windows' dates; most sentences
 /// have 70 characters or fewer.
 std::string planet_sentence(const BlockContext&, const PlanetMonth&);
+std::string planet_sentence(const Words&, const Zone&, const PlanetMonth&);
 
 }  // namespace duskleaf
