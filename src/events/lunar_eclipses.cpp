@@ -7,7 +7,8 @@
 //   penumbra's radius = 1.01 parallax of the Moon + Sun's semidiameter + Sun's parallax
 // as angles at the Earth's centre, about the point opposite to the apparent Sun. The parallaxes are
 // equatorial; the Sun's semidiameter is 959.63" at 1 au; the Moon's is k = 0.2725076 of the Earth's
-// equatorial radius (IAU 1982). Greatest is the least distance from the axis, in length.
+// equatorial radius (IAU 1982). Greatest is the least angle from the axis, which the published
+// instants follow (the least length is up to 6 s away).
 #include "events/lunar_eclipses.hpp"
 
 #include <algorithm>
@@ -58,7 +59,7 @@ std::optional<LunarEclipse> eclipse_near(const YearEphemeris& ephemeris, Tt full
   const auto shadow = [&](double day) { return shadow_at(ephemeris, day); };
   const double about = full_moon.days();
   const double greatest = search_detail::least_between(
-                              [&](double day) { return shadow(day).from_axis / earth_radius_au; },
+                              [&](double day) { return shadow(day).separation; },
                               about - half_span_days, about + half_span_days, about, tolerance_days)
                               .at;
   const Shadow most = shadow(greatest);
