@@ -14,8 +14,8 @@ struct LimbContact {
   Horizontal place;      // of the target, topocentric, no refraction
   Angle position_angle;  // of the point on the Moon's edge, from celestial north through east
   Angle from_zenith;     // the same point, counterclockwise from the zenith
-  bool dark_limb;
-  bool up;  // the target stands above -34'
+  bool dark_limb;        // over 90 degrees from the middle of the bright limb
+  bool up;               // the target stands above -34'
   Angle sun_altitude;
 };
 
@@ -30,7 +30,11 @@ struct Occultation {
 };
 
 /// Every occultation of a planet or star of targets() at the site, in order, with a contact in
-/// [from, to) at which the target is up. Clusters' stars are among them.
+/// [from, to) at which the target is up. Clusters' stars are among them. The ephemeris should reach
+/// half a day further on both sides: what it cuts is not found. Against a DE431-based reference
+/// (623 at five sites, 2020-2035) contacts are off by at most 1 s for Mercury to Saturn, 5 s for
+/// Uranus, Neptune and stars (the catalogue's places), 11 s for Porrima; a graze within 0.002
+/// degree may go either way.
 std::vector<Occultation> occultations(const SiteSky&, Ut from, Ut to);
 /// Instants for the tables: those contacts at which the target is up; value its altitude in
 /// degrees.
