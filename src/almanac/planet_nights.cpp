@@ -67,9 +67,16 @@ class Watch {
     return sine_of_altitude(track_.at(s.day_part), s, site_);
   }
   bool high_enough(double sine) const { return sine >= least_; }
-  bool visible(const PlanetNight::Sample& s) const { return light_lets(s) && high_enough(sine(s)); }
+  bool visible_moonless(const PlanetNight::Sample& s) const {
+    return light_lets(s, s.faintest_moonless) && high_enough(sine(s));
+  }
 
  private:
+  bool light_lets(const PlanetNight::Sample& s, double faintest_star) const {
+    return optics_ ? s.dark
+                   : bare_eye_visible(planet_, magnitude_, least_height(planet_), faintest_star);
+  }
+
   const Observer& site_;
   Track track_;
   double least_;
