@@ -1,52 +1,53 @@
+// Each planet in a sentence and in numbers. Sizes and lit parts: sky/planet_disc.hpp.
+#include <algorithm>
+#include <cmath>
+
 #include "almanac/planet_months.hpp"
 #include "catalogue/constellations.hpp"
 #include "sheet/blocks/blocks.hpp"
+#include "sheet/planet_words.hpp"
 #include "sheet/setting.hpp"
 
 namespace duskleaf {
 namespace {
+
+// Right edges of the columns of numbers, from the block's right edge.
+constexpr double lit_back = 0, size_back = 9, magnitude_back = 16.5, where_back = 24,
+                 best_back = 35.5;
 
 std::string short_date(const BlockContext& c, Date d) {
   return c.words("date.day-month",
                  {{"day", std::to_string(day_of(d))}, {"month", c.words.month_short(month_of(d))}});
 }
 
-/// "evenings, until 22 Mar": the part of the night, and the dates where it does not last all month.
-std::string with_dates(const BlockContext& c, const std::string& key,
-                       const std::optional<Date>& first_seen,
-                       const std::optional<Date>& last_seen) {
-  const auto [year, month] = c.year.span.month(c.month_index);
-  const bool late = first_seen && day_of(*first_seen) > 1;
-  const bool early = last_seen && day_of(*last_seen) < days_in_month(year, month);
-  const std::string& part = c.words(key);
-  if (late && early)
-    return c.words(
-        "planets.between",
-        {{"part", part}, {"from", short_date(c, *first_seen)}, {"to", short_date(c, *last_seen)}});
-  if (late) return c.words("planets.from", {{"part", part}, {"from", short_date(c, *first_seen)}});
-  if (early) return c.words("planets.until", {{"part", part}, {"to", short_date(c, *last_seen)}});
-  return part;
+/// What a telescope adds, and where the planet stands: "in Gemini", "rings open 12°, in Pisces".
+std::string remark(const BlockContext& c, const PlanetMonth& p) {
+  const std::string name(constellations()[static_cast<std::size_t>(p.constellation)].name);
+  if (p.planet != Body::saturn) return c.words("planets.stands-in", {{"name", name}});
+  const double tilt = std::abs(p.disc.ring_tilt.degrees());
+  if (tilt < 1.5) return c.words("planets.rings-edge", {{"name", name}});
+  return c.words("planets.rings", {{"degrees", c.words.number(tilt, 0)}, {"name", name}});
 }
 
-std::string when_seen(const BlockContext& c, const PlanetMonth& planet) {
-  std::string text;
-  switch (planet.sight) {
-    case PlanetSight::not_visible:
-      return c.words(planet.optics_only ? "planets.too-faint" : "planets.not-visible");
-    case PlanetSight::morning:
-      text = with_dates(c, "planets.morning", planet.first_morning, planet.last_morning);
-      break;
-    case PlanetSight::evening:
-      text = with_dates(c, "planets.evening", planet.first_evening, planet.last_evening);
-      break;
-    case PlanetSight::all_night:
-      text = c.words("planets.all-night");
-      break;
-    case PlanetSight::evening_and_morning:
-      text = c.words("planets.evening-and-morning");
-      break;
+void draw_numbers(const BlockContext& c, Setter& set, const PlanetMonth& p, double right,
+                  double baseline, const Style& cell) {
+  const bool inner = p.planet == Body::mercury || p.planet == Body::venus || p.planet == Body::mars;
+  if (p.best && p.place) {
+    set.right(right - best_back, baseline, c.words.time(c.year.place.zone.civil(*p.best)), cell);
+    set.right(right - where_back, baseline,
+              c.words("constellations.at",
+                      {{"direction", c.words.direction_short(p.place->azimuth)},
+                       {"altitude", c.words.number(p.place->altitude.degrees(), 0)}}),
+              cell);
   }
-  return planet.optics_only ? c.words("planets.with-optics", {{"when", text}}) : text;
+  set.right(right - magnitude_back, baseline, c.words.number(p.magnitude, 1), cell);
+  const double size = p.disc.diameter.arcseconds();
+  set.right(right - size_back, baseline,
+            c.words("planets.arcseconds", {{"n", c.words.number(size, size < 9.95 ? 1 : 0)}}),
+            cell);
+  if (inner)
+    set.right(right - lit_back, baseline,
+              c.words("planets.percent", {{"n", c.words.number(100 * p.disc.lit, 0)}}), cell);
 }
 
 }  // namespace
@@ -54,48 +55,47 @@ std::string when_seen(const BlockContext& c, const PlanetMonth& planet) {
 double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
                     std::vector<Mark>& out) {
   Setter set(c, out);
-  const Zone& zone = c.year.place.zone;
   double y = area.y + set.heading(area.x, area.y, area.width, c.words("planets.title"),
                                   c.words("planets.aside"));
-  const Style cell = set.table();
-  Style head = cell;
-  head.ink = c.theme.soft;
-  const double when_x = area.x + 13, in_x = area.right() - 17, magnitude_x = in_x - 2.5,
-               where_x = magnitude_x - 8, best_x = where_x - 11.5;
-  set.left(when_x, y + 2.4, c.words("planets.when"), head);
-  set.right(best_x, y + 2.4, c.words("planets.best"), head);
-  set.right(where_x, y + 2.4, c.words("planets.where"), head);
-  set.right(magnitude_x, y + 2.4, c.words("planets.magnitude"), head);
-  set.left(in_x, y + 2.4, c.words("planets.in"), head);
-  y += 3.6;
-  for (const PlanetMonth& planet : planet_month(c.ephemeris, c.year, c.month_index)) {
-    const double baseline = y + 2.6;
-    set.left(area.x, baseline, c.words("body." + std::string(body_name(planet.planet))),
+  Style cell = set.table();
+  cell.size_pt = c.theme.table_pt;
+  Style head = cell, quiet = cell;
+  head.ink = quiet.ink = c.theme.soft;
+  const double pitch = cell.size_pt * mm_per_pt * 1.12, right = area.right();
+  const double best_room = c.order.clock_12 ? 12.5 : 9.5;
+  const double name_room = 12.5, text_x = area.x + name_room;
+  const double text_room = right - best_back - best_room - text_x;
+  set.right(right - best_back, y + 2.2, c.words("planets.best"), head);
+  set.right(right - where_back, y + 2.2, c.words("planets.where"), head);
+  set.right(right - magnitude_back, y + 2.2, c.words("planets.magnitude"), head);
+  set.right(right - size_back, y + 2.2, c.words("planets.size"), head);
+  set.right(right - lit_back, y + 2.2, c.words("planets.lit"), head);
+  y += 3.0;
+  for (const PlanetMonth& p : planet_month(c.ephemeris, c.year, c.month_index)) {
+    const double baseline = y + cell.size_pt * mm_per_pt * 0.95;
+    const bool seen = p.sight != PlanetSight::not_visible;
+    set.left(area.x, baseline, c.words("body." + std::string(body_name(p.planet))),
              set.strong(cell));
-    const double best_room =
-        (c.order.clock_12 ? 11.5 : 9) + (planet.best && day_of(planet.best_date) != 15 ? 9.5 : 0);
-    set.fitted(when_x, baseline, when_seen(c, planet), cell, best_x - best_room - when_x);
-    if (planet.best && planet.place) {
-      // Where the 15th does not show it, the nearest date that does stands with the time.
-      std::string best = c.words.time(zone.civil(*planet.best));
-      if (day_of(planet.best_date) != 15) best = short_date(c, planet.best_date) + ", " + best;
-      set.right(best_x, baseline, best, cell);
-      set.right(where_x, baseline,
-                c.words("constellations.at",
-                        {{"direction", c.words.direction_short(planet.place->azimuth)},
-                         {"altitude", c.words.number(planet.place->altitude.degrees(), 0)}}),
-                cell);
+    double height = 0;
+    if (!seen) {
+      // Nothing to measure of what is out of sight: its sentence has the whole row.
+      height = set.paragraph(text_x, y, right - text_x, planet_sentence(c, p), cell, 1.12);
     } else {
-      set.right(best_x, baseline, "–", cell);
-      set.right(where_x, baseline, "–", cell);
+      height = set.paragraph(text_x, y, text_room, planet_sentence(c, p), cell, 1.12);
+      draw_numbers(c, set, p, right, baseline, cell);
+      // Under the numbers, in the room of the sentence's second line.
+      std::string below = remark(c, p);
+      if (p.best && day_of(p.best_date) != 15)
+        below =
+            c.words("planets.on-date", {{"date", short_date(c, p.best_date)}, {"remark", below}});
+      const double room = right - (text_x + text_room) - 1.5;
+      set.fitted(right - std::min(room, set.width(below, quiet)), baseline + pitch, below, quiet,
+                 room);
+      height = std::max(height, 2 * pitch);
     }
-    set.right(magnitude_x, baseline, c.words.number(planet.magnitude, 1), cell);
-    set.fitted(in_x, baseline,
-               constellations()[static_cast<std::size_t>(planet.constellation)].name, cell,
-               area.right() - in_x);
-    y += 3.3;
+    y += height + 0.3;
   }
-  return y - area.y;
+  return y - area.y + 0.4;
 }
 
 }  // namespace duskleaf

@@ -1,0 +1,17 @@
+#pragma once
+
+#include "sheet/block.hpp"
+
+namespace duskleaf {
+
+/// The evening for which a month's page says what to show.
+struct ShowMoment {
+  Date evening;
+  Ut at;
+  bool session;  // one of the group's own
+};
+/// The month's first session by date, from its beginning on: when the Sun is 12 degrees down,
+/// within the session's hours; without one the evening and moment of the charts.
+ShowMoment show_moment(const BlockContext&);
+
+}  // namespace duskleaf
