@@ -7,15 +7,15 @@
 //   (own fit to common practice: Rigel 100 mm, Polaris 80 mm). Without a telescope the gap must
 //   look 4' wide: to the bare eye, or ten times magnified in binoculars of 50 mm.
 // - What is extended: its whole light must be that bright, with an allowance for what its mean
-//   surface brightness lies below the sky's: 0.4 of the difference up to 3 magnitudes, 1.5 of what
-//   goes beyond; past 4.5 magnitudes no opening shows it. Set so that the Andromeda Galaxy is a
-//   bare-eye sight down to a limit of 4.9, needs binoculars at 4, and M33 is a bare-eye sight at
-//   6.5. Open clusters are seen star by star: an allowance of 2 at most, and no end. To be told
-//   from a star it must look half a degree wide: ten times magnified in binoculars, D times in a
-//   telescope of D mm.
+//   surface brightness lies below the sky's: half of the difference, and the whole too of what goes
+//   beyond 3 magnitudes; past 3.8 magnitudes no opening shows it. Set so that the Andromeda Galaxy
+//   is a bare-eye sight down to a limit of 4.7 and one for binoculars in town, M33 a bare-eye sight
+//   at 6.5. Star clusters are seen star by star or by their cores: half of the difference without
+//   end, for open ones 2 magnitudes at most. To be told from a star it must look half a degree
+//   wide: ten times magnified in binoculars, D times in a telescope of D mm.
 // The sky's brightness follows from the faintest star by B. E. Schaefer 1990, PASP 102, 212, as in
-// sky/brightness.cpp, turned round. Extinction on the way down from the zenith is left out: nothing
-// is listed below 15 degrees, where it takes 0.7 magnitude (0.25 for each air mass).
+// sky/brightness.cpp, turned round. The faintest star is the zenith's; lower down an ordinary
+// night takes 0.25 magnitude for each further air mass (common practice), 1 / sine of the altitude.
 #include "almanac/show_list.hpp"
 
 #include <algorithm>
@@ -26,6 +26,7 @@
 #include <numbers>
 
 #include "almanac/planets.hpp"
+#include "almanac/skyline.hpp"
 #include "catalogue/stars.hpp"
 #include "sky/planet_magnitude.hpp"
 
@@ -69,11 +70,13 @@ bool shows_extended(const ShowObject& object, double faintest_star, double openi
   const double area = std::numbers::pi / 4.0 * width * width * object.axis_ratio;
   const double below_sky = std::max(
       0.0, object.magnitude + 2.5 * std::log10(area) - sky_surface_brightness(faintest_star));
-  double allowance = 0.4 * std::min(below_sky, 3.0) + 1.5 * std::max(0.0, below_sky - 3.0);
-  if (object.sort == ShowClass::open_cluster)
+  double allowance = 0.5 * below_sky;
+  if (object.sort == ShowClass::open_cluster) {
     allowance = std::min(allowance, 2.0);
-  else if (below_sky > 4.5)
-    return false;
+  } else if (object.sort != ShowClass::globular_cluster) {
+    if (below_sky > 3.8) return false;
+    allowance += std::max(0.0, below_sky - 3.0);
+  }
   if (object.magnitude + allowance > faintest_star + gain(opening_mm)) return false;
   if (opening_mm == 0.0) return true;
   const double magnification = opening_mm > binoculars_mm ? opening_mm : binoculars_magnify;
@@ -133,8 +136,8 @@ struct Candidate {
   int kind;  // equal for what bores when repeated; -1 for bodies
 };
 
-void add_bodies(const SiteSky& sky, const SkyLight& light, Ut moment,
-                std::vector<Candidate>& candidates) {
+void add_bodies(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, const SkyLight& light,
+                Ut moment, std::vector<Candidate>& candidates) {
   const YearEphemeris& ephemeris = sky.ephemeris();
   const Angle latitude = sky.observer().latitude, sidereal = sky.local_sidereal_time(moment);
   if (light.moon_lit > moon_lit_from && light.moon_lit < moon_lit_to) {
@@ -143,7 +146,7 @@ void add_bodies(const SiteSky& sky, const SkyLight& light, Ut moment,
     moon.standing = Standing::at_its_best;
     moon.place = refracted(light.moon);
     moon.magnitude = std::numeric_limits<double>::quiet_NaN();
-    if (moon.place.altitude >= least_moon_height)
+    if (moon.place.altitude >= least_moon_height && above_skyline(skyline, moon.place))
       candidates.push_back({moon, value_of(rank_of(Body::moon), moon), -1});
   }
   if (light.sun_altitude > planets_visible_below) return;
@@ -152,7 +155,7 @@ void add_bodies(const SiteSky& sky, const SkyLight& light, Ut moment,
     ShowItem item{};
     item.body = planet;
     item.place = apparent_place(sky, planet, moment);
-    if (item.place.altitude < least_planet_height) continue;
+    if (item.place.altitude < least_planet_height || !above_skyline(skyline, item.place)) continue;
     item.magnitude = planet_magnitude(planet, planet_aspect(ephemeris, planet, now));
     if (!bare_eye_visible(planet, item.magnitude, item.place.altitude, light.faintest_star)) {
       // Uranus and Neptune are found with optics, in a dark sky; half a magnitude of margin, as
@@ -175,8 +178,8 @@ void add_bodies(const SiteSky& sky, const SkyLight& light, Ut moment,
   }
 }
 
-void add_objects(const SiteSky& sky, double faintest_star, Ut moment,
-                 std::vector<Candidate>& candidates) {
+void add_objects(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, double faintest_star,
+                 Ut moment, std::vector<Candidate>& candidates) {
   const Tt now = to_tt(moment);
   const Angle latitude = sky.observer().latitude, sidereal = sky.local_sidereal_time(moment);
   const Eigen::Matrix3d to_date = sky.ephemeris().icrs_to_date(now);
@@ -192,8 +195,9 @@ void add_objects(const SiteSky& sky, double faintest_star, Ut moment,
     ShowItem item{};
     item.object = static_cast<int>(i);
     item.place = refracted(to_horizontal(of_date, sidereal, latitude));
-    if (item.place.altitude < least_object_height) continue;
-    const std::optional<double> opening = least_opening_mm(object, faintest_star);
+    if (item.place.altitude < least_object_height || !above_skyline(skyline, item.place)) continue;
+    const double extinction = 0.25 * (1.0 / sin(item.place.altitude) - 1.0);
+    const std::optional<double> opening = least_opening_mm(object, faintest_star - extinction);
     if (!opening) continue;
     item.opening_mm = *opening;
     item.magnitude = object.magnitude;
@@ -237,9 +241,9 @@ std::vector<ShowItem> show_list(const SiteSky& sky, const SiteYear& year, Ut mom
   std::vector<ShowItem> list;
   if (light.sun_altitude > sun_rise_altitude) return list;
   std::vector<Candidate> candidates;
-  add_bodies(sky, light, moment, candidates);
+  add_bodies(sky, year.place.skyline, light, moment, candidates);
   if (light.sun_altitude < civil_altitude)
-    add_objects(sky, light.faintest_star, moment, candidates);
+    add_objects(sky, year.place.skyline, light.faintest_star, moment, candidates);
   for (const Standing standing : {Standing::rising, Standing::at_its_best, Standing::last_chance}) {
     std::vector<Candidate> part;
     std::copy_if(candidates.begin(), candidates.end(), std::back_inserter(part),

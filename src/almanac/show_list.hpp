@@ -29,13 +29,13 @@ struct ShowItem {
   double worth;       // for choosing among many of one standing: falls along its part of the list
 };
 /// What there is to show at a moment: rising, at its best, last chance, the best first within each;
-/// nothing lower than 15 degrees but planets (10) and the Moon (5). Nothing before the Sun has set;
-/// planets from planets_visible_below on, stars and the rest from the end of civil twilight, those
-/// that no opening of 300 mm shows under that sky left out.
+/// nothing behind the order's skyline, nor lower than 15 degrees but planets (10) and the Moon (5).
+/// Nothing before the Sun has set; planets from planets_visible_below on, stars and the rest from
+/// the end of civil twilight, those that no opening of 300 mm shows under that sky left out.
 std::vector<ShowItem> show_list(const SiteSky&, const SiteYear&, Ut moment);
 
-/// The least usual opening (0, 50, 80, 100, 150, 200, 250, 300 mm) that shows an object under a sky
-/// whose faintest star for the bare eye is given; empty where none does.
+/// The least usual opening (0, 50, 80, 100, 150, 200, 250, 300 mm) that shows an object where the
+/// faintest star for the bare eye is given; empty where none does.
 std::optional<double> least_opening_mm(const ShowObject&, double faintest_star);
 
 }  // namespace duskleaf

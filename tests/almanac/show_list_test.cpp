@@ -301,6 +301,45 @@ TEST(ShowList, PlanetsAreThereWhenTheyShine) {
   EXPECT_GT(neptune, 50);
 }
 
+// A wall 40 degrees high from south to north through west takes away just what is behind it.
+TEST(ShowList, NothingBehindTheSkyline) {
+  const Site open(52, 13, "Europe/Berlin", 5.5);
+  Site walled(52, 13, "Europe/Berlin", 5.5);
+  const auto point = [](double azimuth, double altitude) {
+    return SkylinePoint{Angle::from_degrees(azimuth), Angle::from_degrees(altitude)};
+  };
+  walled.year.place.skyline = {point(0, 0), point(179.9, 0), point(180, 40), point(359.9, 40)};
+  int gone = 0, kept = 0;
+  for (int month = 1; month <= 12; ++month) {
+    const Ut t = open.evening(month, 6, 22);
+    const auto all = open.at(t), seen = walled.at(t);
+    std::size_t expected = 0;
+    for (const ShowItem& item : all) {
+      const bool behind =
+          item.place.azimuth.degrees() > 180.0 && item.place.altitude.degrees() < 40.0;
+      ++(behind ? gone : kept);
+      expected += !behind;
+    }
+    EXPECT_EQ(seen.size(), expected) << month;
+    for (const ShowItem& item : seen)
+      EXPECT_TRUE(item.place.azimuth.degrees() < 180.0 || item.place.altitude.degrees() > 40.0);
+  }
+  EXPECT_GT(gone, 50);
+  EXPECT_GT(kept, 200);
+}
+
+// Twenty degrees up M31 asks for more than overhead.
+TEST(ShowList, LowDownItTakesMore) {
+  const Site site(45, 10, "Europe/Rome", 5.0);
+  const auto high = site.at(site.evening(11, 2, 21)), low = site.at(site.evening(8, 2, 22));
+  const ShowItem *overhead = find(high, "M31"), *rising = find(low, "M31");
+  ASSERT_TRUE(overhead && rising);
+  EXPECT_GT(overhead->place.altitude.degrees(), 70);
+  EXPECT_LT(rising->place.altitude.degrees(), 30);
+  EXPECT_EQ(overhead->opening_mm, 0);
+  EXPECT_EQ(rising->opening_mm, 50);
+}
+
 // The first few of a list are of several kinds.
 TEST(ShowList, NotTenOpenClusters) {
   int lists = 0;

@@ -36,13 +36,14 @@ DEEP_SKY = {
         ("M42", "NGC1976", 3, 0.9), ("M8", "NGC6523", 3, 0.6, {"magnitude": 5.8}),
         ("M17", "NGC6618", 2, 0.6, {"magnitude": 6.0, "size": 11}), ("M20", "NGC6514", 2, 0.9, {"magnitude": 6.3}),
         ("M16", "NGC6611", 1, 0.8), ("M1", "NGC1952", 2, 0.7), ("NGC 7000", "", 1, 0.8),
-        ("NGC 3372", "", 3, 1, {"magnitude": 3.0}), ("NGC 2070", "", 3, 0.8, {"magnitude": 5.0})],
+        ("NGC 3372", "", 3, 1, {"magnitude": 3.0, "size": 60}), ("NGC 2070", "", 3, 0.8, {"magnitude": 5.0})],
     "planetary-nebula": [
         ("M57", "NGC6720", 3, 0.75, {"size": 1.4}), ("M27", "NGC6853", 3, 0.8), ("NGC 7293", "", 2, 0.8),
         ("NGC 7009", "", 2, 0.7), ("NGC 3132", "", 2, 0.8), ("NGC 3242", "", 2, 0.9), ("NGC 2392", "", 2),
         ("NGC 6543", "", 2, 0.9), ("NGC 7662", "", 2, 0.9), ("NGC 3918", "", 2)],
     "galaxy": [
-        ("M31", "NGC224", 3, 0.33), ("M33", "NGC598", 2, 0.6), ("M81", "NGC3031", 3, 0.52), ("M82", "NGC3034", 3, 0.4),
+        ("M31", "NGC224", 3, 0.33, {"size": 120}), ("M33", "NGC598", 2, 0.6), ("M81", "NGC3031", 3, 0.52),
+        ("M82", "NGC3034", 3, 0.4),
         ("M51", "NGC5194", 2, 0.65), ("M101", "NGC5457", 1, 0.95), ("M104", "NGC4594", 3, 0.4), ("M83", "NGC5236", 2, 0.9),
         ("M64", "NGC4826", 2, 0.54), ("M66", "NGC3627", 2, 0.46), ("M87", "NGC4486", 1, 0.8), ("NGC 253", "", 3, 0.25),
         ("NGC 55", "", 2, 0.17), ("NGC 5128", "", 3, 0.78), ("NGC 4565", "", 2, 0.13), ("NGC 292", "", 3, 0.6)],
@@ -52,7 +53,7 @@ DEEP_SKY = {
 MEMORY = [
     ("Mel 25", "open-cluster", (4, 26.9), 15.87, 0.5, 330, 3, 1), ("Mel 20", "open-cluster", (3, 24.3), 49.87, 1.2, 185, 2, 1),
     ("Mel 111", "open-cluster", (12, 25.1), 26.1, 1.8, 275, 2, 1), ("Cr 399", "open-cluster", (19, 25.4), 20.18, 3.6, 60, 2, 1),
-    ("LMC", "galaxy", (5, 23.6), -69.75, 0.9, 645, 3, 0.85),
+    ("LMC", "galaxy", (5, 23.6), -69.75, 0.9, 400, 3, 0.85),
 ]
 # Doubles: HR of the brighter star, HR of the other where it has a row of its own, rank, and a separation or a difference in
 # magnitude where the catalogue has none, means another pair, or an orbit has moved the stars since (then about 2027).
