@@ -7,7 +7,7 @@
 // difference's base bends: Mercury's rate turns most. Neptune's longitude turns by 1.7 arcseconds a
 // day^2, so that its noise of 0.001 arcsecond over half a day is 100 s at worst. Largest
 // differences from the DE431-based reference, 639 instants of 2020-2035: oppositions (69) and
-// conjunctions (69) 40 s (Uranus, Neptune; others 4 s), inferior and superior conjunctions
+// conjunctions (69) 40 s (Uranus, Neptune; others 8 s), inferior and superior conjunctions
 // (121) 1.1 s, stations of Mercury (100) 67 s, of the others (159) 56 s, greatest elongations (121)
 // 21 s and 0.00001 degree.
 #include "events/configurations.hpp"

@@ -177,9 +177,10 @@ int target_index(std::string_view name) {
 }
 
 std::string_view pair_name(int a, int b) {
-  const int n = static_cast<int>(targets().size());
-  if (a < 0 || b < 0 || a >= n || b >= n) throw std::out_of_range("no such target");
-  return table().pairs[static_cast<std::size_t>(a * n + b)];
+  const std::size_t n = targets().size(), row = static_cast<std::size_t>(a),
+                    column = static_cast<std::size_t>(b);
+  if (a < 0 || b < 0 || row >= n || column >= n) throw std::out_of_range("no such target");
+  return table().pairs[row * n + column];
 }
 
 SkyFrame sky_frame(const YearEphemeris& ephemeris, Tt t) {

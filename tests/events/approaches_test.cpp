@@ -177,6 +177,36 @@ TEST(ClosestApproaches, OfASpanAreItsOwnAlone) {
   EXPECT_NO_THROW(closest_approaches(tables, to_ut(tables.from()), to_ut(tables.to())));
 }
 
+// Besides the reference's years, at both ends of those supported: each is a least separation,
+// nearer than a few hours before and after, and keeps the limits.
+TEST(ClosestApproaches, AreLeastSeparationsInEveryCentury) {
+  for (const int year : {1900, 1950, 2100}) {
+    const YearEphemeris& tables = tables_of_year(year);
+    const std::vector<Approach> all = approaches_of(year);
+    EXPECT_GT(all.size(), 90u) << year;
+    for (const Approach& a : all) {
+      const Target &p = targets()[static_cast<std::size_t>(a.a)],
+                   &q = targets()[static_cast<std::size_t>(a.b)];
+      const auto apart = [&](const Target& x, Body y, Tt t) {
+        const Eigen::Vector3d u = apparent_direction(tables, x, t), v = tables.apparent(y, t);
+        return arctan2(u.cross(v).norm(), u.dot(v)).degrees();
+      };
+      const auto separation = [&](Days off) {
+        const Tt t = to_tt(a.at + off);
+        const Eigen::Vector3d u = apparent_direction(tables, p, t),
+                              v = apparent_direction(tables, q, t);
+        return arctan2(u.cross(v).norm(), u.dot(v)).degrees();
+      };
+      const Days off(a.a == target_index(Body::moon) ? 0.1 : 0.5);
+      EXPECT_LT(separation(Days(0)), separation(off)) << name_of(a) << ' ' << year;
+      EXPECT_LT(separation(Days(0)), separation(-off)) << name_of(a) << ' ' << year;
+      EXPECT_NEAR(separation(Days(0)), a.separation.degrees(), 1e-9);
+      for (const Target* x : {&p, &q})
+        EXPECT_GE(apart(*x, Body::sun, to_tt(a.at)), 12.0) << name_of(a) << ' ' << year;
+    }
+  }
+}
+
 TEST(ClosestApproaches, AreInstantsOfTheTables) {
   const std::vector<Approach> all = approaches_of(2027);
   ASSERT_FALSE(all.empty());

@@ -62,8 +62,7 @@ TEST(PlanetConfigurations, AreThoseOfTheReferenceNoneMissedNoneExtra) {
       ASSERT_NE(near, found.end()) << label;
       const double seconds = std::abs(Seconds(near->at - row.at).count());
       EXPECT_LT(seconds, slack_seconds(row.event)) << label;
-      auto& entry =
-          worst[row.event.starts_with("stationary") ? row.event + ' ' + row.body : row.event];
+      auto& entry = worst[row.event + ' ' + row.body];
       ++entry.first;
       entry.second = std::max(entry.second, seconds);
       ASSERT_EQ(near->value.has_value(), !std::isnan(row.value)) << label;
