@@ -13,11 +13,11 @@ namespace duskleaf {
 /// practice: nobody sweeps with optics, or strains to see, near a Sun that has barely set).
 /// Evening: until an hour after the evening's drawn moment (EveningMoment; at least until the
 /// darkest moment where the Sun is down for less than six hours). Morning: from two hours before
-/// sunrise, or one before nautical dawn where that is earlier, but after the darkest moment; and it
-/// must be seen in the last hour whose light lets it be seen: what has set before the day breaks is
-/// no sight of the morning. What is seen between the two alone goes by the side of the darkest
-/// moment on which it stands highest. All night: both, and at nine tenths or more of the time with
-/// the Sun below -12 degrees.
+/// sunrise, or one before nautical dawn where that is earlier, but after the darkest moment.
+/// All night: both, and at nine tenths or more of the time with the Sun below -12 degrees. Else a
+/// sight of the morning must be seen in the last hour whose light lets it be seen: what has set
+/// before the day breaks is none. What is seen between the two alone goes by the side of the
+/// darkest moment on which it stands highest.
 enum class PlanetSight { not_visible, evening, morning, evening_and_morning, all_night };
 
 /// What begins or ends a planet's window: its height, the Sun's light, or the night's 24 hours

@@ -170,8 +170,9 @@ PlanetSeen see_planet(const SiteSky& sky, const PlanetNight& night, Body planet,
                                : between)
         .offer(i, altitude);
   }
+  const bool all_night = evening.sample && morning.sample && dark > 0 && 10 * dark_seen >= 9 * dark;
   // What has set long before the day breaks is no sight of the morning.
-  if (morning.sample && last_light - last_seen > one_hour) {
+  if (morning.sample && !all_night && last_light - last_seen > one_hour) {
     between.offer(*morning.sample, morning.altitude);
     morning.sample.reset();
   }
@@ -185,8 +186,7 @@ PlanetSeen see_planet(const SiteSky& sky, const PlanetNight& night, Body planet,
   // The word and the time come from the same part of the night.
   seen.best = seen.evening ? seen.evening : seen.morning;
   if (seen.evening && seen.morning)
-    seen.sight = dark > 0 && 10 * dark_seen >= 9 * dark ? PlanetSight::all_night
-                                                        : PlanetSight::evening_and_morning;
+    seen.sight = all_night ? PlanetSight::all_night : PlanetSight::evening_and_morning;
   else if (seen.best)
     seen.sight = seen.evening ? PlanetSight::evening : PlanetSight::morning;
   return seen;

@@ -6,6 +6,7 @@
 #include <gtest/gtest.h>
 #include <set>
 
+#include "almanac/evening_moment.hpp"
 #include "almanac/planet_months.hpp"
 #include "catalogue/constellations.hpp"
 #include "sites.hpp"
@@ -58,6 +59,32 @@ TEST(PlanetDays, ThreeDaysAMonthAndSevenPlanets) {
     }
   }
   EXPECT_EQ(days, (std::set<int>{1, 11, 21}));
+}
+
+// The table of planets lifted what had set long ago by refraction that nobody sees.
+TEST(PlanetDays, AltitudesBelowTheHorizonAreTrue) {
+  const SiteYear year = year_of_site(test_place(40.0, -3.7, "Europe/Madrid"), 2027);
+  const YearEphemeris& ephemeris = ephemeris_of({2027, 1});
+  const SiteSky sky(ephemeris, year.place.observer, year.nights.front().from,
+                    year.nights.back().to);
+  int below = 0, above = 0;
+  for (const PlanetDay& day : planet_days(ephemeris, year)) {
+    const Night& night = night_of(year, year_of(day.date), month_of(day.date), day_of(day.date));
+    const ChartHour& hour =
+        year.place.chart_hours[static_cast<std::size_t>(month_of(day.date) - 1)];
+    const Ut moment = chart_moment(sky, year.place.zone, hour, night);
+    const double true_altitude = sky.altitude(day.planet, moment).degrees();
+    const double lifted = day.altitude_at_chart_hour.degrees() - true_altitude;
+    if (true_altitude < -1) {
+      EXPECT_NEAR(lifted, 0, 1e-4) << iso_date(day.date) << ' ' << body_name(day.planet);
+      ++below;
+    } else if (true_altitude < 80) {
+      EXPECT_GT(lifted, 0.001) << iso_date(day.date) << ' ' << body_name(day.planet);
+      ++above;
+    }
+  }
+  EXPECT_GT(below, 80);
+  EXPECT_GT(above, 80);
 }
 
 TEST(PlanetEvening, TimesAreOfTheNightAndNearTheMoment) {
