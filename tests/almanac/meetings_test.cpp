@@ -247,6 +247,25 @@ TEST(Meetings, LooksAreAboveTheSkylineWhereTheyCanBe) {
   EXPECT_GT(moved, 0);
 }
 
+// Closest moments of approaches_de431.csv ten seconds before a midnight and half an hour after
+// London's clocks went forward: the look belongs to the evening before, on its clock.
+TEST(Meetings, CloseToMidnightAndToClockChangesBelongToTheirEvening) {
+  const Made equator = make(test_place(0.0, 0.0, "UTC"), 2027);
+  const Meeting* antares = equator.find("moon+antares", 4, 24);
+  ASSERT_NE(antares, nullptr);
+  EXPECT_EQ(equator.year.place.zone.civil(antares->closest.at).iso(), "2027-04-24T00:00+00:00");
+  ASSERT_TRUE(antares->look.has_value());
+  EXPECT_EQ(iso_date(antares->look->night), "2027-04-23");
+  EXPECT_EQ(equator.clock(*antares->look), "2027-04-23T21:30+00:00");
+  const Made london = make(test_place(51.5, 0.0, "Europe/London"), 2023);
+  const Meeting* pleiades = london.find("moon+pleiades", 3, 26);
+  ASSERT_NE(pleiades, nullptr);
+  EXPECT_EQ(london.year.place.zone.civil(pleiades->closest.at).iso(), "2023-03-26T02:31+01:00");
+  ASSERT_TRUE(pleiades->look.has_value());
+  EXPECT_EQ(iso_date(pleiades->look->night), "2023-03-25");
+  EXPECT_EQ(london.clock(*pleiades->look), "2023-03-25T21:30+00:00");
+}
+
 // Dates that a zone skips (Samoa had no 2011-12-30) and clock changes are no hindrance; midnight
 // sun leaves months without a look.
 TEST(Meetings, StrangeCalendarsAndSkiesAreServed) {
