@@ -37,7 +37,7 @@ namespace {
 
 constexpr double sun_degrees_a_day = 360.0 / 365.2422;
 constexpr double dark_limit = 6.5;
-constexpr Days half_hour(30.0 / 1440), two_minutes(2.0 / 1440);
+constexpr Days half_hour(30.0 / 1440), two_minutes(2.0 / 1440), one_second(1.0 / 86400);
 // Shorter steps about the best of the coarse ones.
 constexpr Days finer[] = {Days(15.0 / 1440), Days(5.0 / 1440), Days(5.0 / 1440)};
 
@@ -73,7 +73,7 @@ class ShowerNight {
     for (const Days step : finer) {
       const Ut middle = greatest.at;
       for (const int side : {-1, 1})
-        take(greatest, std::clamp(middle + step * side, night_.from, night_.to), sky);
+        take(greatest, std::clamp(middle + step * side, night_.from, night_.to - one_second), sky);
     }
     return greatest;
   }
@@ -95,7 +95,7 @@ class ShowerNight {
   Horizontal radiant(Ut t) const {
     return to_horizontal(radiant_, sky_.local_sidereal_time(t), sky_.observer().latitude);
   }
-  /// The first (last) minute of the stretch about `best` in which the rate is half of its or more.
+  /// Where the stretch about `best` with half of its rate or more begins (ends), to two minutes.
   Ut half_rate(const Greatest& best, int direction) const {
     Ut inside = best.at, outside = inside;
     do {
