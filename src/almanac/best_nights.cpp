@@ -70,6 +70,8 @@ struct Found {
   bool of_moon;
 };
 
+constexpr Angle close_meeting = Angle::from_degrees(2.0);
+
 bool overlap(const TimeSpan& a, const TimeSpan& b) { return a.from < b.to && b.from < a.to; }
 bool within(Ut t, const TimeSpan& span) { return span.from <= t && t < span.to; }
 
@@ -83,8 +85,9 @@ std::vector<Found> find_happenings(const SiteHappenings& all, const Night& night
     if (!seen.umbra_visible || !e.partial_begins || !e.partial_ends) continue;
     const std::vector<TimeSpan> umbra = {{*e.partial_begins, *e.partial_ends}};
     if (length(intersection(intersection(umbra, moon_up_spans(night)), {span})) > Days(0))
-      found.push_back(
-          {NightHappening::lunar_eclipse, i, rounded(minutes({judged})), e.greatest, true});
+      found.push_back({NightHappening::lunar_eclipse, i,
+                       rounded(std::min(1.0, e.umbral_magnitude) * minutes({judged})), e.greatest,
+                       true});
   }
   for (std::size_t i = 0; i < all.showers.size(); ++i) {
     const SiteShower& shower = all.showers[i];
@@ -100,6 +103,7 @@ std::vector<Found> find_happenings(const SiteHappenings& all, const Night& night
   for (std::size_t i = 0; i < all.meetings.size(); ++i) {
     const Meeting& meeting = all.meetings[i];
     if (!meeting.look || !meeting.bare_eye || meeting.look->night != night.date) continue;
+    if (meeting.separation > close_meeting) continue;
     if (window && !within(meeting.look->at, {window->from - margin, window->to + margin})) continue;
     const int moon = target_index(Body::moon);
     found.push_back({NightHappening::meeting, i, 30, meeting.look->at,

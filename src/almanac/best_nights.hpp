@@ -46,11 +46,12 @@ struct NightReason {
 /// w = 1 - 0.8 |2 lit - 1|: a half-lit Moon counts whole, full and new a fifth, as shadows along
 /// the terminator show most.
 /// Aim::any: the greater sum of dark_rounded and happens_minutes first, then more planets.
-/// What happens counts as minutes. An eclipse of the Moon in the umbra: all of the window (from
-/// sunset to sunrise without one), so that it stands among the darkest. Besides, 120 in all at
-/// most: a shower in its best night 60 where its verdict is good, 30 where it is fair; a meeting
-/// seen by the bare eye 30; the Moon's covering of a planet or a star of V 2.5 or brighter 30. For
-/// Aim::moon only what the Moon does; for Aim::dark nothing (the reasons tell it all the same).
+/// What happens counts as minutes. An eclipse of the Moon in the umbra: as much of the window (of
+/// the time from sunset to sunrise without one) as the umbra covers of the Moon's diameter, so that
+/// a total one stands among the darkest nights. Besides, 120 in all at most: a shower in its best
+/// night 60 where its verdict is good, 30 where it is fair; a meeting within 2 degrees, seen by the
+/// bare eye, 30; the Moon's covering of a planet or a star of V 2.5 or brighter 30. For Aim::moon
+/// only what the Moon does; for Aim::dark nothing (the reasons tell it all the same).
 struct NightRank {
   Date date;
   double score;  // falls along the order, equal for what stands by date alone. Aim::dark and any:

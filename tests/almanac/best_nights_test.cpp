@@ -229,6 +229,8 @@ TEST_F(Happening, CountsAsMinutesInItsOwnNight) {
   meeting(3, 20, Body::venus, Body::jupiter, true);
   meeting(5, 20, Body::moon, Body::saturn, true);
   meeting(7, 20, Body::moon, Body::saturn, false);
+  meeting(8, 20, Body::moon, Body::saturn, true);
+  happenings.meetings.back().separation = Angle::from_degrees(2.1);
   shower(9, 22, 30, Verdict::good);
   shower(10, 22, 30, Verdict::fair);
   shower(11, 22, 30, Verdict::poor);
@@ -237,6 +239,7 @@ TEST_F(Happening, CountsAsMinutesInItsOwnNight) {
                                                {4, 0, 0},
                                                {5, 30, 30},
                                                {7, 0, 0},
+                                               {8, 0, 0},
                                                {9, 60, 0},
                                                {10, 30, 0},
                                                {11, 0, 0}}) {
@@ -307,6 +310,7 @@ TEST_F(Happening, AnEclipseWhereTheMoonIsUpInTheUmbra) {
   e.eclipse.greatest = clock(14, 26);
   e.eclipse.partial_ends = clock(14, 27);
   e.visible = e.umbra_visible = true;
+  e.eclipse.umbral_magnitude = 1.2;
   happenings.lunar_eclipses.push_back(e);
   const Night& full = night_of(madrid(), 2027, 11, 14);
   const double whole = (*full.sunrise - *full.sunset).count() * 1440;
@@ -319,6 +323,8 @@ TEST_F(Happening, AnEclipseWhereTheMoonIsUpInTheUmbra) {
   EXPECT_EQ(minutes(ranks(Aim::dark, {}), 14), 0);
   EXPECT_EQ(minutes(ranks(Aim::any, ClockWindow{20h, 23h}), 14), 0);
   EXPECT_EQ(minutes(ranks(Aim::any, ClockWindow{20h, 2h}), 14), 360);
+  happenings.lunar_eclipses.front().eclipse.umbral_magnitude = 0.25;
+  EXPECT_EQ(minutes(ranks(Aim::any, ClockWindow{20h, 2h}), 14), 90);
   happenings.lunar_eclipses.front().umbra_visible = false;
   EXPECT_EQ(minutes(ranks(Aim::moon, {}), 14), 0);
 }
