@@ -3,6 +3,12 @@
 // through it parallel to the fundamental one, is less than the radius L there: L1 of the penumbra,
 // L2 of the umbra (negative before the cone's point: total). Magnitude and obscuration follow from
 // m, L1 and L2 alone. Greatest phase is that of the greatest magnitude.
+//
+// Against topocentric discs from DE431 (34 eclipses of 2020-2035): no contact missed, none extra;
+// at 214 places of the tests outer contacts within 0.5 s, inner ones 0.14 s, magnitude 0.00003,
+// obscuration 0.0008 (the Moon's two radii), the Sun's rise and set 0.05 s. At 8,457 random places
+// once: 0.3 s, but 2.2 s where less than a hundredth of the Sun is covered, and 4.4 s for a
+// totality of half a second, where 0.05" of the Moon's place decides.
 #include <algorithm>
 #include <cmath>
 #include <numbers>

@@ -10,8 +10,11 @@
 // from the ephemeris meridian; here it is the true one, so that no Delta T is left for the site.
 //
 // Cubics through nine Chebyshev points over eight hours: they leave the places computed directly by
-// less than 3e-7 of the Earth's radius in x and y, 1e-8 in l1 and l2, 1e-10 radian in d and mu (215
-// eclipses of 1900-2100), a metre or two on the ground.
+// less than 3e-7 of the Earth's radius in x and y, 1e-8 in l1 and l2, 1e-10 radian in d and mu (the
+// eclipses of every fourth year of 1900-2100), a metre or two on the ground.
+//
+// Against the canon's of 2023-2031 (20 eclipses, three hours on both sides): x and y 1.1e-5, l1 and
+// l2 1.4e-6, d 0.00002, mu 0.00005 degree.
 #include "events/besselian_elements.hpp"
 
 #include <Eigen/Dense>

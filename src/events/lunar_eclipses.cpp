@@ -9,6 +9,13 @@
 // equatorial; the Sun's semidiameter is 959.63" at 1 au; the Moon's is k = 0.2725076 of the Earth's
 // equatorial radius (IAU 1982). Greatest is the least angle from the axis, which the published
 // instants follow (the least length is up to 6 s away).
+//
+// Against cones and a sphere in space from DE431 (37 eclipses of 2020-2035): contacts within 1.4 s,
+// 2.9 s where the umbra just touches (2034-09-28), 11 s at the graze of 2027-07-18, which lasts 11
+// minutes; greatest 0.13 s; magnitudes 0.0005. An angle in place of a tangent plane leaves out
+// 0.16", as the canon does. Against published contacts in TT (13 eclipses of 2024-2030): umbral
+// within 2.3 s, penumbral 3.6 s (the published penumbra is narrower by 1"), greatest 0.9 s, after a
+// common shift of each row of up to 3.9 s, the TT - UT that its author took.
 #include "events/lunar_eclipses.hpp"
 
 #include <algorithm>

@@ -12,17 +12,19 @@ enum class LunarEclipseKind { penumbral, partial, total };
 std::string_view eclipse_name(LunarEclipseKind);  // "penumbral", "partial", "total"
 
 /// An eclipse of the Moon, the same everywhere. Shadow by Danjon's rule: lunar_eclipses.cpp.
+/// Greatest: least angle of the Moon's centre from the shadow's axis.
 struct LunarEclipse {
   LunarEclipseKind kind;
   Ut penumbral_begins, greatest, penumbral_ends;
   std::optional<Ut> partial_begins, total_begins, total_ends, partial_ends;
   double umbral_magnitude;  // negative for a penumbral one
   double penumbral_magnitude;
-  double gamma;  // least distance of the Moon's centre from the axis, Earth's equatorial radii,
+  double gamma;  // distance of the Moon's centre from the axis then, Earth's equatorial radii,
                  // positive north
 };
 
-/// Those whose greatest phase is in [from, to), in order.
+/// Those whose greatest phase is in [from, to), in order. The ephemeris must reach six hours beyond
+/// on both sides (else std::out_of_range).
 std::vector<LunarEclipse> lunar_eclipses(const YearEphemeris&, Ut from, Ut to);
 /// Instants for the tables, in order; body the kind, value of the greatest its magnitude.
 std::vector<Event> eclipse_events(const LunarEclipse&);

@@ -27,10 +27,12 @@ struct SolarEclipse {
   double gamma;
   BesselianElements elements;  // good from 4 h before to 4 h after t0
 };
-/// Those with a greatest phase in [from, to), in order.
+/// Those with a greatest phase in [from, to), in order. The ephemeris must reach seven hours beyond
+/// on both sides, where an eclipse may be in progress (else std::out_of_range).
 std::vector<SolarEclipse> solar_eclipses(const YearEphemeris&, Ut from, Ut to);
 
-/// The same from a site: geometric contacts, whether or not the Sun is up.
+/// The same from a site: geometric contacts, whether or not the Sun is up. Within 0.5 s of discs
+/// drawn from DE431, 5 s where the Moon's limb grazes: see besselian_circumstances.cpp.
 struct SiteSolarEclipse {
   SolarEclipseKind kind;  // as seen there: partial, annular or total
   Sighting partial_begins, greatest, partial_ends;
