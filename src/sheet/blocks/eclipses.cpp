@@ -178,7 +178,12 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
     const double baseline = row_y + 2.6;
     set.left(table_x, baseline, r.what, s);
     set.right(time_right, baseline, w.time(r.at), s);
-    std::string where = r.seen ? w.place(r.place) : c.words("eclipse.below");
+    std::string where =
+        !r.seen
+            ? c.words("eclipse.below")
+            : c.words("eclipse.where",
+                      {{"altitude", c.words.number(std::max(r.place.altitude.degrees(), 0.0), 0)},
+                       {"direction", c.words.direction_short(r.place.azimuth)}});
     if (r.seen && w.behind_skyline(r.place)) where = c.words("eclipse.behind-skyline");
     set.left(time_right + 2.5, baseline, where, s);
     table_right = std::max(table_right, time_right + 2.5 + set.width(where, s));
