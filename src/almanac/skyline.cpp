@@ -44,16 +44,16 @@ class Clearance {
     clear_ = sin(high->altitude);
   }
 
-  /// The edge's height above the skyline, radians.
-  double operator()(Ut t) const {
+  struct Look {
+    Angle azimuth;
+    double height;  // of the edge above the skyline, radians
+  };
+  Look look(Ut t) const {
     const Horizontal edge = upper_edge(sky_, t);
-    return edge.altitude.radians() - skyline_height(skyline_, edge.azimuth).radians();
+    return {edge.azimuth,
+            edge.altitude.radians() - skyline_height(skyline_, edge.azimuth).radians()};
   }
-  Angle azimuth(Ut t) const {
-    return to_horizontal(sky_.ephemeris().apparent(Body::sun, to_tt(t)),
-                         sky_.local_sidereal_time(t), sky_.observer().latitude)
-        .azimuth;
-  }
+  double operator()(Ut t) const { return look(t).height; }
   /// Above the whole skyline (1) or below all of it (-1), told cheaply; 0: it must be looked at.
   int certainly(Ut t) const {
     const double altitude = sky_.sight(Body::sun, t).altitude;
@@ -86,16 +86,15 @@ void cross_smooth(const Clearance& f, Ut a, double fa, Ut b, double fb,
   zero(least.at, sign * least.value, b.days(), fb);
 }
 
-/// The instants in (a, b) at which the Sun passes a point of the skyline, in order.
-std::vector<Ut> corners(const Clearance& f, Ut a, Ut b) {
-  const Angle from = f.azimuth(a), to = f.azimuth(b);
+/// The instants between a and b at which the Sun passes a point of the skyline, in order.
+std::vector<Ut> corners(const Clearance& f, Ut a, Angle from, Ut b, Angle to) {
   const double turned = (to - from).centred().radians();
   std::vector<Ut> at;
   for (const SkylinePoint& point : f.skyline()) {
     const double ahead = (point.azimuth - from).centred().radians();
     if (turned == 0.0 || ahead / turned <= 0.0 || ahead / turned >= 1.0) continue;
     const auto short_of = [&](double day) {
-      return (f.azimuth(Ut(Days(day))) - point.azimuth).centred().radians();
+      return (f.look(Ut(Days(day))).azimuth - point.azimuth).centred().radians();
     };
     at.push_back(Ut(Days(search_detail::zero_between(short_of, a.days(), -ahead, b.days(),
                                                      turned - ahead, tolerance / Days(1)))));
@@ -109,23 +108,27 @@ std::vector<Crossing> skyline_crossings(const Clearance& f, Ut from, Ut to) {
   std::vector<Crossing> found;
   Ut a = from;
   int sure_a = f.certainly(a);
+  std::optional<Clearance::Look> look_a;
   while (a < to) {
     const Ut b = std::min(a + step, to);
     const int sure_b = f.certainly(b);
+    std::optional<Clearance::Look> look_b;
     if (sure_a == 0 || sure_b != sure_a) {
-      std::vector<Ut> times = corners(f, a, b);
-      times.push_back(b);
+      if (!look_a) look_a = f.look(a);
+      look_b = f.look(b);
       Ut before = a;
-      double f_before = f(a);
-      for (const Ut t : times) {
+      double height = look_a->height;
+      for (const Ut t : corners(f, a, look_a->azimuth, b, look_b->azimuth)) {
         const double here = f(t);
-        cross_smooth(f, before, f_before, t, here, found);
+        cross_smooth(f, before, height, t, here, found);
         before = t;
-        f_before = here;
+        height = here;
       }
+      cross_smooth(f, before, height, b, look_b->height, found);
     }
     a = b;
     sure_a = sure_b;
+    look_a = look_b;
   }
   return found;
 }

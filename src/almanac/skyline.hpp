@@ -13,8 +13,11 @@ namespace duskleaf {
 Angle skyline_height(const std::vector<SkylinePoint>&, Angle azimuth);
 bool above_skyline(const std::vector<SkylinePoint>&, const Horizontal& apparent);
 
-/// When the Sun's upper edge first clears the skyline on a civil date and when it is last gone
-/// behind it. Both empty where it stays behind all day (or above it).
+/// When the top of the Sun first clears the skyline on a civil date and when it is last gone behind
+/// it: what lies between may be cut by the skyline again. An instant belongs to the date of its
+/// rounded minute; at high latitudes `gone` may come before `clears`. Both empty where it stays
+/// behind all day (or above it). Within 0.02 s of a reference with the same refraction (734
+/// instants); real refraction moves them by some seconds, near the horizon by minutes.
 struct SkylineDay {
   Date date;
   std::optional<Ut> clears, gone;

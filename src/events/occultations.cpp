@@ -180,9 +180,10 @@ void add_visits(const MoonPath& path, const F& direction, std::vector<Visit>& vi
 
 std::vector<Occultation> occultations(const SiteSky& sky, Ut from, Ut to) {
   const YearEphemeris& ephemeris = sky.ephemeris();
+  constexpr Days rounding(1e-8);  // from one time scale to the other and back
   // Half a day more holds the whole of an occultation with one contact in [from, to).
-  const Ut first = std::max(from - Days(0.5), to_ut(ephemeris.from())),
-           last = std::min(to + Days(0.5), to_ut(ephemeris.to()));
+  const Ut first = std::max(from - Days(0.5), to_ut(ephemeris.from()) + rounding),
+           last = std::min(to + Days(0.5), to_ut(ephemeris.to()) - rounding);
   std::vector<Occultation> found;
   if (!(first < last)) return found;
   const MoonPath path = moon_path(ephemeris, first, last);

@@ -20,6 +20,11 @@ constexpr double sun_radius_au = 959.63 * arcsecond;
 constexpr Angle equatorial_parallax_at_1_au = Angle::from_arcseconds(8.794143);  // IAU 1976
 constexpr Seconds tolerance(0.02);
 
+// What the tables hold, less a millisecond for the rounding from one time scale to the other.
+constexpr Days rounding(1e-8);
+Ut first_instant(const YearEphemeris& ephemeris) { return to_ut(ephemeris.from()) + rounding; }
+Ut last_instant(const YearEphemeris& ephemeris) { return to_ut(ephemeris.to()) - rounding; }
+
 double planet_radius_au(Body planet) {
   return (planet == Body::mercury ? 2439.7 : 6051.8) / km_per_au;
 }
@@ -95,8 +100,8 @@ std::vector<SunTransit> sun_transits(const YearEphemeris& ephemeris, Ut from, Ut
   constexpr Days lap(1.0);
   // In a day a planet gains up to 2.3 degrees on the Sun about its inferior conjunction.
   constexpr double near = 0.03;  // radians
-  const Ut first = std::max(from - lap, to_ut(ephemeris.from())),
-           last = std::min(to + lap, to_ut(ephemeris.to()));
+  const Ut first = std::max(from - lap, first_instant(ephemeris)),
+           last = std::min(to + lap, last_instant(ephemeris));
   std::vector<SunTransit> found;
   for (const Body planet : {Body::mercury, Body::venus}) {
     const auto discs = [&](Ut t) { return Discs(ephemeris, planet, t); };
@@ -121,8 +126,8 @@ std::vector<SunTransit> sun_transits(const YearEphemeris& ephemeris, Ut from, Ut
           (1.0 / (planet_radius_au(planet) / d.planet_radius) - 1.0 / d.sun.norm());
       if (d.separation > d.sun_radius + d.planet_radius + parallax.radians()) continue;
       const auto seen = contacts([&](Ut t) { return discs(t).excess(1.0); },
-                                 std::max(greatest - Days(0.5), to_ut(ephemeris.from())), greatest,
-                                 std::min(greatest + Days(0.5), to_ut(ephemeris.to())));
+                                 std::max(greatest - Days(0.5), first_instant(ephemeris)), greatest,
+                                 std::min(greatest + Days(0.5), last_instant(ephemeris)));
       found.push_back({planet, seen ? (*seen)[0] : greatest, greatest, seen ? (*seen)[1] : greatest,
                        Angle::from_radians(d.separation)});
     }
@@ -141,8 +146,8 @@ std::optional<SiteSunTransit> at_site(const SiteSky& sky, const SunTransit& tran
   };
   // Parallax moves the contacts by ten minutes, and by more than an hour where the chord is short.
   constexpr Days reach(0.1);
-  const Ut from = std::max(transit.begins - reach, to_ut(ephemeris.from())),
-           to = std::min(transit.ends + reach, to_ut(ephemeris.to()));
+  const Ut from = std::max(transit.begins - reach, first_instant(ephemeris)),
+           to = std::min(transit.ends + reach, last_instant(ephemeris));
   const Ut greatest = nearest([&](Ut t) { return discs(t).separation; }, from, to);
   const auto exterior = contacts([&](Ut t) { return discs(t).excess(1.0); }, from, greatest, to);
   if (!exterior || !sun_shows(sky, (*exterior)[0], (*exterior)[1])) return {};

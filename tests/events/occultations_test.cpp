@@ -163,7 +163,7 @@ TEST(Occultations, CompleteAtFiveSites) {
   for (const Row& row : read_rows()) sites[row.site].push_back(row);
   ASSERT_EQ(sites.size(), 5U);
   std::map<std::string, Worst> worst;
-  int wanted_count = 0, found_count = 0, missed_grazes = 0, extra_grazes = 0;
+  int wanted_count = 0, found_count = 0, half_seen = 0, missed_grazes = 0, extra_grazes = 0;
   for (const auto& [site, rows] : sites) {
     const std::vector<Occultation> all = all_of_site(rows.front().observer);
     found_count += static_cast<int>(all.size());
@@ -185,6 +185,8 @@ TEST(Occultations, CompleteAtFiveSites) {
         continue;
       }
       ++wanted_count;
+      half_seen +=
+          (row.disappears.altitude > horizon_deg) != (row.reappears.altitude > horizon_deg);
       const bool sinking = std::max(row.disappears.altitude, row.reappears.altitude) <
                            horizon_deg + horizon_slack_deg;
       if (!o) {
@@ -216,6 +218,7 @@ TEST(Occultations, CompleteAtFiveSites) {
     std::cout << "  " << kind << ": " << w.contacts << " contacts, largest " << w.arcseconds
               << "\" across the limb, " << w.seconds << " s (" << w.where << ")\n";
   EXPECT_GE(wanted_count, 600);
+  EXPECT_GE(half_seen, 50);  // a contact below the horizon
 }
 
 Observer place_at(double latitude, double longitude) {
