@@ -64,7 +64,8 @@ Shadow shadow_at(const YearEphemeris& ephemeris, double tt_days) {
 
 std::optional<LunarEclipse> eclipse_near(const YearEphemeris& ephemeris, Tt full_moon) {
   const auto shadow = [&](double day) { return shadow_at(ephemeris, day); };
-  const double about = full_moon.days();
+  // From a whole hour, so that the result does not depend on the span that was searched.
+  const double about = std::round(full_moon.days() * 24.0) / 24.0;
   const double greatest = search_detail::least_between(
                               [&](double day) { return shadow(day).separation; },
                               about - half_span_days, about + half_span_days, about, tolerance_days)

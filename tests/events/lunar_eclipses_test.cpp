@@ -272,5 +272,16 @@ TEST(LunarEclipses, EventsCarryTheMagnitudeAtTheGreatestAlone) {
   }
 }
 
+// A span holds its first instant and not its last.
+TEST(LunarEclipses, SpansShareNoEclipse) {
+  const Ut at = eclipse_on("2028-12-31").value().greatest;
+  const YearEphemeris& tables = year_tables(2028);
+  EXPECT_TRUE(lunar_eclipses(tables, at - Days(5), at).empty());
+  const auto after = lunar_eclipses(tables, at, at + Days(5));
+  ASSERT_EQ(after.size(), 1U);
+  EXPECT_EQ(after.front().greatest, at);
+  EXPECT_TRUE(lunar_eclipses(tables, at, at).empty());
+}
+
 }  // namespace
 }  // namespace duskleaf

@@ -325,5 +325,16 @@ TEST(SolarEclipses, EventsInOrderWithTheirValues) {
   EXPECT_EQ(*events[1].value, s->central_begins->place.altitude.degrees());
 }
 
+// A span holds its first instant and not its last.
+TEST(SolarEclipses, SpansShareNoEclipse) {
+  const Ut at = eclipse_on("2027-08-02").value().greatest;
+  const YearEphemeris& tables = year_tables(2027);
+  EXPECT_TRUE(solar_eclipses(tables, at - Days(5), at).empty());
+  const auto after = solar_eclipses(tables, at, at + Days(5));
+  ASSERT_EQ(after.size(), 1U);
+  EXPECT_EQ(after.front().greatest, at);
+  EXPECT_TRUE(solar_eclipses(tables, at, at).empty());
+}
+
 }  // namespace
 }  // namespace duskleaf
