@@ -61,6 +61,8 @@ struct BlockSpec {
   std::string_view name, help;
   std::vector<OptionSpec> options;
   DrawBlock draw;
+  /// Of a block that grows with its room: the least that a band's share must leave it, mm.
+  double (*least_height)(const BlockContext&) = nullptr;
 };
 const std::vector<BlockSpec>& block_table();
 

@@ -58,6 +58,10 @@ void add_paths_of_day(SkyChart&, const DomeView&, bool with_message);
 /// Whether the Moon stands above the horizon at some time of the evening's civil day.
 bool moon_up_that_day(const BlockContext&);
 
+/// The outline's radius of a dome that is fitted into `area`: it stands at the area's top, in the
+/// middle of its width.
+double dome_radius(const BlockContext&, const Box& area);
+
 /// A dome with its direction letters and title, fitted into `area`: its labels, for checks, and the
 /// height used.
 struct DomeDrawing {

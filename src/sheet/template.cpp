@@ -42,12 +42,17 @@ PageTemplate::Block read_block(const YamlValue& value) {
     throw OrderError(value.at, "a block without its name",
                      "a map with the key 'block', one of " + listed(block_names()));
   const BlockSpec& spec = block_table()[read_choice(*name, "block", block_names())];
-  std::vector<std::string_view> keys{"block", "over"};
+  std::vector<std::string_view> keys{"block", "over", "fill"};
   for (const OptionSpec& option : spec.options) keys.push_back(option.name);
   const MapReader reader(value, "the block '" + std::string(spec.name) + "'", keys);
   PageTemplate::Block block;
   block.spec = &spec;
   if (const YamlValue* over = reader.find("over")) block.over = read_bool(*over, "over");
+  if (const YamlValue* fill = reader.find("fill")) {
+    block.fill = read_bool(*fill, "fill");
+    if (block.fill && block.over)
+      throw OrderError(fill->at, "a block with both over and fill", "one of the two, or neither");
+  }
   for (const OptionSpec& option : spec.options) {
     const YamlValue* given = reader.find(option.name);
     block.options.values.emplace(

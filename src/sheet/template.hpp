@@ -16,6 +16,8 @@ struct PageTemplate {
     const BlockSpec* spec = nullptr;
     BlockOptions options;
     bool over = false;  // drawn in the area of the block before it, taking no room of its own
+    bool fill = false;  // drawn last of its column, into what room the others leave, with fewer
+                        // lines than its option `most` where they are too many
   };
   struct Column {
     int first = 1, last = 12;  // of the grid, counted from 1

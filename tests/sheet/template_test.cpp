@@ -45,6 +45,10 @@ INSTANTIATE_TEST_SUITE_P(
                     HEAD
                     "pages:\n  - bands:\n      - steps: 3\n        share: 2\n        blocks: []\n",
                     "page.yaml:7:16: a band with both steps and share"},
+        BadTemplate{"a block over another that fills the room",
+                    HEAD "pages:\n  - bands:\n      - blocks:\n          - block: dome\n           "
+                         " over: true\n            fill: true\n",
+                    "page.yaml:9:19: a block with both over and fill"},
         BadTemplate{
             "columns that overlap",
             HEAD "pages:\n  - bands:\n      - columns:\n          - {from: 1, to: 6, blocks: []}\n"

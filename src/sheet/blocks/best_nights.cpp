@@ -2,7 +2,9 @@
 
 #include <algorithm>
 
+#include "catalogue/showers.hpp"
 #include "sheet/blocks/blocks.hpp"
+#include "sheet/happening_writer.hpp"
 #include "sheet/setting.hpp"
 
 namespace duskleaf {
@@ -43,16 +45,50 @@ Choice choose(const BlockContext& c) {
   return choice;
 }
 
+/// What happens in a night, in a few words: the list of happenings tells it whole.
+std::string happening_text(const BlockContext& c, const NightReason& reason) {
+  const SiteHappenings& site = c.happenings;
+  const HappeningWriter writer(c);
+  const std::string key =
+      "best-nights.happens-" + std::string(night_happening_name(*reason.happening));
+  const auto name = [&](int target) {
+    return writer.target(targets()[static_cast<std::size_t>(target)]);
+  };
+  switch (*reason.happening) {
+    case NightHappening::lunar_eclipse:
+      return c.words(key);
+    case NightHappening::shower:
+      return c.words(
+          key,
+          {{"name",
+            std::string(
+                showers()[static_cast<std::size_t>(site.showers[reason.index].shower)].name)}});
+    case NightHappening::meeting: {
+      const Approach& closest = site.meetings[reason.index].closest;
+      return c.words(key, {{"a", name(closest.a)}, {"b", name(closest.b)}});
+    }
+    case NightHappening::occultation:
+      return c.words(key, {{"name", name(site.occultations[reason.index].target)}});
+  }
+  return {};
+}
+
+std::string planet_names(const BlockContext& c, const std::vector<Body>& planets) {
+  std::string names;
+  for (Body planet : planets)
+    names += (names.empty() ? "" : ", ") + c.words("body." + std::string(body_name(planet)));
+  return names;
+}
+
 std::string reason_text(const BlockContext& c, const NightRank& night, const NightReason& reason) {
   if (reason.key == "darkest-limit") return {};  // said once, beside the title
+  if (reason.happening) return happening_text(c, reason);
+  if (reason.key == "planets-visible") return planet_names(c, night.planets);
   const std::string key = "best-nights.reason-" + reason.key;
   if (reason.key == "dark-hours")
     return c.words(key, {{"n", c.words.duration(night.dark_rounded)}});
   if (reason.at) return c.words(key, {{"time", c.words.time(c.year.place.zone.civil(*reason.at))}});
   if (!reason.number) return c.words(key);
-  if (reason.key == "planets-visible" && *reason.number < 0.5) return {};
-  if (reason.key == "planets-visible" && *reason.number < 1.5)
-    return c.words("best-nights.reason-one-planet");
   return c.words(key, {{"n", c.words.number(*reason.number, 0)}});
 }
 
@@ -76,7 +112,7 @@ double draw_best_nights(const BlockContext& c, const BlockOptions&, const Box& a
                         std::vector<Mark>& out) {
   const Choice choice = choose(c);
   std::vector<NightRank> ranks =
-      rank_nights(c.ephemeris, c.year, choice.nights, choice.window, choice.aim);
+      rank_nights(c.ephemeris, c.year, choice.nights, choice.window, choice.aim, &c.happenings);
   if (ranks.empty()) return 0;
   Setter set(c, out);
   double y = area.y + set.heading(area.x, area.y, area.width, choice.title,

@@ -12,6 +12,8 @@ double draw_chart_use(const BlockContext&, const BlockOptions&, const Box&, std:
 double draw_chart_fits(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_ribbon(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_night_bars(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
+/// The least height of its rows, heads and notes.
+double night_bars_least_height(const BlockContext&);
 double draw_moon_phases(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_planets(const BlockContext&, const BlockOptions&, const Box&, std::vector<Mark>&);
 double draw_constellations(const BlockContext&, const BlockOptions&, const Box&,

@@ -4,12 +4,12 @@
 #include <fmt/format.h>
 
 #include "sheet/blocks/blocks.hpp"
-#include "sheet/setting.hpp"
+#include "sheet/flow_text.hpp"
 
 namespace duskleaf {
 namespace {
 
-constexpr double row_pitch = 3.15, column_gap = 4.5;  // mm
+constexpr double row_pitch = 2.95, column_gap = 4.5;  // mm
 
 std::string name_of(const BlockContext& c, const ConstellationEvening& row) {
   const Figure& figure = figures()[static_cast<std::size_t>(row.figure)];
@@ -55,11 +55,11 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
   set.right(highest_x, y + 2.6, c.words("constellations.highest"), head);
   set.right(sets_x, y + 2.6, c.words("constellations.sets"), head);
   set.left(months_x, y + 2.6, c.words("constellations.months"), head);
-  y += 3.6;
+  y += 3.3;
   if (rows.empty()) set.left(area.x, y + 2.5, c.words("constellations.none"), head);
   const int month = c.year.span.month(c.month_index).second;
   for (const ConstellationEvening* row : rows) {
-    const double baseline = y + 2.5;
+    const double baseline = y + 2.4;
     Style name = row->on_equator ? set.strong(cell) : cell;
     if (row->state == FigureState::partly_up) name.ink = c.theme.soft;
     set.fitted(area.x, baseline, name_of(c, *row), name, name_width);
@@ -123,16 +123,19 @@ double draw_constellations(const BlockContext& c, const BlockOptions&, const Box
     if (row.circumpolar) circumpolar.push_back(&row);
     if (row.state == FigureState::below) (row.never_rises ? never : below).push_back(&row);
   }
+  const Style quiet{Face::condensed, c.theme.table_pt, c.theme.soft};
+  std::vector<Run> rest;
   const auto list = [&](std::string_view key,
                         const std::vector<const ConstellationEvening*>& rows) {
-    if (!rows.empty())
-      y += set.lead_in(area.x, y, area.width, c.words(key), list_of(c, rows) + ".", set.small());
+    if (rows.empty()) return;
+    rest.push_back({c.words(key), set.strong(quiet)});
+    rest.push_back({list_of(c, rows) + ".", quiet});
   };
   list("constellations.below", below);
   list("constellations.never", never);
   list("constellations.circumpolar", circumpolar);
-  y += set.paragraph(area.x, y, area.width, c.words("constellations.note"),
-                     {Face::regular, c.theme.small_pt, c.theme.soft});
+  rest.push_back({c.words("constellations.note"), quiet});
+  y += flow(set, area.x, y, area.width, rest, 1.18);
   return y - area.y;
 }
 

@@ -166,10 +166,14 @@ void add_bodies(SkyChart& chart, const DomeView& view) {
 
 }  // namespace
 
+double dome_radius(const BlockContext& context, const Box& area) {
+  return std::min(area.width / 2, area.height - strip_height(context));
+}
+
 DomeDrawing compose_dome(const BlockContext& context, DomeFacing facing, const Box& area,
                          std::vector<Mark>& out) {
   const double strip = strip_height(context);
-  const double radius = std::min(area.width / 2, area.height - strip);
+  const double radius = dome_radius(context, area);
   const DomeView view({area.x + area.width / 2, area.y + radius}, radius,
                       dome_azimuth(facing, context.site.place.observer.latitude));
   const EveningSky& evening = context.evening();

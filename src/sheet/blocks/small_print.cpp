@@ -10,7 +10,7 @@ double draw_cautions(const BlockContext& c, const BlockOptions&, const Box& area
   Setter set(c, out);
   set.rule(area.x, area.right(), area.y, c.theme.blue, 0.25);
   double y = area.y + 1.2;
-  const Style body{Face::regular, c.theme.table_pt + 0.5, c.theme.black};
+  const Style body{Face::regular, c.theme.table_pt, c.theme.black};
   y += set.lead_in(area.x, y, area.width, c.words("cautions.sun-lead"), c.words("cautions.sun"),
                    body, 1.22) +
        0.3;
