@@ -60,9 +60,9 @@ bool fills(const PageTemplate::Band& band) {
 /// The layout of one page; every block is drawn once.
 class PageLayout {
  public:
-  /// The room between the margins, mm.
-  PageLayout(const BlockContext& context, double width, double height)
-      : context_(context), width_(width), height_(height) {}
+  /// The room between the margins, mm, and how many lines a list that fills the room must keep.
+  PageLayout(const BlockContext& context, double width, double height, int fewest_lines)
+      : context_(context), width_(width), height_(height), fewest_lines_(fewest_lines) {}
 
   /// The marks, with the room's top left corner at the origin.
   std::vector<Mark> draw(const PageTemplate::Page& page) {
@@ -174,7 +174,8 @@ class PageLayout {
     const auto most = block.options.values.find("most");
     if (height <= area.height || most == block.options.values.end()) return height;
     BlockOptions fewer = block.options;
-    int fits = 1, too_many = std::min(static_cast<int>(std::stod(most->second)), longest_list);
+    int fits = fewest_lines_,
+        too_many = std::min(static_cast<int>(std::stod(most->second)), longest_list);
     while (too_many - fits > 1) {
       const int middle = (fits + too_many) / 2;
       fewer.values["most"] = std::to_string(middle);
@@ -188,6 +189,7 @@ class PageLayout {
   static constexpr double between_blocks_mm = 2.0;
   const BlockContext& context_;
   double width_, height_;
+  int fewest_lines_;
   double overfull_ = 0;
 };
 
@@ -201,15 +203,23 @@ std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& pag
   std::vector<Mark> marks;
   double overfull = 0;
   double scale = 1;
-  for (; scale > 0.87; scale -= 0.025) {
+  const auto draw = [&](int fewest_lines) {
     context.tally.labels_left_out = labels_before;
     context.tally.notes.resize(notes_before);
-    PageLayout layout(context, (width - 2 * margin) / scale, (height - 2 * margin) / scale);
+    PageLayout layout(context, (width - 2 * margin) / scale, (height - 2 * margin) / scale,
+                      fewest_lines);
     marks = layout.draw(page);
     overfull = layout.overfull();
-    if (overfull < 0.05) break;
-  }
-  if (overfull >= 0.05)
+    return overfull < 0.05;
+  };
+  // A little smaller rather than lists of a line or two; then what it takes.
+  const auto fits_reduced = [&](int fewest_lines, double smallest) {
+    for (scale = 1; !draw(fewest_lines); scale -= 0.025)
+      if (scale < smallest + 0.01) return false;
+    return true;
+  };
+  const bool fits = fits_reduced(4, 0.925) || fits_reduced(1, 0.875);
+  if (!fits)
     context.tally.notes.push_back("a page is too full by " + context.words.number(overfull, 1) +
                                   " mm");
   else if (scale < 1)

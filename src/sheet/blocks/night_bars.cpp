@@ -121,8 +121,8 @@ Columns place_columns(const BlockContext& c, const std::vector<const Night*>& ni
   columns.dark_right = x + 8.0;
   x += 11.0;
   if (with_jupiter) {
-    columns.jupiter = x + 6.8;
-    x += 15.6;
+    columns.jupiter = x + 8.2;
+    x += 17.4;
   }
   columns.axis.x = x;
   columns.axis.width = area.right() - x;
@@ -130,7 +130,7 @@ Columns place_columns(const BlockContext& c, const std::vector<const Night*>& ni
 }
 
 void draw_heads(const BlockContext& c, Setter& set, const Columns& columns, double top,
-                const Style& style, const std::optional<JupiterColumn>& jupiter) {
+                const Style& style, bool jupiter) {
   const double first = top + 2.7, second = top + 5.7;
   for (const TimeColumn& column : columns.times) {
     set.centre(column.centre, first, c.words("night-bars." + column.key + "-1"), style);
@@ -142,8 +142,7 @@ void draw_heads(const BlockContext& c, Setter& set, const Columns& columns, doub
   set.right(columns.dark_right, first, c.words("night-bars.hours-1"), style);
   set.right(columns.dark_right, second, c.words("night-bars.hours-2"), style);
   if (!jupiter) return;
-  set.centre(columns.jupiter, first, c.words("night-bars.jupiter-1", {{"time", jupiter->hour}}),
-             style);
+  set.centre(columns.jupiter, first, c.words("night-bars.jupiter-1"), style);
   set.centre(columns.jupiter, second, c.words("night-bars.jupiter-2"), style);
 }
 
@@ -202,7 +201,7 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
   head_style.ink = c.theme.soft;
   const double top = area.y + above_heads;
   const double bars_top = top + heads, bars_bottom = bars_top + pitch * rows;
-  draw_heads(c, set, columns, top, head_style, jupiter);
+  draw_heads(c, set, columns, top, head_style, jupiter.has_value());
   draw_hour_lines(c, set, axis, head_style, top + 5.2, bars_top, bars_bottom, out);
 
   double y = bars_top;
