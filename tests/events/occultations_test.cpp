@@ -6,6 +6,7 @@
 #include <gtest/gtest.h>
 #include <iostream>
 #include <map>
+#include <optional>
 #include <set>
 #include <string>
 #include <vector>
@@ -167,17 +168,18 @@ TEST(Occultations, CompleteAtFiveSites) {
   for (const auto& [site, rows] : sites) {
     const std::vector<Occultation> all = all_of_site(rows.front().observer);
     found_count += static_cast<int>(all.size());
-    std::set<const Occultation*> matched;
-    const auto find = [&](const Row& row) -> const Occultation* {
-      for (const Occultation& o : all)
-        if (target_label(o.target) == plain_name(row.target) &&
-            std::abs(Seconds(o.disappears.at - row.nearest).count()) < 7200.0)
-          return &o;
-      return nullptr;
+    std::set<std::size_t> matched;
+    const auto find = [&](const Row& row) -> std::optional<std::size_t> {
+      for (std::size_t i = 0; i < all.size(); ++i)
+        if (target_label(all[i].target) == plain_name(row.target) &&
+            std::abs(Seconds(all[i].disappears.at - row.nearest).count()) < 7200.0)
+          return i;
+      return {};
     };
     for (const Row& row : rows) {
-      const Occultation* o = find(row);
-      if (o) matched.insert(o);
+      const std::optional<std::size_t> index = find(row);
+      if (index) matched.insert(*index);
+      const Occultation* o = index ? &all[*index] : nullptr;
       const bool graze = std::abs(row.least - row.radius) < graze_deg;
       if (!row.covered) {
         if (o) ++extra_grazes;
@@ -203,8 +205,9 @@ TEST(Occultations, CompleteAtFiveSites) {
       compare(row, row.disappears, o->disappears, worst[kind]);
       compare(row, row.reappears, o->reappears, worst[kind]);
     }
-    for (const Occultation& o : all) {
-      if (matched.count(&o)) continue;
+    for (std::size_t i = 0; i < all.size(); ++i) {
+      if (matched.contains(i)) continue;
+      const Occultation& o = all[i];
       const double highest =
           std::max(o.disappears.place.altitude.degrees(), o.reappears.place.altitude.degrees());
       EXPECT_LT(highest, horizon_deg + horizon_slack_deg)
