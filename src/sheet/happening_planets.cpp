@@ -87,7 +87,7 @@ int rank_of(const SiteShower& s) {
     case Verdict::fair:
       return s.expected_per_hour >= 15 ? 1 : 2;
     default:
-      return s.expected_dark >= 40 ? 2 : 4;
+      return s.expected_dark >= 40 ? 2 : 5;
   }
 }
 
@@ -98,7 +98,8 @@ std::string verdict(const HappeningWriter& w, const SiteShower& s) {
       why = w.words("shower-moon", {{"lit", w.percent(s.moon_lit)}});
       break;
     case Spoiler::low_radiant:
-      why = w.words("shower-low");
+      why =
+          w.words(s.radiant.altitude < Angle::from_degrees(25) ? "shower-low" : "shower-not-high");
       break;
     case Spoiler::bright_night:
       why = w.words("shower-bright-night");

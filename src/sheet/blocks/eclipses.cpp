@@ -19,6 +19,7 @@ struct Row {
   Horizontal place;  // apparent
   bool seen;
   bool strong = false;
+  bool edge = false;  // a rise or set: on the horizon
 };
 
 /// What one panel says; drawn by draw_panel.
@@ -39,7 +40,12 @@ Row edge(const HappeningWriter& w, std::string_view key, Body body, Ut at) {
   const Observer& o = w.sky().observer();
   const Horizontal place = to_horizontal(w.context().ephemeris.apparent(body, to_tt(at)),
                                          w.sky().local_sidereal_time(at), o.latitude);
-  return {w.context().words("eclipse." + std::string(key)), at, {Angle(), place.azimuth}, true};
+  return {w.context().words("eclipse." + std::string(key)),
+          at,
+          {Angle(), place.azimuth},
+          true,
+          false,
+          true};
 }
 
 void sort_rows(std::vector<Row>& rows) {
@@ -76,10 +82,11 @@ Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   const auto number = [&](double value) { return c.words.number(value, 2); };
   if (central && e.central_begins->visible && e.central_ends->visible)
     p.text = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
-                     {{"duration", duration(w, e.central_begins->at, e.central_ends->at)}}) +
-             " ";
-  p.text += c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)},
-                                           {"magnitude", number(e.best_magnitude)}});
+                     {{"duration", duration(w, e.central_begins->at, e.central_ends->at)},
+                      {"magnitude", number(e.best_magnitude)}});
+  else
+    p.text = c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)},
+                                            {"magnitude", number(e.best_magnitude)}});
   if (!e.greatest.visible)
     p.text += " " + c.words("eclipse.solar-cut", {{"percent", w.percent(e.obscuration)},
                                                   {"magnitude", number(e.magnitude)}});
@@ -159,14 +166,16 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
   Setter set(c, out);
   double y = top + set.heading(x, top, width, p.title, p.aside);
   const bool wide = width > 115;
-  const double side = 21, table_x = x + side + 3;
-  const Style cell = set.table(), small{Face::regular, c.theme.label_pt, c.theme.soft};
+  const double side = 22, table_x = x + side + 3;
+  const Style cell = set.table(), small{Face::condensed, c.theme.label_pt, c.theme.soft};
   // The caution first: it is read before the times.
   if (!p.caution.empty() && !wide)
     y += flow(set, x, y, width, {{p.caution, set.strong(set.body())}}, 1.2) + 0.6;
   const Box box{x, y, side, side};
   drawing(box, out);
-  set.centre(x + side / 2, y + side + 2.6, c.words("eclipse.drawn", {{"time", p.drawn}}), small);
+  const std::string caption = c.words("eclipse.drawn", {{"time", p.drawn}});
+  set.fitted(x + std::max(0.0, (side - set.width(caption, small)) / 2), y + side + 2.6, caption,
+             small, side);
   double row_y = y;
   double widest = 0;
   for (const Row& r : p.rows) widest = std::max(widest, set.width(r.what, set.strong(cell)));
@@ -184,7 +193,7 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
             : c.words("eclipse.where",
                       {{"altitude", c.words.number(std::max(r.place.altitude.degrees(), 0.0), 0)},
                        {"direction", c.words.direction_short(r.place.azimuth)}});
-    if (r.seen && w.behind_skyline(r.place)) where = c.words("eclipse.behind-skyline");
+    if (r.seen && !r.edge && w.behind_skyline(r.place)) where = c.words("eclipse.behind-skyline");
     set.left(time_right + 2.5, baseline, where, s);
     table_right = std::max(table_right, time_right + 2.5 + set.width(where, s));
     row_y += 3.35;
@@ -207,26 +216,39 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
 double draw_eclipses(const BlockContext& c, const BlockOptions&, const Box& area,
                      std::vector<Mark>& out) {
   const HappeningWriter w(c);
-  double y = area.y;
-  const auto add = [&](const Panel& panel, const Draw& drawing) {
-    y += draw_panel(w, panel, drawing, area.x, y, area.width, out);
-  };
+  std::vector<std::pair<Panel, Draw>> panels;
   for (const SiteSolarEclipse& e : c.happenings.solar_eclipses)
     if (w.in_month(w.civil_date(e.best.at)))
-      add(solar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
+      panels.emplace_back(solar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
         draw_solar_phase(e, box, c.theme, marks);
       });
   for (const SiteSunTransit& t : c.happenings.sun_transits)
     if (w.in_month(w.civil_date(t.begins.at)))
-      add(transit_panel(w, t), [&](const Box& box, std::vector<Mark>& marks) {
+      panels.emplace_back(transit_panel(w, t), [&](const Box& box, std::vector<Mark>& marks) {
         draw_sun_transit(w.sky(), t, box, c.theme, marks);
       });
   for (const SiteLunarEclipse& e : c.happenings.lunar_eclipses)
     if (e.umbra_visible && e.eclipse.kind != LunarEclipseKind::penumbral &&
         w.in_month(w.evening_of(e.eclipse.greatest)))
-      add(lunar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
+      panels.emplace_back(lunar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
         draw_lunar_phase(e, box, c.theme, marks);
       });
+  double y = area.y;
+  // Two share a wide row.
+  const double gap = 6, half = (area.width - gap) / 2;
+  const bool pairs = half >= 75;
+  for (std::size_t i = 0; i < panels.size();) {
+    const auto draw = [&](std::size_t index, double x, double width) {
+      return draw_panel(w, panels[index].first, panels[index].second, x, y, width, out);
+    };
+    if (pairs && i + 1 < panels.size()) {
+      const double left = draw(i, area.x, half), right = draw(i + 1, area.x + half + gap, half);
+      y += std::max(left, right);
+      i += 2;
+    } else {
+      y += draw(i++, area.x, area.width);
+    }
+  }
   return y - area.y;
 }
 

@@ -1,3 +1,4 @@
+#include <algorithm>
 #include <charconv>
 
 #include "sheet/blocks/blocks.hpp"
@@ -17,14 +18,22 @@ std::size_t number_option(const BlockOptions& options, std::string_view name) {
   return value;
 }
 
-std::string closing_line(const BlockContext& c, const std::vector<HappeningLine>& left_out) {
+std::string closing_line(const BlockContext& c, std::vector<HappeningLine> left_out) {
+  const std::size_t count = left_out.size();
+  if (count > most_named) {  // the most important of them, still by date
+    std::stable_sort(left_out.begin(), left_out.end(),
+                     [](const auto& a, const auto& b) { return a.rank < b.rank; });
+    left_out.resize(most_named);
+    std::stable_sort(left_out.begin(), left_out.end(),
+                     [](const auto& a, const auto& b) { return a.date < b.date; });
+  }
   std::string list;
-  for (std::size_t i = 0; i < std::min(left_out.size(), most_named); ++i)
-    list += (i > 0 ? c.words("happening.list-comma") : std::string()) +
-            c.words("happening.lesser-item", {{"brief", left_out[i].brief},
-                                              {"day", std::to_string(day_of(left_out[i].date))}});
-  return c.words(left_out.size() > most_named ? "happening.lesser-many" : "happening.lesser",
-                 {{"n", std::to_string(left_out.size())}, {"list", list}});
+  for (const HappeningLine& line : left_out)
+    list += (list.empty() ? std::string() : c.words("happening.list-comma")) +
+            c.words("happening.lesser-item",
+                    {{"brief", line.brief}, {"day", std::to_string(day_of(line.date))}});
+  return c.words(count > most_named ? "happening.lesser-many" : "happening.lesser",
+                 {{"n", std::to_string(count)}, {"list", list}});
 }
 
 }  // namespace

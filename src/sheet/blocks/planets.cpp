@@ -12,8 +12,8 @@ namespace duskleaf {
 namespace {
 
 // Right edges of the columns of numbers, from the block's right edge.
-constexpr double lit_back = 0, size_back = 9, magnitude_back = 16.5, where_back = 24,
-                 best_back = 35.5;
+constexpr double lit_back = 0, size_back = 8.5, magnitude_back = 15, where_back = 21.5,
+                 best_back = 32;
 
 std::string short_date(const BlockContext& c, Date d) {
   return c.words("date.day-month",
@@ -62,7 +62,7 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   Style head = cell, quiet = cell;
   head.ink = quiet.ink = c.theme.soft;
   const double pitch = cell.size_pt * mm_per_pt * 1.12, right = area.right();
-  const double best_room = c.order.clock_12 ? 12.5 : 9.5;
+  const double best_room = c.order.clock_12 ? 12 : 8.5;
   const double name_room = 12.5, text_x = area.x + name_room;
   const double text_room = right - best_back - best_room - text_x;
   set.right(right - best_back, y + 2.2, c.words("planets.best"), head);
@@ -71,30 +71,39 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   set.right(right - size_back, y + 2.2, c.words("planets.size"), head);
   set.right(right - lit_back, y + 2.2, c.words("planets.lit"), head);
   y += 3.0;
+  // Planets in turn that are out of sight for the same reason share a row; nothing to measure of
+  // them, so that it has all of its width.
+  std::string names, hidden;
+  const auto finish_hidden = [&] {
+    const double indent = std::max(text_x, area.x + set.width(names, set.strong(cell)) + 2);
+    set.left(area.x, y + cell.size_pt * mm_per_pt * 0.95, names, set.strong(cell));
+    y += set.paragraph(indent, y, right - indent, hidden, cell, 1.12) + 0.3;
+    names.clear();
+    hidden.clear();
+  };
   for (const PlanetMonth& p : planet_month(c.ephemeris, c.year, c.month_index)) {
-    const double baseline = y + cell.size_pt * mm_per_pt * 0.95;
     const bool seen = p.sight != PlanetSight::not_visible;
-    set.left(area.x, baseline, c.words("body." + std::string(body_name(p.planet))),
-             set.strong(cell));
-    double height = 0;
+    const std::string name = c.words("body." + std::string(body_name(p.planet)));
+    const std::string sentence = planet_sentence(c, p);
+    if (!hidden.empty() && (seen || sentence != hidden)) finish_hidden();
     if (!seen) {
-      // Nothing to measure of what is out of sight: its sentence has the whole row.
-      height = set.paragraph(text_x, y, right - text_x, planet_sentence(c, p), cell, 1.12);
-    } else {
-      height = set.paragraph(text_x, y, text_room, planet_sentence(c, p), cell, 1.12);
-      draw_numbers(c, set, p, right, baseline, cell);
-      // Under the numbers, in the room of the sentence's second line.
-      std::string below = remark(c, p);
-      if (p.best && day_of(p.best_date) != 15)
-        below =
-            c.words("planets.on-date", {{"date", short_date(c, p.best_date)}, {"remark", below}});
-      const double room = right - (text_x + text_room) - 1.5;
-      set.fitted(right - std::min(room, set.width(below, quiet)), baseline + pitch, below, quiet,
-                 room);
-      height = std::max(height, 2 * pitch);
+      names += (names.empty() ? std::string() : c.words("happening.list-comma")) + name;
+      hidden = sentence;
+      continue;
     }
-    y += height + 0.3;
+    const double baseline = y + cell.size_pt * mm_per_pt * 0.95;
+    set.left(area.x, baseline, name, set.strong(cell));
+    draw_numbers(c, set, p, right, baseline, cell);
+    // Under the numbers, in the room of the sentence's second line.
+    std::string below = remark(c, p);
+    if (p.best && day_of(p.best_date) != 15)
+      below = c.words("planets.on-date", {{"date", short_date(c, p.best_date)}, {"remark", below}});
+    const double room = right - (text_x + text_room) - 1.5;
+    set.fitted(right - std::min(room, set.width(below, quiet)), baseline + pitch, below, quiet,
+               room);
+    y += std::max(set.paragraph(text_x, y, text_room, sentence, cell, 1.12), 2 * pitch) + 0.3;
   }
+  if (!hidden.empty()) finish_hidden();
   return y - area.y + 0.4;
 }
 

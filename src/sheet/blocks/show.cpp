@@ -10,7 +10,8 @@
 #include "almanac/show_list.hpp"
 #include "catalogue/constellations.hpp"
 #include "sheet/blocks/blocks.hpp"
-#include "sheet/flow_text.hpp"
+#include "sheet/jupiter_column.hpp"
+#include "sheet/setting.hpp"
 #include "sheet/show_moment.hpp"
 #include "sky/jupiter_moons.hpp"
 #include "sky/planet_disc.hpp"
@@ -81,14 +82,28 @@ std::string opening_text(const BlockContext& c, const ShowItem& item) {
   return c.words("show.opening", {{"n", c.words.number(item.opening_mm, 0)}});
 }
 
-/// The best of each group: bodies first, then by worth; half of the lines for what is at its best
-/// where the other groups can fill theirs.
+/// Whether the night bars carry Jupiter's moons this month, with their key.
+bool told_beside_night_bars(const BlockContext& c) {
+  const auto [year, month] = c.year.span.month(c.month_index);
+  std::vector<const Night*> nights;
+  for (const Night& night : c.year.nights)
+    if (year_of(night.date) == year && month_of(night.date) == month) nights.push_back(&night);
+  return jupiter_column(c, nights).has_value();
+}
+
+/// What everybody asks for first.
+bool is_bright(const ShowItem& item) {
+  return item.body && *item.body != Body::uranus && *item.body != Body::neptune;
+}
+
+/// The best of each group: the Moon and bright planets first, then by worth; half of the lines for
+/// what is at its best where the other groups can fill theirs.
 std::array<Group, 3> choose(const std::vector<ShowItem>& items, std::size_t most) {
   std::array<Group, 3> all, chosen;
   for (const ShowItem& item : items) all[static_cast<std::size_t>(item.standing)].push_back(&item);
   for (Group& group : all)
     std::stable_sort(group.begin(), group.end(), [](const ShowItem* a, const ShowItem* b) {
-      if (a->body.has_value() != b->body.has_value()) return a->body.has_value();
+      if (is_bright(*a) != is_bright(*b)) return is_bright(*a);
       return a->worth > b->worth;
     });
   constexpr std::size_t best = static_cast<std::size_t>(Standing::at_its_best);
@@ -108,16 +123,18 @@ std::array<Group, 3> choose(const std::vector<ShowItem>& items, std::size_t most
 }
 
 double draw_group(const BlockContext& c, const Group& group, std::string_view title_key, Ut moment,
-                  const Box& room, std::vector<Mark>& out) {
+                  bool beside, const Box& room, std::vector<Mark>& out) {
   Setter set(c, out);
   const Style cell = set.table();
   Style quiet = cell;
   quiet.ink = c.theme.soft;
   const double pitch = cell.size_pt * mm_per_pt * 1.17;
   const double takes_x = room.right() - 15, where_right = takes_x - 2;
+  // Above its things where the groups stand side by side, else before them.
+  const double first_x = beside ? room.x : room.x + 18;
   double y = room.y;
-  set.left(room.x, y + 2.7, c.words(title_key), set.strong(set.body()));
-  y += 3.8;
+  set.left(room.x, y + 2.7, c.words(title_key), set.strong(beside ? set.body() : cell));
+  if (beside) y += 3.8;
   for (const ShowItem* item : group) {
     const std::string text =
         item->body ? body_text(c, *item->body, moment)
@@ -128,10 +145,10 @@ double draw_group(const BlockContext& c, const Group& group, std::string_view ti
     const double baseline = y + cell.size_pt * mm_per_pt * 0.95;
     set.right(where_right, baseline, where, cell);
     set.left(takes_x, baseline, opening_text(c, *item), quiet);
-    const double text_room = where_right - 12 - room.x;
+    const double text_room = where_right - 12 - first_x;
     y += text_room > 10 && set.width(text, cell) > text_room
-             ? set.paragraph(room.x, y, text_room, text, cell, 1.1) + pitch * (1 - 1.1 / 1.17)
-             : (set.left(room.x, baseline, text, cell), pitch);
+             ? set.paragraph(first_x, y, text_room, text, cell, 1.1) + pitch * (1 - 1.1 / 1.17)
+             : (set.left(first_x, baseline, text, cell), pitch);
   }
   return y - room.y + 0.8;
 }
@@ -166,8 +183,8 @@ double draw_show(const BlockContext& c, const BlockOptions& options, const Box& 
   double x = area.x, bottom = y;
   for (std::size_t g = 0; g < groups.size(); ++g) {
     if (groups[g].empty()) continue;
-    const double used =
-        draw_group(c, groups[g], titles[g], when.at, {x, y, std::min(column, 90.0), 0}, out);
+    const double used = draw_group(c, groups[g], titles[g], when.at, beside,
+                                   {x, y, std::min(column, 95.0), 0}, out);
     bottom = std::max(bottom, y + used);
     if (beside)
       x += column + gap;
@@ -178,7 +195,7 @@ double draw_show(const BlockContext& c, const BlockOptions& options, const Box& 
     return std::any_of(group.begin(), group.end(),
                        [](const ShowItem* i) { return i->body == Body::jupiter; });
   });
-  if (jupiter)
+  if (jupiter && !told_beside_night_bars(c))
     bottom +=
         set.paragraph(area.x, bottom, area.width, c.words("show.moons-key"), set.small(), 1.2);
   return bottom - area.y + 0.6;

@@ -1,0 +1,87 @@
+#include <gmock/gmock.h>
+#include <gtest/gtest.h>
+
+#include "month_scene.hpp"
+#include "sheet/blocks/blocks.hpp"
+
+namespace duskleaf {
+namespace {
+
+using testing::HasSubstr;
+using testing::Not;
+
+struct Drawn {
+  double height;
+  std::string text;
+  std::vector<Mark> marks;
+};
+
+Drawn panel(MonthScene& scene, double width = 105) {
+  Drawn d{};
+  d.height = draw_eclipses(scene.context(), {}, {12, 12, width, 200}, d.marks);
+  d.text = all_words(d.marks);
+  return d;
+}
+
+// Contacts of this place: F. Espenak, EclipseWise.com, local circumstances of 2024 April 8 (UT
+// 17:55:52, 19:10:42, 19:12:34, 19:14:27, 20:26:37; altitudes 56.3 to 39.6 degrees); civil time is
+// UT - 4 h.
+TEST(EclipsePanel, ATotalEclipseOfTheSunHasItsContactsAndTheCaution) {
+  MonthScene scene(41.0341, -83.6523, "America/New_York", 2024, 4);
+  scene.compute(true);
+  for (const double width : {75.0, 105.0, 186.0}) {
+    const Drawn d = panel(scene, width);
+    for (const char* piece : {"Total eclipse of the Sun", "13:56", "15:11", "15:13", "15:14",
+                              "16:27", "56° up", "40° up", "3\u00A0min\u00A04"})
+      EXPECT_THAT(d.text, HasSubstr(piece)) << width;
+    EXPECT_THAT(d.text, HasSubstr("Never look at the Sun"));
+    EXPECT_THAT(d.text, HasSubstr("wholly covered"));
+    EXPECT_GT(d.height, 25);
+  }
+}
+
+// The same page's 2023 April 20 at 4.6622 N 170.8101 E: the last contact comes with the Sun 4.4
+// degrees down. Pacific/Kosrae is UT + 11 h.
+TEST(EclipsePanel, ASunThatSetsEclipsedSaysWhatIsCut) {
+  MonthScene scene(4.6622, 170.8101, "Pacific/Kosrae", 2023, 4);
+  scene.compute(true);
+  const Drawn d = panel(scene);
+  for (const char* piece :
+       {"Partial eclipse of the Sun", "15:42", "16:54", "17:58", "Sun sets", "below the horizon"})
+    EXPECT_THAT(d.text, HasSubstr(piece));
+  EXPECT_THAT(d.text, HasSubstr("Never look at the Sun"));
+  EXPECT_THAT(d.text, Not(HasSubstr("wholly covered")));
+}
+
+// Contacts of 2026 March 3 (UT 09:50:00, 12:02:45): NASA's Catalog of Lunar Eclipses. In
+// New York the Moon sets in the first minutes of totality (civil time UT - 5 h; from memory).
+TEST(EclipsePanel, AMoonThatSetsEclipsed) {
+  MonthScene scene(40.7, -74.0, "America/New_York", 2026, 3);
+  scene.compute(true);
+  const Drawn d = panel(scene);
+  for (const char* piece : {"Total eclipse of the Moon", "night of 2–3\u00A0March", "04:50",
+                            "07:03", "Moon sets", "below the horizon"})
+    EXPECT_THAT(d.text, HasSubstr(piece));
+  EXPECT_THAT(d.text, Not(HasSubstr("the Sun without")));
+}
+
+TEST(EclipsePanel, AMonthWithoutOneClosesUp) {
+  MonthScene scene(51.5, 0, "Europe/London", 2027, 4);
+  scene.compute(true);
+  const Drawn d = panel(scene);
+  EXPECT_EQ(d.height, 0);
+  EXPECT_TRUE(d.marks.empty());
+}
+
+// Mercury's transit of 2032 November 13, in the morning of Europe (F. Espenak, NASA/GSFC, Seven
+// Century Catalog of Mercury Transits; from memory).
+TEST(EclipsePanel, ATransitOfTheSunCarriesTheCaution) {
+  MonthScene scene(48, 11, "Europe/Berlin", 2032, 11);
+  scene.compute(true);
+  const Drawn d = panel(scene);
+  EXPECT_THAT(d.text, HasSubstr("Mercury before the Sun"));
+  EXPECT_THAT(d.text, HasSubstr("Never look at the Sun"));
+}
+
+}  // namespace
+}  // namespace duskleaf
