@@ -9,7 +9,7 @@
 namespace duskleaf {
 namespace {
 
-constexpr double row_pitch = 2.95, column_gap = 4.5;  // mm
+constexpr double row_pitch = 2.88, column_gap = 4.5;  // mm
 
 std::string name_of(const BlockContext& c, const ConstellationEvening& row) {
   const Figure& figure = figures()[static_cast<std::size_t>(row.figure)];

@@ -15,7 +15,7 @@ namespace {
 
 // mm. Rows grow with the block's room; at the least pitch their 8 pt still stand clear.
 constexpr double above_heads = 0.8, heads = 6.8, key_line = 4.2, note_line = 3.2;
-constexpr double least_pitch = 3.1, greatest_pitch = 4.4;
+constexpr double least_pitch = 3.0, greatest_pitch = 4.4;
 
 std::vector<const Night*> nights_of_month(const BlockContext& c) {
   const auto [year, month] = c.year.span.month(c.month_index);
@@ -80,6 +80,15 @@ struct TimeColumn {
   double centre = 0;
 };
 
+/// Whether the site has a skyline that the Sun clears or goes behind in the month.
+bool has_skyline_times(const BlockContext& c) {
+  const auto [year, month] = c.year.span.month(c.month_index);
+  return std::any_of(
+      c.happenings.skyline.begin(), c.happenings.skyline.end(), [&](const SkylineDay& day) {
+        return year_of(day.date) == year && month_of(day.date) == month && (day.clears || day.gone);
+      });
+}
+
 std::vector<TimeColumn> time_columns(const BlockContext& c) {
   std::vector<TimeColumn> columns{
       {"sunset", [&c](const Night& n) { return time_or_dash(c, n.sunset); }},
@@ -88,7 +97,7 @@ std::vector<TimeColumn> time_columns(const BlockContext& c) {
       {"sunrise", [&c](const Night& n) { return time_or_dash(c, n.sunrise); }},
       {"moonrise", [&c](const Night& n) { return moon_cell(c, n, true); }},
       {"moonset", [&c](const Night& n) { return moon_cell(c, n, false); }}};
-  if (!c.happenings.skyline.empty()) {
+  if (has_skyline_times(c)) {
     // In the order in which they happen: behind the hills, then below the sea's horizon.
     columns.insert(columns.begin() + 4,
                    {"clears", [&c](const Night& n) { return skyline_cell(c, n, false); }});
@@ -171,8 +180,10 @@ std::string foot_note(const BlockContext& c, const std::vector<const Night*>& ni
 }  // namespace
 
 double night_bars_least_height(const BlockContext& c) {
-  return above_heads + heads + key_line + note_line +
-         least_pitch * static_cast<double>(nights_of_month(c).size());
+  const std::vector<const Night*> nights = nights_of_month(c);
+  const bool notes = has_skyline_times(c) || jupiter_column(c, nights).has_value();
+  return above_heads + heads + key_line + (notes ? note_line : 0.0) +
+         least_pitch * static_cast<double>(nights.size());
 }
 
 double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& area,
@@ -188,7 +199,7 @@ double draw_night_bars(const BlockContext& c, const BlockOptions&, const Box& ar
     for (Date date : session_dates(session, c.year.span)) session_nights.insert(date);
   std::string notes;
   if (jupiter) notes += c.words("night-bars.jupiter-note", {{"time", jupiter->hour}});
-  if (!c.happenings.skyline.empty())
+  if (has_skyline_times(c))
     notes += (notes.empty() ? "" : " ") + c.words("night-bars.skyline-note");
   const double foot = key_line + (notes.empty() ? 0.0 : note_line);
 
