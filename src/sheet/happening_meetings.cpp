@@ -85,6 +85,7 @@ int rank_of(const Meeting& m) {
     rank = is_bright_star(b) && apart < 3 ? 3 : 4;
   else if (is_planet(a))
     rank = apart < 2 ? 3 : 4;
+  if (apart > 6) ++rank;
   if (!m.bare_eye) rank += 2;
   if (!m.look->above_skyline) ++rank;
   return std::min(rank, 5);

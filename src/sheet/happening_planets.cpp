@@ -81,6 +81,8 @@ double honest(double rate) {
 Ut to_ten_minutes(Ut t) { return Ut(Days(std::round(t.days() * 144) / 144)); }
 
 int rank_of(const SiteShower& s) {
+  if (!showers()[static_cast<std::size_t>(s.shower)].zhr)
+    return 4;  // nobody knows whether it comes
   switch (s.verdict) {
     case Verdict::good:
       return s.expected_per_hour >= 30 ? 0 : 1;

@@ -12,8 +12,7 @@ namespace duskleaf {
 namespace {
 
 // Right edges of the columns of numbers, from the block's right edge.
-constexpr double lit_back = 0, size_back = 8.5, magnitude_back = 15, where_back = 21.5,
-                 best_back = 32;
+constexpr double size_back = 0, magnitude_back = 7, where_back = 14, best_back = 25;
 
 std::string short_date(const BlockContext& c, Date d) {
   return c.words("date.day-month",
@@ -23,6 +22,8 @@ std::string short_date(const BlockContext& c, Date d) {
 /// What a telescope adds, and where the planet stands: "in Gemini", "rings open 12°, in Pisces".
 std::string remark(const BlockContext& c, const PlanetMonth& p) {
   const std::string name(constellations()[static_cast<std::size_t>(p.constellation)].name);
+  if (p.planet == Body::mercury || p.planet == Body::venus || p.planet == Body::mars)
+    return c.words("planets.lit-in", {{"n", c.words.number(100 * p.disc.lit, 0)}, {"name", name}});
   if (p.planet != Body::saturn) return c.words("planets.stands-in", {{"name", name}});
   const double tilt = std::abs(p.disc.ring_tilt.degrees());
   if (tilt < 1.5) return c.words("planets.rings-edge", {{"name", name}});
@@ -31,7 +32,6 @@ std::string remark(const BlockContext& c, const PlanetMonth& p) {
 
 void draw_numbers(const BlockContext& c, Setter& set, const PlanetMonth& p, double right,
                   double baseline, const Style& cell) {
-  const bool inner = p.planet == Body::mercury || p.planet == Body::venus || p.planet == Body::mars;
   if (p.best && p.place) {
     set.right(right - best_back, baseline, c.words.time(c.year.place.zone.civil(*p.best)), cell);
     set.right(right - where_back, baseline,
@@ -45,9 +45,6 @@ void draw_numbers(const BlockContext& c, Setter& set, const PlanetMonth& p, doub
   set.right(right - size_back, baseline,
             c.words("planets.arcseconds", {{"n", c.words.number(size, size < 9.95 ? 1 : 0)}}),
             cell);
-  if (inner)
-    set.right(right - lit_back, baseline,
-              c.words("planets.percent", {{"n", c.words.number(100 * p.disc.lit, 0)}}), cell);
 }
 
 }  // namespace
@@ -69,7 +66,6 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   set.right(right - where_back, y + 2.2, c.words("planets.where"), head);
   set.right(right - magnitude_back, y + 2.2, c.words("planets.magnitude"), head);
   set.right(right - size_back, y + 2.2, c.words("planets.size"), head);
-  set.right(right - lit_back, y + 2.2, c.words("planets.lit"), head);
   y += 3.0;
   // Planets in turn that are out of sight for the same reason share a row; nothing to measure of
   // them, so that it has all of its width.
