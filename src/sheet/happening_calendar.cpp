@@ -79,9 +79,12 @@ void write_calendar(HappeningWriter& w) {
       m.offset = change.before;
       return m;
     }();
-    HappeningLine* line =
-        w.on_date(old.date(), rank_clocks,
-                  w.words(hours > 0 ? "clocks-forward" : "clocks-back", {{"amount", amount}}), {});
+    HappeningLine* line = w.on_date(old.date(), rank_clocks,
+                                    w.words(hours >= 24 ? "date-skipped"
+                                            : hours > 0 ? "clocks-forward"
+                                                        : "clocks-back",
+                                            {{"amount", amount}}),
+                                    {});
     if (line != nullptr) {
       line->at = change.at;
       line->when = c.words.time(old);

@@ -18,11 +18,8 @@ void write_solar(HappeningWriter& w, const SiteSolarEclipse& e) {
                        e.central_begins->visible && e.central_ends && e.central_ends->visible;
   std::string text;
   if (central) {
-    const double seconds = Seconds(e.central_ends->at - e.central_begins->at).count();
     text = w.words(e.kind == SolarEclipseKind::annular ? "solar-annular" : "solar-total",
-                   {{"duration", w.words("minutes-seconds",
-                                         {{"m", std::to_string(std::lround(seconds) / 60)},
-                                          {"s", std::to_string(std::lround(seconds) % 60)}})},
+                   {{"duration", w.minutes_seconds(e.central_begins->at, e.central_ends->at)},
                     {"time", w.time(e.central_begins->at)},
                     {"place", w.place(place)}});
   } else {

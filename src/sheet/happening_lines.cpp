@@ -51,6 +51,11 @@ std::string HappeningWriter::time(Ut t) const { return c_.words.time(c_.year.pla
 std::string HappeningWriter::span(Ut from, Ut to) const {
   return words("span", {{"from", time(from)}, {"to", time(to)}});
 }
+std::string HappeningWriter::minutes_seconds(Ut from, Ut to) const {
+  const long seconds = std::lround(Seconds(to - from).count());
+  return words("minutes-seconds",
+               {{"m", std::to_string(seconds / 60)}, {"s", std::to_string(seconds % 60)}});
+}
 std::string HappeningWriter::percent(double fraction) const {
   const double shown = fraction < 1 ? std::min(std::round(100 * fraction), 99.0) : 100.0;
   return words("percent", {{"n", c_.words.number(shown, 0)}});

@@ -176,7 +176,7 @@ void write_showers(HappeningWriter& w) {
     text += " " + verdict(w, s);
     if (HappeningLine* line = w.by_night(from, rank_of(s), text, name);
         line != nullptr && to > from)
-      line->when = w.span(from, to);
+      line->when = to - from < std::chrono::hours(23) ? w.span(from, to) : w.words("any-hour");
   }
 }
 

@@ -33,11 +33,12 @@ class HappeningWriter {
   /// The words of "happening." + key.
   std::string words(std::string_view key, Values values = {}) const;
   std::string time(Ut) const;
-  std::string span(Ut from, Ut to) const;      // 01:00–04:00
-  std::string place(const Horizontal&) const;  // "34° up in the south-west"
-  std::string percent(double fraction) const;  // "87 %"; never rounded up to 100
-  std::string body(Body) const;                // "Jupiter"
-  std::string target(const Target&) const;     // "Jupiter", "the Pleiades", "δ Scorpii"
+  std::string span(Ut from, Ut to) const;             // 01:00–04:00
+  std::string minutes_seconds(Ut from, Ut to) const;  // 1 min 44 s
+  std::string place(const Horizontal&) const;         // "34° up in the south-west"
+  std::string percent(double fraction) const;         // "87 %"; never rounded up to 100
+  std::string body(Body) const;                       // "Jupiter"
+  std::string target(const Target&) const;            // "Jupiter", "the Pleiades", "δ Scorpii"
   bool behind_skyline(const Horizontal& apparent) const;
   /// A topocentric place without refraction as it appears.
   static Horizontal apparent(const Horizontal&);

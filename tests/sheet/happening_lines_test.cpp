@@ -213,7 +213,7 @@ TEST_F(HappeningDates, OccultationsAreToldWhereTheyCanBeWatched) {
   ASSERT_EQ(lines.size(), 1u) << "the meeting is not told beside the occultation";
   EXPECT_EQ(lines[0].when, "21:14");
   EXPECT_EQ(lines[0].text,
-            "The Moon covers Antares, at its dark edge, until 22:20; 27° up in the south-west.");
+            "The Moon’s dark edge covers Antares, until 22:20; 27° up in the south-west.");
   lines = told(occultation("antares", true, 8, -30));
   EXPECT_THAT(lines.at(0).text, Not(HasSubstr("22:20"))) << "it has set by then";
   lines = told(occultation("antares", true, 27, 10));

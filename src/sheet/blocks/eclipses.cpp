@@ -58,12 +58,6 @@ std::string date_of_day(const BlockContext& c, Date date) {
                                             {"date", c.words.day_month(date)}});
 }
 
-std::string duration(const HappeningWriter& w, Ut from, Ut to) {
-  const long seconds = std::lround(Seconds(to - from).count());
-  return w.words("minutes-seconds",
-                 {{"m", std::to_string(seconds / 60)}, {"s", std::to_string(seconds % 60)}});
-}
-
 Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   const BlockContext& c = w.context();
   const std::string kind(eclipse_name(e.kind));
@@ -82,7 +76,7 @@ Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   const auto number = [&](double value) { return c.words.number(value, 2); };
   if (central && e.central_begins->visible && e.central_ends->visible)
     p.text = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
-                     {{"duration", duration(w, e.central_begins->at, e.central_ends->at)},
+                     {{"duration", w.minutes_seconds(e.central_begins->at, e.central_ends->at)},
                       {"magnitude", number(e.best_magnitude)}});
   else
     p.text = c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)},
