@@ -218,7 +218,8 @@ std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& pag
       if (scale < smallest + 0.01) return false;
     return true;
   };
-  const bool fits = fits_reduced(3, 0.925) || fits_reduced(1, 0.875);
+  const bool fits =
+      fits_reduced(3, 1) || fits_reduced(2, 1) || fits_reduced(3, 0.925) || fits_reduced(1, 0.875);
   if (!fits)
     context.tally.notes.push_back("a page is too full by " + context.words.number(overfull, 1) +
                                   " mm");

@@ -28,7 +28,11 @@ TEST(Words, EveryKeyNamedInTheSourcesExists) {
     if (entry.path().extension() != ".cpp") continue;
     const std::string text = contents(entry.path());
     for (std::sregex_iterator at(text.begin(), text.end(), call), end; at != end; ++at, ++found)
-      EXPECT_TRUE(words.has((*at)[1].str())) << (*at)[1].str() << " in " << entry.path();
+      // HappeningWriter asks for keys below "happening.".
+      EXPECT_TRUE(words.has((*at)[1].str()) ||
+                  (text.find("happening_writer.hpp") != std::string::npos &&
+                   words.has("happening." + (*at)[1].str())))
+          << (*at)[1].str() << " in " << entry.path();
   }
   EXPECT_GT(found, 40);
 }

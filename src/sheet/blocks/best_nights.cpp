@@ -117,7 +117,7 @@ double draw_best_nights(const BlockContext& c, const BlockOptions&, const Box& a
   Setter set(c, out);
   double y = area.y + set.heading(area.x, area.y, area.width, choice.title,
                                   aside(c, choice, ranks.front().dark_limit));
-  const Style body = set.body();
+  const Style body = set.body(), narrow{Face::condensed, body.size_pt, body.ink};
   const auto dark = [](const NightRank& r) { return r.dark_minutes >= 1; };
   if (std::none_of(ranks.begin(), ranks.end(),
                    [&](const NightRank& r) { return dark(r) || r.moon_minutes > 0; }))
@@ -144,7 +144,7 @@ double draw_best_nights(const BlockContext& c, const BlockOptions&, const Box& a
         c.words("date.weekday-day", {{"weekday", c.words.weekday_short(weekday_of(night.date))},
                                      {"day", std::to_string(day_of(night.date))}});
     set.left(area.x, y + body.size_pt * mm_per_pt * 0.95, date, set.strong(body));
-    y += set.paragraph(area.x + 14.5, y, area.width - 14.5, reasons, body);
+    y += set.paragraph(area.x + 14.5, y, area.width - 14.5, reasons, narrow);
   }
   return y - area.y + 0.8;
 }
