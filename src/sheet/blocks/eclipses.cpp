@@ -160,7 +160,7 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
   Setter set(c, out);
   double y = top + set.heading(x, top, width, p.title, p.aside);
   const bool wide = width > 115;
-  const double side = 22, table_x = x + side + 3;
+  const double side = wide ? 18 : 22, table_x = x + side + 4;
   const Style cell = set.table(), small{Face::condensed, c.theme.label_pt, c.theme.soft};
   // The caution first: it is read before the times.
   if (!p.caution.empty() && !wide)
