@@ -157,7 +157,7 @@ bool above_skyline(const std::vector<SkylinePoint>& points, const Horizontal& ap
 std::vector<SkylineDay> skyline_days(const SiteSky& sky, const SiteYear& year) {
   const Place& place = year.place;
   if (place.skyline.empty()) return {};
-  const Date first = year.span.first_day(), end = year.span.end_day();
+  const Date first = year.span.first_day(), end = year.span.end_day() + std::chrono::days(1);
   std::vector<SkylineDay> days;
   for (Date date = first; date < end; date += std::chrono::days(1))
     days.push_back({date, {}, {}, false});

@@ -23,7 +23,8 @@ struct SkylineDay {
   std::optional<Ut> clears, gone;
   bool never_clears;
 };
-/// One for each date of the span; none where the order gives no skyline.
+/// One for each date of the span and one for the morning after its last night; none where the order
+/// gives no skyline.
 std::vector<SkylineDay> skyline_days(const SiteSky&, const SiteYear&);
 
 }  // namespace duskleaf

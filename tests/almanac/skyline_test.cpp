@@ -102,7 +102,7 @@ TEST(Skyline, ReferenceDays) {
             point(parse_number(word.substr(0, colon)), parse_number(word.substr(colon + 1))));
       }
       years[site] = days_of(place, 2027);
-      ASSERT_EQ(years[site].size(), 365U);
+      ASSERT_EQ(years[site].size(), 366U);
     }
     const Ut noon = instant(cell("date") + "T12:00Z");
     const SkylineDay& day = years[site].at(
@@ -187,7 +187,7 @@ TEST(Skyline, DatesOfTheSpan) {
   Place samoa = test_place(-13.8, -171.8, "Pacific/Apia");
   samoa.skyline = {point(0, 4), point(180, 7)};
   const std::vector<SkylineDay> skipped = days_of(samoa, 2011);
-  ASSERT_EQ(skipped.size(), 365U);
+  ASSERT_EQ(skipped.size(), 366U);
   for (const SkylineDay& day : skipped) {
     const bool missing = iso_date(day.date) == "2011-12-30";
     EXPECT_EQ(day.clears.has_value(), !missing) << iso_date(day.date);
@@ -201,7 +201,7 @@ TEST(Skyline, DatesOfTheSpan) {
   Place leap = test_place(54.2, -4.6, "Europe/London");
   leap.skyline = {point(0, 4)};
   const std::vector<SkylineDay> days = days_of(leap, 2027, 9);
-  ASSERT_EQ(days.size(), 366U);
+  ASSERT_EQ(days.size(), 367U);
   EXPECT_EQ(iso_date(days.front().date), "2027-09-01");
   EXPECT_EQ(iso_date(days.at(181).date), "2028-02-29");
   EXPECT_TRUE(days.at(181).clears.has_value());
@@ -217,7 +217,7 @@ TEST(Skyline, AwkwardPlaces) {
     Place place = test_place(latitude, 0, "UTC");
     place.skyline = {point(0, 10), point(90, 20), point(180, 35), point(270, 15)};
     const std::vector<SkylineDay> days = days_of(place, 2027);
-    ASSERT_EQ(days.size(), 365U);
+    ASSERT_EQ(days.size(), 366U);
     for (const SkylineDay& day : days) {
       EXPECT_FALSE(day.never_clears && (day.clears || day.gone)) << latitude;
       if (std::abs(latitude) < 90.0) {

@@ -45,9 +45,7 @@ std::string skyline_cell(const BlockContext& c, const Night& night, bool gone) {
     const std::optional<Ut>& at = gone ? day.gone : day.clears;
     if (at && *at >= night.from && *at < night.to) return time_or_dash(c, at);
   }
-  // The morning after the year's last date has no almanac: say nothing of it.
-  const bool known = gone || night.date < c.happenings.skyline.back().date;
-  return known ? "–" : "";
+  return "–";
 }
 
 std::string dark_hours(const BlockContext& c, const Night& night) {
