@@ -152,6 +152,44 @@ Panel transit_panel(const HappeningWriter& w, const SiteSunTransit& t) {
 
 using Draw = std::function<void(const Box&, std::vector<Mark>&)>;
 
+/// The contacts as a table at (x, y), in two columns where `split`; returns its right edge and
+/// bottom.
+Point draw_contacts(const HappeningWriter& w, const Panel& p, double x, double y, bool split,
+                    std::vector<Mark>& out) {
+  const BlockContext& c = w.context();
+  Setter set(c, out);
+  const Style cell = set.table();
+  const double pitch = 3.35, time_width = c.order.clock_12 ? 14.0 : 9.0;
+  const std::size_t in_column = split ? (p.rows.size() + 1) / 2 : p.rows.size();
+  double right = x;
+  for (std::size_t first = 0; first < p.rows.size(); first += in_column) {
+    const std::size_t end = std::min(first + in_column, p.rows.size());
+    const double left = first == 0 ? x : right + 6;
+    double widest = 0;
+    for (std::size_t i = first; i < end; ++i)
+      widest = std::max(widest, set.width(p.rows[i].what, set.strong(cell)));
+    const double time_right = left + widest + 2.5 + time_width;
+    for (std::size_t i = first; i < end; ++i) {
+      const Row& r = p.rows[i];
+      Style s = r.strong ? set.strong(cell) : cell;
+      if (!r.seen) s.ink = c.theme.soft;
+      const double baseline = y + static_cast<double>(i - first) * pitch + 2.6;
+      set.left(left, baseline, r.what, s);
+      set.right(time_right, baseline, w.time(r.at), s);
+      std::string where =
+          !r.seen
+              ? c.words("eclipse.below")
+              : c.words("eclipse.where",
+                        {{"altitude", c.words.number(std::max(r.place.altitude.degrees(), 0.0), 0)},
+                         {"direction", c.words.direction_short(r.place.azimuth)}});
+      if (r.seen && !r.edge && w.behind_skyline(r.place)) where = c.words("eclipse.behind-skyline");
+      set.left(time_right + 2.5, baseline, where, s);
+      right = std::max(right, time_right + 2.5 + set.width(where, s));
+    }
+  }
+  return {right, y + static_cast<double>(in_column) * pitch};
+}
+
 /// The drawing at the left, the contacts beside it, and the words right of them where there is room
 /// for that, else below.
 double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing, double x,
@@ -160,49 +198,25 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
   Setter set(c, out);
   double y = top + set.heading(x, top, width, p.title, p.aside);
   const bool wide = width > 115;
-  const double side = wide ? 18 : 22, table_x = x + side + 4;
-  const Style cell = set.table(), small{Face::condensed, c.theme.label_pt, c.theme.soft};
+  const double side = wide ? 15 : 18, table_x = x + side + 4;
+  const std::string drawn = c.words("eclipse.drawn", {{"time", p.drawn}});
   // The caution first: it is read before the times.
   if (!p.caution.empty() && !wide)
     y += flow(set, x, y, width, {{p.caution, set.strong(set.body())}}, 1.2) + 0.6;
-  const Box box{x, y, side, side};
-  drawing(box, out);
-  const std::string caption = c.words("eclipse.drawn", {{"time", p.drawn}});
-  set.fitted(x + std::max(0.0, (side - set.width(caption, small)) / 2), y + side + 2.6, caption,
-             small, side);
-  double row_y = y;
-  double widest = 0;
-  for (const Row& r : p.rows) widest = std::max(widest, set.width(r.what, set.strong(cell)));
-  const double time_right = table_x + widest + 2.5 + (c.order.clock_12 ? 14.0 : 9.0);
-  double table_right = time_right;
-  for (const Row& r : p.rows) {
-    Style s = r.strong ? set.strong(cell) : cell;
-    if (!r.seen) s.ink = c.theme.soft;
-    const double baseline = row_y + 2.6;
-    set.left(table_x, baseline, r.what, s);
-    set.right(time_right, baseline, w.time(r.at), s);
-    std::string where =
-        !r.seen
-            ? c.words("eclipse.below")
-            : c.words("eclipse.where",
-                      {{"altitude", c.words.number(std::max(r.place.altitude.degrees(), 0.0), 0)},
-                       {"direction", c.words.direction_short(r.place.azimuth)}});
-    if (r.seen && !r.edge && w.behind_skyline(r.place)) where = c.words("eclipse.behind-skyline");
-    set.left(time_right + 2.5, baseline, where, s);
-    table_right = std::max(table_right, time_right + 2.5 + set.width(where, s));
-    row_y += 3.35;
-  }
-  const double drawn_bottom = y + side + 3.6;
+  drawing(Box{x, y, side, side}, out);
+  const Point table = draw_contacts(w, p, table_x, y, wide && p.rows.size() > 4, out);
+  std::vector<Run> runs;
+  if (!p.caution.empty() && wide) runs.push_back({p.caution, set.strong(set.body())});
+  runs.push_back({p.text, set.body()});
+  runs.push_back({drawn, set.body()});
+  double bottom = table.y;
   if (wide) {
-    const double text_x = std::max(table_right + 5, x + 0.56 * width);
-    std::vector<Run> runs;
-    if (!p.caution.empty()) runs.push_back({p.caution, set.strong(set.body())});
-    runs.push_back({p.text, set.body()});
-    const double bottom = y + flow(set, text_x, y, x + width - text_x, runs, 1.22);
-    return std::max({bottom, drawn_bottom, row_y}) - top + 1.0;
+    const double text_x = std::max(table.x + 6, x + 0.5 * width);
+    bottom = std::max(bottom, y + flow(set, text_x, y, x + width - text_x, runs, 1.22));
+  } else {
+    bottom += 0.4 + flow(set, table_x, bottom + 0.4, x + width - table_x, runs, 1.2);
   }
-  row_y += 0.4 + flow(set, table_x, row_y + 0.4, x + width - table_x, {{p.text, set.body()}}, 1.2);
-  return std::max(drawn_bottom, row_y) - top + 1.0;
+  return std::max(bottom, y + side) - top + 1.0;
 }
 
 }  // namespace

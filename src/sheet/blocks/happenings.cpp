@@ -48,9 +48,9 @@ double draw_happenings(const BlockContext& c, const BlockOptions& options, const
   double y =
       area.y + set.heading(area.x, area.y, area.width, c.words("happenings.title"),
                            across_midnight ? c.words("happenings.aside") : std::string_view());
-  const Style body = set.body();
-  Style day = set.table();
-  day.size_pt = body.size_pt;
+  Style body = set.table();  // the narrow face: the list is long
+  body.size_pt = c.theme.body_pt;
+  const Style day = body;
   const double day_right = area.x + 14.6, text_x = area.x + 16.4;
   std::optional<HappeningLine> before;
   for (const HappeningLine& line : choice.shown) {
