@@ -1,16 +1,17 @@
 // Seasons, apsides, clock changes, the order's own dates, and the Sun's year at the site. Seasons
 // are named by month, never by hemisphere (this project's conventions).
 #include <cmath>
+#include <tuple>
 
 #include "sheet/happening_writer.hpp"
 
 namespace duskleaf {
 namespace {
 
-constexpr int rank_own = 0, rank_clocks = 0, rank_season = 1, rank_white_nights = 2,
-              rank_extreme = 4, rank_apsis = 5;
+constexpr double rank_own = 0, rank_clocks = 0, rank_season = 1.9, rank_no_night = 0.9,
+                 rank_white_nights = 1.5, rank_extreme = 2.4, rank_length = 2.5;
 
-int rank_of(EventKind kind) {
+double rank_of(EventKind kind) {
   switch (kind) {
     case EventKind::march_equinox:
     case EventKind::june_solstice:
@@ -18,27 +19,26 @@ int rank_of(EventKind kind) {
     case EventKind::december_solstice:
       return rank_season;
     default:
-      return rank_apsis;
+      return fact_rank;
   }
 }
 
 /// A stretch of nights of one kind: a line on its first date, and one on the day after its last.
-void write_stretch(HappeningWriter& w, const DateSpan& stretch, std::string_view key) {
+void write_stretch(HappeningWriter& w, const DateSpan& stretch, double rank, std::string_view key) {
   const auto& words = w.context().words;
   const std::string name(key);
   if (!stretch.begins_before) {
     if (stretch.first == stretch.last)
-      w.on_date(stretch.first, rank_white_nights, w.words(name + "-once"),
-                w.words(name + "-brief"));
+      w.on_date(stretch.first, rank, w.words(name + "-once"), w.words(name + "-brief"));
     else
-      w.on_date(stretch.first, rank_white_nights,
+      w.on_date(stretch.first, rank,
                 stretch.ends_after
                     ? w.words(name + "-begins-long")
                     : w.words(name + "-begins", {{"date", words.day_month(stretch.last)}}),
                 w.words(name + "-brief"));
   }
   if (!stretch.ends_after && (stretch.first != stretch.last || stretch.begins_before))
-    w.on_date(stretch.last + std::chrono::days(1), rank_white_nights, w.words(name + "-ends"),
+    w.on_date(stretch.last + std::chrono::days(1), rank, w.words(name + "-ends"),
               w.words(name + "-ends-brief"));
 }
 
@@ -57,7 +57,7 @@ void write_calendar(HappeningWriter& w) {
       case EventKind::perigee:
       case EventKind::apogee: {
         const std::string key = event_name(event.kind);
-        w.by_day(event.at, rank_of(event.kind), w.words(key), w.words(key + "-brief"));
+        w.fact(event.at, rank_of(event.kind), w.words(key), w.words(key + "-brief"));
         break;
       }
       default:
@@ -79,7 +79,9 @@ void write_calendar(HappeningWriter& w) {
       m.offset = change.before;
       return m;
     }();
-    HappeningLine* line = w.on_date(old.date(), rank_clocks,
+    const bool of_night = hours < 24 && old.hour() < 12 && w.before_sunrise(change.at);
+    const Date date = old.date() - std::chrono::days(of_night ? 1 : 0);
+    HappeningLine* line = w.on_date(date, rank_clocks,
                                     w.words(hours >= 24 ? "date-skipped"
                                             : hours > 0 ? "clocks-forward"
                                                         : "clocks-back",
@@ -88,6 +90,7 @@ void write_calendar(HappeningWriter& w) {
     if (line != nullptr) {
       line->at = change.at;
       line->when = c.words.time(old);
+      if (date != old.date()) line->after_midnight = old.date();
     }
   }
   for (const OwnDate& own : c.site.dates) {
@@ -108,31 +111,33 @@ void write_year_extremes(HappeningWriter& w) {
       extremes.longest_day && extremes.shortest_day &&
       (extremes.longest_day->length - extremes.shortest_day->length) > std::chrono::hours(1);
   if (notable) {
-    const std::pair<const std::optional<DayExtreme>*, const char*> of_sun[] = {
-        {&extremes.earliest_sunset, "earliest-sunset"},
-        {&extremes.latest_sunset, "latest-sunset"},
-        {&extremes.earliest_sunrise, "earliest-sunrise"},
-        {&extremes.latest_sunrise, "latest-sunrise"}};
-    for (const auto& [extreme, key] : of_sun)
+    const std::tuple<const std::optional<DayExtreme>*, const char*, bool> of_sun[] = {
+        {&extremes.earliest_sunset, "earliest-sunset", true},
+        {&extremes.latest_sunset, "latest-sunset", true},
+        {&extremes.earliest_sunrise, "earliest-sunrise", false},
+        {&extremes.latest_sunrise, "latest-sunrise", false}};
+    for (const auto& [extreme, key, is_sunset] : of_sun)
       if (*extreme) {
-        HappeningLine* line = w.on_date((*extreme)->date, rank_extreme, w.words(key),
-                                        w.words(std::string(key) + "-brief"));
-        if (line != nullptr) {
-          line->at = (*extreme)->at;
-          line->when = w.time((*extreme)->at);
-        }
+        // A sunset after midnight is still the evening's.
+        const auto at = (*extreme)->at;
+        const std::string text = w.words(key), brief = w.words(std::string(key) + "-brief");
+        HappeningLine* line = is_sunset ? w.by_night(at, rank_extreme, text, brief)
+                                        : w.by_day(at, rank_extreme, text, brief);
+        if (line != nullptr) line->sight = false;
       }
     const std::pair<const std::optional<DayExtreme>*, const char*> of_day[] = {
         {&extremes.longest_day, "longest-day"}, {&extremes.shortest_day, "shortest-day"}};
     for (const auto& [extreme, key] : of_day)
       if (*extreme)
-        w.on_date((*extreme)->date, rank_extreme,
+        w.on_date((*extreme)->date, rank_length,
                   w.words(key, {{"length", c.words.duration((*extreme)->length.count() * 1440)}}),
                   w.words(std::string(key) + "-brief"));
   }
-  for (const DateSpan& s : extremes.no_astronomical_night) write_stretch(w, s, "never-dark");
-  for (const DateSpan& s : extremes.midnight_sun) write_stretch(w, s, "midnight-sun");
-  for (const DateSpan& s : extremes.polar_night) write_stretch(w, s, "polar-night");
+  for (const DateSpan& s : extremes.no_astronomical_night)
+    write_stretch(w, s, rank_white_nights, "never-dark");
+  for (const DateSpan& s : extremes.midnight_sun)
+    write_stretch(w, s, rank_no_night, "midnight-sun");
+  for (const DateSpan& s : extremes.polar_night) write_stretch(w, s, rank_no_night, "polar-night");
 }
 
 }  // namespace duskleaf

@@ -8,7 +8,7 @@
 namespace duskleaf {
 namespace {
 
-constexpr int rank_seen = 0, rank_not_seen = 3, rank_shading = 4;
+constexpr double rank_seen = 0, rank_slight = 2, rank_not_seen = fact_rank, rank_shading = 4;
 
 void write_solar(HappeningWriter& w, const SiteSolarEclipse& e) {
   const Ut from = e.sunrise ? std::max(*e.sunrise, e.partial_begins.at) : e.partial_begins.at;
@@ -28,8 +28,9 @@ void write_solar(HappeningWriter& w, const SiteSolarEclipse& e) {
                                      {"place", w.place(place)}});
   }
   if (w.behind_skyline(place)) text += w.words("behind-skyline");
-  HappeningLine* line = w.by_day(from, rank_seen, text, {});
+  HappeningLine* line = w.by_day(from, worth_a_panel(e) ? rank_seen : rank_slight, text, {});
   if (line == nullptr) return;
+  line->sight = true;
   line->when = w.span(from, to);
   line->caution = w.words("sun-caution");
 }
@@ -43,6 +44,7 @@ void write_transit(HappeningWriter& w, const SiteSunTransit& t) {
               {{"body", w.body(t.planet)}, {"time", w.time(best.at)}, {"place", w.place(place)}}),
       {});
   if (line == nullptr) return;
+  line->sight = true;
   if (w.behind_skyline(place)) line->text += w.words("behind-skyline");
   line->when = w.span(t.begins.at, t.ends.at);
   line->caution = w.words("sun-transit-caution");
@@ -65,9 +67,9 @@ void write_lunar(HappeningWriter& w, const SiteLunarEclipse& e) {
   const bool penumbral = eclipse.kind == LunarEclipseKind::penumbral;
   if (penumbral ? !e.visible : !e.umbra_visible) {
     if (penumbral) return;  // nobody hears of it
-    w.by_night(eclipse.greatest, rank_not_seen,
-               w.words(total ? "lunar-total-not-seen" : "lunar-partial-not-seen"),
-               w.words("lunar-brief"));
+    w.fact(eclipse.greatest, rank_not_seen,
+           w.words(total ? "lunar-total-not-seen" : "lunar-partial-not-seen"),
+           w.words("lunar-not-seen-brief"));
     return;
   }
   const Sighting* best = best_sighting(e);
@@ -94,8 +96,11 @@ void write_lunar(HappeningWriter& w, const SiteLunarEclipse& e) {
   }
   if (e.moonrise && from == *e.moonrise) text += " " + w.words("lunar-moonrise");
   if (e.moonset && to == *e.moonset) text += " " + w.words("lunar-moonset");
-  HappeningLine* line = w.by_night(from, penumbral ? rank_shading : rank_seen, text,
-                                   penumbral ? w.words("lunar-brief") : std::string());
+  HappeningLine* line = w.by_night(from,
+                                   penumbral          ? rank_shading
+                                   : worth_a_panel(e) ? rank_seen
+                                                      : rank_slight,
+                                   text, penumbral ? w.words("lunar-brief") : std::string());
   if (line == nullptr) return;
   line->when = w.span(from, to);
   if (best != nullptr && w.behind_skyline(HappeningWriter::apparent(best->place)))
@@ -105,7 +110,29 @@ void write_lunar(HappeningWriter& w, const SiteLunarEclipse& e) {
 /// Greatest phases of one eclipse at a site and for the Earth's centre are within this.
 bool same_time(Ut a, Ut b) { return std::abs((a - b).count()) < 0.3; }
 
+constexpr double slight = 0.05;
+constexpr Angle high_enough = Angle::from_degrees(5);
+
+bool stands_high(const Sighting& s) {
+  return s.visible && HappeningWriter::apparent(s.place).altitude >= high_enough;
+}
+
 }  // namespace
+
+bool worth_a_panel(const SiteSolarEclipse& e) {
+  if (e.central_begins && e.central_begins->visible) return true;
+  return e.best_obscuration >= slight &&
+         (stands_high(e.partial_begins) || stands_high(e.best) || stands_high(e.partial_ends));
+}
+
+bool worth_a_panel(const SiteLunarEclipse& e) {
+  return e.umbra_visible && e.eclipse.kind != LunarEclipseKind::penumbral &&
+         e.eclipse.umbral_magnitude >= slight &&
+         std::any_of(e.contacts.begin(), e.contacts.end(), [&](const auto& contact) {
+           return contact.moon.at >= *e.eclipse.partial_begins &&
+                  contact.moon.at <= *e.eclipse.partial_ends && stands_high(contact.moon);
+         });
+}
 
 void write_eclipses(HappeningWriter& w) {
   const BlockContext& c = w.context();

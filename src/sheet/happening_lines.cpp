@@ -8,7 +8,9 @@
 #include "almanac/skyline.hpp"
 #include "catalogue/constellations.hpp"
 #include "catalogue/stars.hpp"
+#include "order/order.hpp"
 #include "sheet/happening_writer.hpp"
+#include "sky/planet_magnitude.hpp"
 
 namespace duskleaf {
 
@@ -68,7 +70,7 @@ std::string HappeningWriter::place(const Horizontal& h) const {
   const double altitude = std::max(h.altitude.degrees(), 0.0);
   if (altitude >= 80) return words("overhead");
   return words("place", {{"altitude", c_.words.number(altitude, 0)},
-                         {"direction", c_.words.direction(h.azimuth)}});
+                         {"direction", c_.words.direction_short(h.azimuth)}});
 }
 
 std::string HappeningWriter::target(const Target& target) const {
@@ -90,23 +92,48 @@ Horizontal HappeningWriter::apparent(const Horizontal& h) {
   return {h.altitude + refraction(h.altitude), h.azimuth};
 }
 
-HappeningLine* HappeningWriter::by_night(Ut at, int rank, std::string text, std::string brief) {
+PlanetSight HappeningWriter::planet_sight(Body planet, Date evening) const {
+  const Night* of = night(evening);
+  if (of == nullptr) return PlanetSight::not_visible;
+  auto& samples = planet_nights_[evening];
+  if (!samples) samples = std::make_unique<const PlanetNight>(sky_, c_.year, *of);
+  const double magnitude =
+      planet_magnitude(planet, planet_aspect(c_.ephemeris, planet, to_tt(of->darkest)));
+  const bool optics = planet == Body::uranus || planet == Body::neptune;
+  return see_planet(sky_, *samples, planet, magnitude, optics).sight;
+}
+
+HappeningLine* HappeningWriter::by_night(Ut at, double rank, std::string text, std::string brief) {
   const Date evening = evening_of(at), date = civil_date(at);
   if (!in_month(evening)) return nullptr;
   HappeningLine line{evening, std::nullopt,     at,  time(at), std::move(text),
                      {},      std::move(brief), rank};
   if (date != evening) line.after_midnight = date;
+  line.sight = true;
   return &lines_.emplace_back(std::move(line));
 }
 
-HappeningLine* HappeningWriter::by_day(Ut at, int rank, std::string text, std::string brief) {
+bool HappeningWriter::before_sunrise(Ut at) const {
+  return c_.year.place.zone.civil(at).hour() < 12 &&
+         sky_.altitude(Body::sun, at) < sun_rise_altitude;
+}
+
+HappeningLine* HappeningWriter::fact(Ut at, double rank, std::string text, std::string brief) {
+  HappeningLine* line = before_sunrise(at) ? by_night(at, rank, std::move(text), std::move(brief))
+                                           : by_day(at, rank, std::move(text), std::move(brief));
+  if (line != nullptr) line->sight = false;
+  return line;
+}
+
+HappeningLine* HappeningWriter::by_day(Ut at, double rank, std::string text, std::string brief) {
   const Date date = civil_date(at);
   if (!in_month(date)) return nullptr;
   return &lines_.emplace_back(
       HappeningLine{date, std::nullopt, at, time(at), std::move(text), {}, std::move(brief), rank});
 }
 
-HappeningLine* HappeningWriter::on_date(Date date, int rank, std::string text, std::string brief) {
+HappeningLine* HappeningWriter::on_date(Date date, double rank, std::string text,
+                                        std::string brief) {
   if (!in_month(date)) return nullptr;
   return &lines_.emplace_back(HappeningLine{date,
                                             std::nullopt,
@@ -124,6 +151,27 @@ void sort_by_date(std::vector<HappeningLine>& lines) {
     return a.date != b.date ? a.date < b.date : a.at < b.at;
   });
 }
+
+/// The best sight of the month, and a second one that is as rare as an eclipse or a great shower.
+void mark_best(std::vector<HappeningLine>& lines) {
+  constexpr double worth_it = 3, rare = 1;
+  std::vector<HappeningLine*> sights;
+  for (HappeningLine& line : lines)
+    if (line.sight && line.rank < worth_it) sights.push_back(&line);
+  std::stable_sort(sights.begin(), sights.end(),
+                   [](const auto* a, const auto* b) { return a->rank < b->rank; });
+  for (std::size_t i = 0; i < std::min<std::size_t>(sights.size(), 2); ++i)
+    sights[i]->best = i == 0 || sights[i]->rank < rare;
+}
+
+/// What falls on a night on which the group meets comes before its like.
+void prefer_own_nights(const BlockContext& c, std::vector<HappeningLine>& lines) {
+  for (const Session& session : c.site.sessions)
+    for (const Date date : session_dates(session, c.year.span))
+      for (HappeningLine& line : lines)
+        if (line.sight && line.date == date && line.rank < fact_rank - 1) line.rank *= 0.25;
+}
+
 }  // namespace
 
 std::vector<HappeningLine> happening_lines(const BlockContext& c) {
@@ -136,22 +184,26 @@ std::vector<HappeningLine> happening_lines(const BlockContext& c) {
   write_meetings(writer);
   std::vector<HappeningLine> lines = writer.take();
   sort_by_date(lines);
+  mark_best(lines);
+  prefer_own_nights(c, lines);
   return lines;
 }
 
 HappeningChoice choose_lines(std::vector<HappeningLine> lines, std::size_t most) {
   HappeningChoice choice;
+  const auto is_fact = [](const HappeningLine& l) {
+    return l.rank >= fact_rank && !l.brief.empty() && !l.own;
+  };
+  const auto facts = static_cast<std::size_t>(std::count_if(lines.begin(), lines.end(), is_fact));
   // The closing line takes a line itself: a single one is told rather than counted.
-  if (lines.size() <= most + 1) {
-    choice.shown = std::move(lines);
-    return choice;
-  }
+  if (facts == 0 && lines.size() <= most + 1) most = lines.size();
   std::stable_sort(lines.begin(), lines.end(), [](const HappeningLine& a, const HappeningLine& b) {
     if (a.own != b.own) return a.own;
     return a.rank < b.rank;
   });
   for (HappeningLine& line : lines) {
-    const bool stays = line.own || line.brief.empty() || choice.shown.size() < most;
+    const bool stays =
+        line.own || line.brief.empty() || (choice.shown.size() < most && !is_fact(line));
     (stays ? choice.shown : choice.left_out).push_back(std::move(line));
   }
   sort_by_date(choice.shown);

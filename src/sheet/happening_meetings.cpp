@@ -8,7 +8,8 @@
 namespace duskleaf {
 namespace {
 
-constexpr int rank_covered_bright = 1, rank_covered = 3;
+constexpr double rank_covered_bright = 0.8, rank_covered = 2.6, rank_covered_faint = 3.4;
+constexpr Angle least_height_of_faint = Angle::from_degrees(10);
 
 const Target& target_of(int index) { return targets()[static_cast<std::size_t>(index)]; }
 bool is_moon(const Target& t) { return t.sort == Target::Sort::body && t.body == Body::moon; }
@@ -64,8 +65,10 @@ Told write_occultations(HappeningWriter& w) {
     // Mountains of the Moon decide within a hundredth of its radius (some 17 km).
     if (o.least_distance > 0.99 * o.moon_radius) text += " " + w.words("grazes");
     const bool bright = (is_planet(t) && !is_faint_planet(t)) || is_bright_star(t);
-    w.by_night(first.at, bright ? rank_covered_bright : rank_covered, text,
-               w.words("covers-brief", {{"name", name}}));
+    const double rank = bright                              ? rank_covered_bright
+                        : is_planet(t) || t.magnitude < 2.6 ? rank_covered
+                                                            : rank_covered_faint;
+    w.by_night(first.at, rank, text, w.words("covers-brief", {{"name", name}}));
     told.emplace_back(o.target, first.at);
   }
   return told;
@@ -73,22 +76,45 @@ Told write_occultations(HappeningWriter& w) {
 
 // ---- meetings
 
-int rank_of(const Meeting& m) {
+/// How many go out for it: common practice of those who invite people to look.
+double rank_of(const Meeting& m) {
   const Target &a = target_of(m.closest.a), &b = target_of(m.closest.b);
   const double apart = m.separation.degrees();
-  int rank = 4;
+  const auto by_distance = [&](double near, double middle, double far) {
+    return apart < 1.5 ? near : apart < 3.5 ? middle : far;
+  };
+  double rank = 4;
   if (is_planet(a) && is_planet(b))
-    rank = apart < 1 ? 1 : apart < 3 ? 2 : 3;
+    rank = apart < 1 ? 0.5 : by_distance(1.0, 2.0, 3.0);
   else if (is_moon(a) && is_planet(b))
-    rank = (b.body == Body::mercury ? 3 : 2) + (apart > 4 ? 1 : 0);
+    rank = by_distance(1.0, 1.7, 2.3) + (b.body == Body::mercury ? 0.5 : 0.0);
+  else if (is_moon(a) && b.sort == Target::Sort::cluster)
+    rank = by_distance(2.0, 2.7, 3.4);
   else if (is_moon(a))
-    rank = is_bright_star(b) && apart < 3 ? 3 : 4;
+    rank = is_bright_star(b) ? by_distance(2.0, 2.8, 3.5) : 4.2;
   else if (is_planet(a))
-    rank = apart < 2 ? 3 : 4;
-  if (apart > 6) ++rank;
-  if (!m.bare_eye) rank += 2;
-  if (!m.look->above_skyline) ++rank;
-  return std::min(rank, 5);
+    rank = by_distance(b.sort == Target::Sort::cluster ? 1.5 : 2.2, 2.9, 3.7);
+  rank += 0.01 * apart;
+  if (!m.bare_eye) rank += 1.5;
+  // Nobody goes out for what the hills hide.
+  if (!m.look->above_skyline) rank += 2;
+  return std::min(rank, fact_rank - 0.1);
+}
+
+// Wider pairs are no sight (about a binocular's field, common practice).
+constexpr Angle widest = Angle::from_degrees(6.0);
+
+/// As the planets' own block has it; and of those that need optics at the moment itself.
+bool shows_planets(const HappeningWriter& w, const Meeting& m) {
+  for (const int index : {m.closest.a, m.closest.b}) {
+    const Target& t = target_of(index);
+    if (!is_planet(t)) continue;
+    if (w.planet_sight(t.body, w.evening_of(m.look->at)) == PlanetSight::not_visible) return false;
+    if (is_faint_planet(t) && (w.sky().altitude(Body::sun, m.look->at) > nautical_altitude ||
+                               m.look->place.altitude < least_height_of_faint - m.separation))
+      return false;
+  }
+  return true;
 }
 
 /// What a meeting's line says after its time, and the rest that goes by its first one.
@@ -133,7 +159,9 @@ void write_group(HappeningWriter& w, Group group) {
   const bool optics = std::none_of(group.meetings.begin(), group.meetings.end(),
                                    [](const Meeting* m) { return m->bare_eye; });
   if (optics) text += " " + w.words("with-optics");
-  HappeningLine* line = w.by_night(first.look->at, rank_of(first), text,
+  // Several at once are rarer than the nearest of them.
+  const double rank = rank_of(first) - (group.meetings.size() > 1 ? 0.3 : 0.0);
+  HappeningLine* line = w.by_night(first.look->at, rank, text,
                                    w.words("meeting-brief", {{"a", a}, {"b", brief_names}}));
   if (line != nullptr && !first.look->above_skyline) line->text += w.words("behind-skyline");
 }
@@ -151,7 +179,7 @@ void write_meetings(HappeningWriter& w) {
   const Told told = write_occultations(w);
   std::vector<Group> groups;
   for (const Meeting& m : w.context().happenings.meetings) {
-    if (!m.look || !w.in_month(w.evening_of(m.look->at))) continue;
+    if (!m.look || m.separation > widest || !w.in_month(w.evening_of(m.look->at))) continue;
     const Target &a = target_of(m.closest.a), &b = target_of(m.closest.b);
     // The Moon drowns what needs optics, and two that need them are no sight for beginners.
     if (!m.bare_eye && (is_moon(a) || is_faint_planet(a) || b.sort != Target::Sort::body)) continue;
@@ -159,6 +187,7 @@ void write_meetings(HappeningWriter& w) {
           return t.first == m.closest.b && std::abs((t.second - m.look->at).count()) < 1.0;
         }))
       continue;
+    if (!shows_planets(w, m)) continue;
     const auto fits = std::find_if(groups.begin(), groups.end(), [&](const Group& g) {
       return belong_together(*g.meetings.front(), m);
     });

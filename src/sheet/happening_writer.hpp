@@ -1,11 +1,14 @@
 #pragma once
 
 #include <initializer_list>
+#include <map>
+#include <memory>
 #include <string>
 #include <string_view>
 #include <utility>
 #include <vector>
 
+#include "almanac/planet_nights.hpp"
 #include "events/site_sky.hpp"
 #include "events/targets.hpp"
 #include "sheet/happening_lines.hpp"
@@ -35,26 +38,39 @@ class HappeningWriter {
   std::string time(Ut) const;
   std::string span(Ut from, Ut to) const;             // 01:00–04:00
   std::string minutes_seconds(Ut from, Ut to) const;  // 1 min 44 s
-  std::string place(const Horizontal&) const;         // "34° up in the south-west"
+  std::string place(const Horizontal&) const;         // "34° up in the SW"
   std::string percent(double fraction) const;         // "87 %"; never rounded up to 100
   std::string body(Body) const;                       // "Jupiter"
   std::string target(const Target&) const;            // "Jupiter", "the Pleiades", "δ Scorpii"
   bool behind_skyline(const Horizontal& apparent) const;
+  /// Where a night shows a planet, by the rule of the planets' own block: by the bare eye, Uranus
+  /// and Neptune by binoculars.
+  PlanetSight planet_sight(Body, Date evening) const;
   /// A topocentric place without refraction as it appears.
   static Horizontal apparent(const Horizontal&);
 
-  /// Adds a line where it falls in the month: seen in a night at `at`, or at its civil date and
-  /// time. nullptr where it is another month's.
-  HappeningLine* by_night(Ut at, int rank, std::string text, std::string brief);
-  HappeningLine* by_day(Ut at, int rank, std::string text, std::string brief);
-  HappeningLine* on_date(Date, int rank, std::string text, std::string brief);
+  /// Adds a line where it falls in the month: something to go out for in a night, at `at`; by its
+  /// civil date and time; a fact, by its night where the Sun has not risen, else by its civil date;
+  /// on a date without a time. nullptr where it is another month's.
+  HappeningLine* by_night(Ut at, double rank, std::string text, std::string brief);
+  HappeningLine* by_day(Ut at, double rank, std::string text, std::string brief);
+  HappeningLine* fact(Ut at, double rank, std::string text, std::string brief);
+  HappeningLine* on_date(Date, double rank, std::string text, std::string brief);
+  /// Whether a moment counts to the night of the evening before: before noon and before sunrise.
+  bool before_sunrise(Ut) const;
 
  private:
   const BlockContext& c_;
   Date first_, end_;
   SiteSky sky_;
   std::vector<HappeningLine> lines_;
+  mutable std::map<Date, std::unique_ptr<const PlanetNight>> planet_nights_;
 };
+
+/// Whether an eclipse is told in a panel besides its line: not where it covers less than a
+/// twentieth or is never 5 degrees up; a total or annular one always.
+bool worth_a_panel(const SiteSolarEclipse&);
+bool worth_a_panel(const SiteLunarEclipse&);
 
 void write_calendar(HappeningWriter&);        // seasons, apsides, clock changes, the order's dates
 void write_year_extremes(HappeningWriter&);   // the Sun's year at the site

@@ -73,17 +73,13 @@ Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   if (e.sunrise) p.rows.push_back(edge(w, "sunrise", Body::sun, *e.sunrise));
   if (e.sunset) p.rows.push_back(edge(w, "sunset", Body::sun, *e.sunset));
   sort_rows(p.rows);
-  const auto number = [&](double value) { return c.words.number(value, 2); };
   if (central && e.central_begins->visible && e.central_ends->visible)
     p.text = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
-                     {{"duration", w.minutes_seconds(e.central_begins->at, e.central_ends->at)},
-                      {"magnitude", number(e.best_magnitude)}});
+                     {{"duration", w.minutes_seconds(e.central_begins->at, e.central_ends->at)}});
   else
-    p.text = c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)},
-                                            {"magnitude", number(e.best_magnitude)}});
+    p.text = c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)}});
   if (!e.greatest.visible)
-    p.text += " " + c.words("eclipse.solar-cut", {{"percent", w.percent(e.obscuration)},
-                                                  {"magnitude", number(e.magnitude)}});
+    p.text += " " + c.words("eclipse.solar-cut", {{"percent", w.percent(e.obscuration)}});
   p.caution = c.words("eclipse.sun-caution");
   if (kind == "total") p.caution += " " + c.words("eclipse.totality-caution");
   p.drawn = w.time(e.best.at);
@@ -126,12 +122,10 @@ Panel lunar_panel(const HappeningWriter& w, const SiteLunarEclipse& e) {
     p.text =
         c.words("eclipse.lunar-total-size",
                 {{"duration", c.words.duration(std::round(
-                                  (*eclipse.total_ends - *eclipse.total_begins).count() * 1440))},
-                 {"magnitude", c.words.number(eclipse.umbral_magnitude, 2)}});
+                                  (*eclipse.total_ends - *eclipse.total_begins).count() * 1440))}});
   else
-    p.text = c.words("eclipse.lunar-partial-size",
-                     {{"percent", w.percent(eclipse.umbral_magnitude)},
-                      {"magnitude", c.words.number(eclipse.umbral_magnitude, 2)}});
+    p.text =
+        c.words("eclipse.lunar-partial-size", {{"percent", w.percent(eclipse.umbral_magnitude)}});
   p.text += " " + c.words("eclipse.lunar-safe");
   p.drawn = w.time(e.drawn_at);
   return p;
@@ -211,7 +205,7 @@ double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing,
   runs.push_back({drawn, set.body()});
   double bottom = table.y;
   if (wide) {
-    const double text_x = std::max(table.x + 6, x + 0.5 * width);
+    const double text_x = table.x + 6;
     bottom = std::max(bottom, y + flow(set, text_x, y, x + width - text_x, runs, 1.22));
   } else {
     bottom += 0.4 + flow(set, table_x, bottom + 0.4, x + width - table_x, runs, 1.2);
@@ -226,7 +220,7 @@ double draw_eclipses(const BlockContext& c, const BlockOptions&, const Box& area
   const HappeningWriter w(c);
   std::vector<std::pair<Panel, Draw>> panels;
   for (const SiteSolarEclipse& e : c.happenings.solar_eclipses)
-    if (w.in_month(w.civil_date(e.best.at)))
+    if (worth_a_panel(e) && w.in_month(w.civil_date(e.best.at)))
       panels.emplace_back(solar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
         draw_solar_phase(e, box, c.theme, marks);
       });
@@ -236,8 +230,7 @@ double draw_eclipses(const BlockContext& c, const BlockOptions&, const Box& area
         draw_sun_transit(w.sky(), t, box, c.theme, marks);
       });
   for (const SiteLunarEclipse& e : c.happenings.lunar_eclipses)
-    if (e.umbra_visible && e.eclipse.kind != LunarEclipseKind::penumbral &&
-        w.in_month(w.evening_of(e.eclipse.greatest)))
+    if (worth_a_panel(e) && w.in_month(w.evening_of(e.eclipse.greatest)))
       panels.emplace_back(lunar_panel(w, e), [&](const Box& box, std::vector<Mark>& marks) {
         draw_lunar_phase(e, box, c.theme, marks);
       });

@@ -9,7 +9,7 @@ namespace duskleaf {
 namespace {
 
 // Named in the closing line; the others are counted alone.
-constexpr std::size_t most_named = 4;
+constexpr std::size_t most_named = 5;
 
 std::size_t number_option(const BlockOptions& options, std::string_view name) {
   const std::string& text = options.get(name);
@@ -36,6 +36,32 @@ std::string closing_line(const BlockContext& c, std::vector<HappeningLine> left_
                  {{"n", std::to_string(count)}, {"list", list}});
 }
 
+/// A five-pointed star; the points of its inner corners by the pentagram's own proportion.
+Path star(Point centre, double radius) {
+  std::vector<Point> points;
+  for (int i = 0; i < 10; ++i) {
+    const Angle turn = Angle::from_degrees(36.0 * i);
+    const double r = i % 2 == 0 ? radius : radius * 0.382;
+    points.push_back({centre.x + r * sin(turn), centre.y - r * cos(turn)});
+  }
+  return Path::polyline(points, true);
+}
+
+/// What the lines above take for granted.
+std::string help(const BlockContext& c, const std::vector<HappeningLine>& shown) {
+  std::string text;
+  const auto add = [&](bool wanted, std::string_view key) {
+    if (wanted) text += (text.empty() ? "" : " ") + c.words(key);
+  };
+  add(std::any_of(shown.begin(), shown.end(), [](const auto& l) { return l.best; }),
+      "happening.starred");
+  add(std::any_of(shown.begin(), shown.end(), [](const auto& l) { return l.meteors; }),
+      "happening.meteors");
+  add(std::any_of(shown.begin(), shown.end(), [](const auto& l) { return l.sight; }),
+      "happening.fist");
+  return text;
+}
+
 }  // namespace
 
 double draw_happenings(const BlockContext& c, const BlockOptions& options, const Box& area,
@@ -51,7 +77,7 @@ double draw_happenings(const BlockContext& c, const BlockOptions& options, const
   Style body = set.table();  // the narrow face: the list is long
   body.size_pt = c.theme.body_pt;
   const Style day = body;
-  const double day_right = area.x + 14.6, text_x = area.x + 16.4;
+  const double day_right = area.x + 14.6, text_x = area.x + 17.8;
   std::optional<HappeningLine> before;
   for (const HappeningLine& line : choice.shown) {
     const double baseline = y + body.size_pt * mm_per_pt * 0.95;
@@ -68,15 +94,21 @@ double draw_happenings(const BlockContext& c, const BlockOptions& options, const
                 set.strong(day));
     }
     before = line;
+    if (line.best)
+      out.emplace_back(Fill{star({day_right + 1.7, baseline - 0.95}, 1.2), c.theme.black});
     std::vector<Run> runs;
     if (!line.when.empty()) runs.push_back({line.when, set.strong(body)});
     runs.push_back({line.text, body});
     if (!line.caution.empty()) runs.push_back({line.caution, set.strong(body)});
     y += flow(set, text_x, y, area.right() - text_x, runs, 1.22) + 0.35;
   }
+  Style small = set.table();
+  small.ink = c.theme.soft;
   if (!choice.left_out.empty())
-    y += set.paragraph(text_x, y, area.right() - text_x, closing_line(c, choice.left_out),
-                       set.small(), 1.22);
+    y += set.paragraph(text_x, y, area.right() - text_x, closing_line(c, choice.left_out), small,
+                       1.22);
+  if (const std::string text = help(c, choice.shown); !text.empty())
+    y += set.paragraph(text_x, y, area.right() - text_x, text, small, 1.22);
   return y - area.y + 0.8;
 }
 
