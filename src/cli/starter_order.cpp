@@ -36,7 +36,7 @@ clock: 24                   # or 12
 
 publications:
   - template: monthly-handout
-    paper: A4               # A3, A5, letter ...
+    paper: A4               # or letter
     months: all             # or [3, 4, 5]
     ink: colour             # or grey
 

@@ -41,20 +41,28 @@ void doubt_place(const Site& site, const Span& span, std::vector<Doubt>& out) {
 }
 
 /// "9:30" for half past nine in the evening is a slip of those who read twelve hours.
-void doubt_chart_hours(const Site& site, std::vector<Doubt>& out) {
-  using std::chrono::hours;
-  const auto& all = site.place.chart_hours;
-  const auto by_day = std::find_if(all.begin(), all.end(), [](const ChartHour& hour) {
-    return hour.after_midnight && *hour.after_midnight >= hours(5) &&
-           *hour.after_midnight < hours(14);
-  });
-  if (by_day == all.end()) return;
-  const auto minutes = by_day->after_midnight->count();
-  std::string text = fmt::format("{}: chart_hour {:02}:{:02} is by day", site.place.id,
-                                 minutes / 60, minutes % 60);
-  if (*by_day->after_midnight < std::chrono::hours(12))
+bool by_day(std::chrono::minutes clock) {
+  return clock >= std::chrono::hours(5) && clock < std::chrono::hours(14);
+}
+std::string by_day_text(const std::string& whose, std::chrono::minutes clock) {
+  const auto minutes = clock.count();
+  std::string text = fmt::format("{} {:02}:{:02} is by day", whose, minutes / 60, minutes % 60);
+  if (clock < std::chrono::hours(12))
     text += fmt::format("; is {:02}:{:02} meant?", minutes / 60 + 12, minutes % 60);
-  out.push_back({site.where, text});
+  return text;
+}
+
+void doubt_hours(const Site& site, std::vector<Doubt>& out) {
+  const auto& all = site.place.chart_hours;
+  const auto hour = std::find_if(all.begin(), all.end(), [](const ChartHour& h) {
+    return h.after_midnight && by_day(*h.after_midnight);
+  });
+  if (hour != all.end())
+    out.push_back({site.where, by_day_text(site.place.id + ": chart_hour", *hour->after_midnight)});
+  for (const Session& session : site.sessions)
+    if (session.from && by_day(*session.from))
+      out.push_back(
+          {session.location, by_day_text(site.place.id + ": a session from", *session.from)});
 }
 
 void doubt_dates(const Site& site, const Span& span, std::vector<Doubt>& out) {
@@ -77,13 +85,9 @@ void doubt_dates(const Site& site, const Span& span, std::vector<Doubt>& out) {
 
 std::vector<Doubt> doubts(const Order& order) {
   std::vector<Doubt> list = order.noticed;
-  const auto walled = std::find_if(order.sites.begin(), order.sites.end(),
-                                   [](const Site& s) { return !s.place.skyline.empty(); });
-  if (walled != order.sites.end())
-    list.push_back({walled->where, walled->place.id + ": the skyline is not printed yet", true});
   for (const Site& site : order.sites) {
     doubt_place(site, order.span, list);
-    doubt_chart_hours(site, list);
+    doubt_hours(site, list);
     doubt_dates(site, order.span, list);
   }
   return list;

@@ -33,11 +33,27 @@ fs::path part_beside(const fs::path& path) {
   return path.parent_path() / fmt::format(".{}.{}.part", path.filename().string(), ::getpid());
 }
 
+/// Where a symbolic link leads (also to a file that is not there yet); other paths as they are.
+fs::path target_of(const fs::path& path) {
+  std::error_code error;
+  if (!fs::is_symlink(path, error)) return path;
+  const fs::path target = fs::weakly_canonical(path.parent_path() / fs::read_symlink(path, error));
+  return error ? path : target;
+}
+
+bool is_device_or_pipe(const fs::path& path) {
+  std::error_code error;
+  const fs::file_type type = fs::status(path, error).type();
+  return type == fs::file_type::character || type == fs::file_type::block ||
+         type == fs::file_type::fifo || type == fs::file_type::socket;
+}
+
 }  // namespace
 
-WholeFile::WholeFile(fs::path path) : path_(std::move(path)), part_(part_beside(path_)) {
+WholeFile::WholeFile(fs::path path) : path_(target_of(path)) {
   make_folders(path_.parent_path());
-  stream_.open(part_, std::ios::binary | std::ios::trunc);
+  if (!is_device_or_pipe(path_)) part_ = part_beside(path_);
+  stream_.open(part_.empty() ? path_ : part_, std::ios::binary | std::ios::trunc);
   if (!stream_) refuse(path_, std::strerror(errno));
 }
 
@@ -50,6 +66,7 @@ void WholeFile::finish() {
   errno = 0;
   stream_.close();
   if (!stream_) refuse(path_, errno != 0 ? std::strerror(errno) : "the disk may be full");
+  if (part_.empty()) return;
   std::error_code error;
   fs::rename(part_, path_, error);
   if (error) refuse(path_, error.message());

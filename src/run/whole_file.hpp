@@ -7,7 +7,8 @@
 namespace duskleaf {
 
 /// A file that appears whole or not at all: written beside its place, then renamed over it. What
-/// was begun and not finished is removed.
+/// was begun and not finished is removed. A symbolic link stays and its target is written; into a
+/// device or a pipe the bytes go straight.
 class WholeFile {
  public:
   /// Folders on the way are made. Throws FileError.

@@ -162,7 +162,6 @@ TEST(Proof, NamesWhatIsNotPrintedYet) {
           HasSubstr("o.yaml:2:1: warning: the language 'fr' is not printed yet by this version\n"),
           HasSubstr(
               "o.yaml:3:16: warning: the template dark-year is not printed yet by this version\n"),
-          HasSubstr("o.yaml:4:15: warning: a: the skyline is not printed yet\n"),
           HasSubstr("o.yaml:4:15: warning: a: latitude 0, longitude 0 is in the sea; ")));
 }
 

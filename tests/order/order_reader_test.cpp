@@ -12,6 +12,7 @@ namespace {
 
 using std::chrono::minutes;
 using testing::ElementsAre;
+using testing::IsEmpty;
 
 TEST(OrderReader, SmallestOrderHasItsDefaults) {
   const Order order = parse_order(OrderText().text(), "folder/o.yaml");
@@ -184,8 +185,10 @@ TEST(Doubts, NameWhatLooksWrong) {
   EXPECT_THAT(texts(with_site_lines("    chart_hour: [dusk, 20:00, 20:00, 21:00, 22:00, 23:00, "
                                     "4:59, 12:05, 14:00, 20:00, 19:00, 18:00]\n")),
               ElementsAre("5: reed-lake: chart_hour 12:05 is by day"));
-  EXPECT_THAT(texts(with_site_lines("    skyline: [[0, 3]]\n")),
-              ElementsAre("5: reed-lake: the skyline is not printed yet"));
+  EXPECT_THAT(texts(with_site_lines("    skyline: [[0, 3]]\n")), IsEmpty());
+  EXPECT_THAT(texts(with_site_lines("    sessions: [{ when: every friday, from: \"9:00\", to: "
+                                    "\"11:00\" }]\n")),
+              ElementsAre("10: reed-lake: a session from 09:00 is by day; is 21:00 meant?"));
   EXPECT_THAT(texts(with_publications("  - { template: monthly-handout, binding: edge }\n")),
               ElementsAre("3: binding is not printed yet: the margins are the usual ones"));
   EXPECT_THAT(

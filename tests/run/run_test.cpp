@@ -1,8 +1,11 @@
 // The run's parts: whole files, workers, the report. Expectations follow from their own
 // descriptions.
 #include <atomic>
+#include <fcntl.h>
 #include <gmock/gmock.h>
 #include <gtest/gtest.h>
+#include <sys/stat.h>
+#include <unistd.h>
 
 #include "order/order.hpp"
 #include "order/scratch_folder.hpp"
@@ -50,6 +53,37 @@ TEST(WholeFile, LeavesNothingWhenItCannotTakeItsPlace) {
   folder.write("t.txt/inside", "");  // a folder of that name, not empty
   EXPECT_THROW(write_whole(folder.path() / "t.txt", "bytes"), FileError);
   EXPECT_THAT(names_in(folder), testing::ElementsAre("t.txt"));
+}
+
+TEST(WholeFile, WritesThroughALink) {
+  const ScratchFolder folder;
+  folder.write("real.txt", "before");
+  std::filesystem::create_symlink("real.txt", folder.path() / "link.txt");
+  std::filesystem::create_symlink("new.txt", folder.path() / "dangling.txt");
+  write_whole(folder.path() / "link.txt", "after");
+  write_whole(folder.path() / "dangling.txt", "made");
+  EXPECT_TRUE(std::filesystem::is_symlink(folder.path() / "link.txt"));
+  EXPECT_TRUE(std::filesystem::is_symlink(folder.path() / "dangling.txt"));
+  std::string now;
+  std::getline(std::ifstream(folder.path() / "real.txt"), now);
+  EXPECT_EQ(now, "after");
+  std::getline(std::ifstream(folder.path() / "new.txt"), now);
+  EXPECT_EQ(now, "made");
+}
+
+// It once put a plain file in the place of a device or a pipe.
+TEST(WholeFile, WritesIntoAPipe) {
+  const ScratchFolder folder;
+  const std::string pipe = (folder.path() / "pipe").string();
+  ASSERT_EQ(::mkfifo(pipe.c_str(), 0600), 0);
+  const int reader = ::open(pipe.c_str(), O_RDONLY | O_NONBLOCK);
+  ASSERT_GE(reader, 0);
+  write_whole(pipe, "bytes");
+  char got[8] = {};
+  EXPECT_EQ(::read(reader, got, sizeof got - 1), 5);
+  ::close(reader);
+  EXPECT_STREQ(got, "bytes");
+  EXPECT_TRUE(std::filesystem::is_fifo(pipe));
 }
 
 TEST(WritableFolder, IsMadeAndLeftEmpty) {
