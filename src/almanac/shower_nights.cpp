@@ -10,16 +10,25 @@
 // The night is that of the peak or the next nearest, whichever gives more; "night" is when the Sun
 // is below -6 degrees. Its best moment is sought to five minutes.
 //
+// The best hours are those with half of the best moment's rate or more. Where the Moon is down at
+// that moment but up in some of them, they end or begin with its rise or set, so long as 45 minutes
+// are left whose mean rate is no less than that of the hours given up; else they stay, and the row
+// says that the Moon is up.
+//
 // Verdict, this project's own: the worst of four grades. good / fair asks for
-//   meteors an hour at best                       10 / 3   (not where the ZHR varies)
+//   meteors an hour at best                       10 / 3
 //   part of them that the Moon leaves           0.8 / 0.6  (best hours with and without it)
 //   part that twilight leaves of the rest       0.8 / 0.6  (the same)
 //   radiant's greatest altitude                   30 / 15 degrees
-// and less is poor; not seen where the radiant is not up by night, or there is no night. What
-// spoils it: too few meteors where their number decides and this sky would not give the next better
-// grade with the radiant overhead at the peak, without Moon or twilight; else, of what Moon,
-// twilight, the altitude (its sine) and the hour's distance from the peak leave, the least (where
-// their number does not decide, the least of those that do).
+// and less is poor; not seen where the radiant is not up by night, or there is no night. A shower
+// without a steady rate is poor, since there are too few: in nearly every year it gives a meteor an
+// hour or none (International Meteor Organization, 2025 Meteor Shower Calendar: it lists their ZHR
+// as variable), and an outburst cannot be promised.
+// What spoils it: too few meteors where their number decides and this sky would not give the next
+// better grade with the radiant overhead at the peak, without Moon or twilight; else what leaves
+// least, of Moon, twilight, the altitude (its sine) and the hour's distance from the peak: of those
+// whose own grade is the verdict, or, where the number decides, of those whose own grade is not
+// good if there are any, so that a radiant 30 degrees high takes no blame from the Moon.
 #include "almanac/shower_nights.hpp"
 
 #include <algorithm>
@@ -29,6 +38,7 @@
 
 #include "almanac/nights.hpp"
 #include "almanac/planets.hpp"
+#include "events/search.hpp"
 #include "sky/brightness.hpp"
 #include "sky/planet_magnitude.hpp"
 
@@ -37,7 +47,8 @@ namespace {
 
 constexpr double sun_degrees_a_day = 360.0 / 365.2422;
 constexpr double dark_limit = 6.5;
-constexpr Days half_hour(30.0 / 1440), two_minutes(2.0 / 1440), one_second(1.0 / 86400);
+constexpr Days least_window(45.0 / 1440), half_hour(30.0 / 1440), two_minutes(2.0 / 1440),
+    one_second(1.0 / 86400);
 // Shorter steps about the best of the coarse ones.
 constexpr Days finer[] = {Days(15.0 / 1440), Days(5.0 / 1440), Days(5.0 / 1440)};
 
@@ -108,6 +119,19 @@ class ShowerNight {
       (rate(middle, Sky::actual) >= 0.5 * best.value ? inside : outside) = middle;
     }
     return inside;
+  }
+
+  /// Whether the mean rate in [from, to] is no less than in the rest of [all_from, all_to].
+  bool no_less_within(Ut from, Ut to, Ut all_from, Ut all_to) const {
+    constexpr int samples = 24;
+    double sum[2] = {}, count[2] = {};
+    for (int i = 0; i < samples; ++i) {
+      const Ut t = all_from + (all_to - all_from) * ((i + 0.5) / samples);
+      const bool within = from <= t && t <= to;
+      sum[within] += rate(t, Sky::actual);
+      count[within] += 1.0;
+    }
+    return count[0] == 0.0 || sum[1] * count[0] >= sum[0] * count[1];
   }
 
   bool has_night() const { return has_night_; }
@@ -196,6 +220,31 @@ Date next_date(const Zone& zone, Date date, int direction) {
   return date;
 }
 
+/// Fits the best hours to the Moon: header.
+void fit_to_moon(const SiteSky& sky, const ShowerNight& night, SiteShower& row) {
+  const auto excess = [&](Ut t) { return SiteSky::moon_excess(sky.sight(Body::moon, t)); };
+  const std::vector<Crossing> crossings =
+      find_crossings(excess, *row.best_from, *row.best_to, {half_hour, Seconds(1.0)});
+  if (crossings.empty()) return;
+  if (!row.moon_up) {
+    Ut from = *row.best_from, to = *row.best_to;
+    for (const Crossing& c : crossings) {
+      if (c.at <= *row.best) from = c.at;
+      if (c.at > *row.best) to = std::min(to, c.at);
+    }
+    if (to - from >= least_window && night.no_less_within(from, to, *row.best_from, *row.best_to)) {
+      row.best_from = from;
+      row.best_to = to;
+      return;
+    }
+  }
+  row.moon_up = true;
+  for (const Crossing& c : crossings) {
+    std::optional<Ut>& first = c.rising ? row.moon_rises : row.moon_sets;
+    if (!first) first = c.at;
+  }
+}
+
 SiteShower judge(const SiteSky& sky, double limit, const ShowerPeak& peak, Date date,
                  const ShowerNight& night, const ShowerNight::Greatest& best) {
   using Sky = ShowerNight::Sky;
@@ -219,7 +268,13 @@ SiteShower judge(const SiteSky& sky, double limit, const ShowerPeak& peak, Date 
   row.best = best.at;
   row.best_from = night.half_rate(best, -1);
   row.best_to = night.half_rate(best, +1);
-  const double zhr = shower.zhr.value_or(0.0);
+  fit_to_moon(sky, night, row);
+  if (!shower.zhr) {
+    row.verdict = Verdict::poor;
+    row.spoiler = Spoiler::few_meteors;
+    return row;
+  }
+  const double zhr = *shower.zhr;
   row.expected_per_hour = zhr * best.value;
   row.expected_dark = zhr * night.activity(best.at) * sin(row.radiant.altitude);
 
@@ -230,15 +285,15 @@ SiteShower judge(const SiteSky& sky, double limit, const ShowerPeak& peak, Date 
     Spoiler spoiler;
   };
   const double moon = best.value / moonless, twilight = moonless / dark;
-  const Part parts[] = {
-      {moon, grade_of_part(moon), Spoiler::moon},
-      {sin(row.radiant_highest), grade(row.radiant_highest.degrees(), 30.0, 15.0),
-       Spoiler::low_radiant},
-      {twilight, grade_of_part(twilight), Spoiler::bright_night},
-      {shower.zhr ? night.activity(best.at) : 1.0, Verdict::good, Spoiler::peak_by_day}};
-  const Verdict by_rate = shower.zhr ? grade_of_rate(row.expected_per_hour) : Verdict::good;
-  row.verdict = by_rate;
-  for (const Part& part : parts) row.verdict = std::max(row.verdict, part.grade);
+  const Part parts[] = {{moon, grade_of_part(moon), Spoiler::moon},
+                        {sin(row.radiant_highest), grade(row.radiant_highest.degrees(), 30.0, 15.0),
+                         Spoiler::low_radiant},
+                        {twilight, grade_of_part(twilight), Spoiler::bright_night},
+                        {night.activity(best.at), Verdict::good, Spoiler::peak_by_day}};
+  const Verdict by_rate = grade_of_rate(row.expected_per_hour);
+  Verdict worst_part = Verdict::good;
+  for (const Part& part : parts) worst_part = std::max(worst_part, part.grade);
+  row.verdict = std::max(by_rate, worst_part);
   row.spoiler = Spoiler::none;
   if (row.verdict == Verdict::good) return row;
   const bool rate_decides = by_rate == row.verdict;
@@ -247,9 +302,10 @@ SiteShower judge(const SiteSky& sky, double limit, const ShowerPeak& peak, Date 
     row.spoiler = Spoiler::few_meteors;
     return row;
   }
+  const Verdict blamed = !rate_decides ? row.verdict : std::min(Verdict::fair, worst_part);
   double least = 2.0;
   for (const Part& part : parts)
-    if ((rate_decides || part.grade == row.verdict) && part.left < least) {
+    if (part.grade >= blamed && part.left < least) {
       least = part.left;
       row.spoiler = part.spoiler;
     }
