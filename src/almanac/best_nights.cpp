@@ -16,15 +16,6 @@
 namespace duskleaf {
 namespace {
 
-TimeSpan window_span(const Zone& zone, Date date, const ClockWindow& window) {
-  const auto noon = std::chrono::hours(12);
-  const auto day = std::chrono::days(1);
-  const auto late = [&](std::chrono::minutes m) { return m <= noon; };
-  const Date from_date = date + (late(window.from) ? day : day * 0);
-  const Date to_date = from_date + (window.to <= window.from ? day : day * 0);
-  return {zone.instant(from_date, window.from), zone.instant(to_date, window.to)};
-}
-
 double minutes(const std::vector<TimeSpan>& spans) { return length(spans).count() * 1440.0; }
 
 int rounded(double minutes) { return static_cast<int>(std::lround(minutes)); }
@@ -70,6 +61,8 @@ struct Found {
   bool of_moon;
 };
 
+// A shower that gives less is no ground to choose a night (common practice).
+constexpr double least_meteors_per_hour = 10.0;
 constexpr Angle close_meeting = Angle::from_degrees(2.0);
 
 bool overlap(const TimeSpan& a, const TimeSpan& b) { return a.from < b.to && b.from < a.to; }
@@ -93,6 +86,7 @@ std::vector<Found> find_happenings(const SiteHappenings& all, const Night& night
     const SiteShower& shower = all.showers[i];
     if (shower.night != night.date || !shower.best) continue;
     if (shower.verdict != Verdict::good && shower.verdict != Verdict::fair) continue;
+    if (shower.expected_per_hour < least_meteors_per_hour) continue;
     if (window && !(shower.best_from && shower.best_to &&
                     overlap({*shower.best_from, *shower.best_to}, *window)))
       continue;
@@ -111,8 +105,8 @@ std::vector<Found> find_happenings(const SiteHappenings& all, const Night& night
   }
   for (std::size_t i = 0; i < all.occultations.size(); ++i) {
     const Occultation& o = all.occultations[i];
-    const Target& target = targets()[static_cast<std::size_t>(o.target)];
-    if (target.sort != Target::Sort::body && target.magnitude > 2.5) continue;
+    const Target& target = target_at(o.target);
+    if (!target.is_body() && target.magnitude > 2.5) continue;
     const auto seen = [&](const LimbContact& c) {
       return c.up && c.sun_altitude < civil_altitude && within(c.at, span);
     };
@@ -156,6 +150,15 @@ void add_reasons(NightRank& rank, const Night& night, const TimeSpan& window, Da
 }
 
 }  // namespace
+
+TimeSpan window_span(const Zone& zone, Date date, const ClockWindow& window) {
+  const auto noon = std::chrono::hours(12);
+  const auto day = std::chrono::days(1);
+  const auto late = [&](std::chrono::minutes m) { return m <= noon; };
+  const Date from_date = date + (late(window.from) ? day : day * 0);
+  const Date to_date = from_date + (window.to <= window.from ? day : day * 0);
+  return {zone.instant(from_date, window.from), zone.instant(to_date, window.to)};
+}
 
 std::string_view night_happening_name(NightHappening happening) {
   constexpr std::array<std::string_view, 4> names = {"lunar-eclipse", "shower", "meeting",

@@ -4,7 +4,6 @@
 #include <optional>
 #include <string>
 #include <string_view>
-#include <utility>
 #include <vector>
 
 #include "almanac/site_year.hpp"
@@ -19,6 +18,8 @@ enum class Aim { any, dark, moon };
 struct ClockWindow {
   std::chrono::minutes from, to;
 };
+/// Its instants in the evening of a date; empty where the clocks skip it.
+TimeSpan window_span(const Zone&, Date, const ClockWindow&);
 
 /// What may happen in a night and count in its rank.
 enum class NightHappening { lunar_eclipse, shower, meeting, occultation };
@@ -49,7 +50,8 @@ struct NightReason {
 /// What happens counts as minutes. An eclipse of the Moon in the umbra: as much of the window (of
 /// the time from sunset to sunrise without one) as the umbra covers of the Moon's diameter, so that
 /// a total one stands among the darkest nights. Besides, 120 in all at most: a shower in its best
-/// night 60 where its verdict is good, 30 where it is fair; a meeting within 2 degrees, seen by the
+/// night 60 where its verdict is good, 30 where it is fair, and nothing where fewer than 10 meteors
+/// an hour are to be expected (its reason is left out too); a meeting within 2 degrees, seen by the
 /// bare eye, 30; the Moon's covering of a planet or a star of V 2.5 or brighter 30. For Aim::moon
 /// only what the Moon does; for Aim::dark nothing (the reasons tell it all the same).
 struct NightRank {

@@ -12,7 +12,10 @@
 //   is a bare-eye sight down to a limit of 4.7 and one for binoculars in town, M33 a bare-eye sight
 //   at 6.5. Star clusters are seen star by star or by their cores: half of the difference without
 //   end, for open ones 2 magnitudes at most. To be told from a star it must look half a degree
-//   wide: ten times magnified in binoculars, D times in a telescope of D mm.
+//   wide: ten times magnified in binoculars, D times in a telescope of D mm. The bare eye is given
+//   only to what observers call bare-eye objects (ShowObject::bare_eye): enough light in all is not
+//   yet a sight. What moonlight and twilight take counts 1.3 times for nebulae, galaxies and star
+//   clouds, whose faint edges go first: under a full Moon M42 stays, M31 does not.
 // The sky's brightness follows from the faintest star by B. E. Schaefer 1990, PASP 102, 212, as in
 // sky/brightness.cpp, turned round. The faintest star is the zenith's; lower down an ordinary
 // night takes 0.25 magnitude for each further air mass (common practice), 1 / sine of the altitude.
@@ -37,12 +40,14 @@ constexpr std::array usual_openings_mm = {0.0, 50.0, 80.0, 100.0, 150.0, 200.0, 
 constexpr double binoculars_mm = 50.0, binoculars_magnify = 10.0, pupil_mm = 7.0;
 
 constexpr Angle least_object_height = Angle::from_degrees(15.0);
+// The first for what takes optics, and in two months for what shall not be called its last chance.
 constexpr Angle least_planet_height = Angle::from_degrees(10.0);
-constexpr Angle least_moon_height = Angle::from_degrees(5.0);
+constexpr Angle least_bright_height = Angle::from_degrees(5.0);
 constexpr Angle two_hours = Angle::from_degrees(30.0);
 constexpr Days two_months(60);
-// Between these the terminator's shadows are worth a look (common practice).
-constexpr double moon_lit_from = 0.05, moon_lit_to = 0.95;
+// A thinner crescent does not stand in a dark sky (common practice).
+constexpr double moon_lit_from = 0.01;
+constexpr double dimming_of_extended = 1.3;
 
 /// Magnitudes that an opening gains on the bare eye.
 double gain(double opening_mm) {
@@ -87,7 +92,7 @@ bool shows_extended(const ShowObject& object, double faintest_star, double openi
 double rank_of(Body body) {
   switch (body) {
     case Body::moon:
-      return 4.0;
+      return 6.0;
     case Body::jupiter:
     case Body::saturn:
       return 4.0;
@@ -112,7 +117,7 @@ Horizontal refracted(Horizontal place) {
 }
 
 /// From directions of date now and in two months. Empty for what is poorly placed, though not for
-/// the last time.
+/// the last time. What never sets has no last chance.
 std::optional<Standing> standing_of(const Eigen::Vector3d& now,
                                     const Eigen::Vector3d& in_two_months, Angle sidereal_time,
                                     Angle latitude, Angle least_height) {
@@ -122,8 +127,9 @@ std::optional<Standing> standing_of(const Eigen::Vector3d& now,
   // At the same clock time; the Sun's mean motion, degrees a day.
   const Angle then = sidereal_time + Angle::from_degrees(0.98565 * two_months.count());
   const Angle height = to_horizontal(in_two_months, then, latitude).altitude;
-  if (height + refraction(height) < least_height) return Standing::last_chance;
   const Angle declination = arctan2(now.z(), std::hypot(now.x(), now.y()));
+  const bool sets = cos(latitude + declination) > sin(refraction(Angle()));
+  if (sets && height + refraction(height) < least_height) return Standing::last_chance;
   const double highest = cos(latitude - declination);  // sine of the altitude in the meridian
   if (sine_of_altitude(now.normalized(), sidereal_time, latitude) < 0.7 * highest) return {};
   return Standing::at_its_best;
@@ -140,13 +146,13 @@ void add_bodies(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, co
                 Ut moment, std::vector<Candidate>& candidates) {
   const YearEphemeris& ephemeris = sky.ephemeris();
   const Angle latitude = sky.observer().latitude, sidereal = sky.local_sidereal_time(moment);
-  if (light.moon_lit > moon_lit_from && light.moon_lit < moon_lit_to) {
+  if (light.moon_lit > moon_lit_from) {
     ShowItem moon{};
     moon.body = Body::moon;
     moon.standing = Standing::at_its_best;
     moon.place = refracted(light.moon);
     moon.magnitude = std::numeric_limits<double>::quiet_NaN();
-    if (moon.place.altitude >= least_moon_height && above_skyline(skyline, moon.place))
+    if (moon.place.altitude >= least_bright_height && above_skyline(skyline, moon.place))
       candidates.push_back({moon, value_of(rank_of(Body::moon), moon), -1});
   }
   if (light.sun_altitude > planets_visible_below) return;
@@ -155,7 +161,7 @@ void add_bodies(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, co
     ShowItem item{};
     item.body = planet;
     item.place = apparent_place(sky, planet, moment);
-    if (item.place.altitude < least_planet_height || !above_skyline(skyline, item.place)) continue;
+    if (item.place.altitude < least_bright_height || !above_skyline(skyline, item.place)) continue;
     item.magnitude = planet_magnitude(planet, planet_aspect(ephemeris, planet, now));
     if (!bare_eye_visible(planet, item.magnitude, item.place.altitude, light.faintest_star)) {
       // Uranus and Neptune are found with optics, in a dark sky; half a magnitude of margin, as
@@ -164,7 +170,8 @@ void add_bodies(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, co
       const auto opening = std::find_if(
           usual_openings_mm.begin() + 1, usual_openings_mm.end(),
           [&](double mm) { return item.magnitude + 0.5 < light.faintest_star + gain(mm); });
-      if (!dark || opening == usual_openings_mm.end()) continue;
+      if (!dark || item.place.altitude < least_planet_height || opening == usual_openings_mm.end())
+        continue;
       item.opening_mm = *opening;
     }
     // Where the tables end earlier, their last place: it moves little in what is left.
@@ -172,14 +179,14 @@ void add_bodies(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, co
     const auto standing =
         standing_of(ephemeris.apparent(planet, now), ephemeris.apparent(planet, later), sidereal,
                     latitude, least_planet_height);
-    if (!standing) continue;
-    item.standing = *standing;
+    if (!standing && item.opening_mm > 0.0) continue;
+    item.standing = standing.value_or(Standing::at_its_best);  // what all see is never passed over
     candidates.push_back({item, value_of(rank_of(planet), item), -1});
   }
 }
 
-void add_objects(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, double faintest_star,
-                 Ut moment, std::vector<Candidate>& candidates) {
+void add_objects(const SiteSky& sky, const Place& site, double faintest_star, Ut moment,
+                 std::vector<Candidate>& candidates) {
   const Tt now = to_tt(moment);
   const Angle latitude = sky.observer().latitude, sidereal = sky.local_sidereal_time(moment);
   const Eigen::Matrix3d to_date = sky.ephemeris().icrs_to_date(now);
@@ -195,9 +202,14 @@ void add_objects(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, d
     ShowItem item{};
     item.object = static_cast<int>(i);
     item.place = refracted(to_horizontal(of_date, sidereal, latitude));
-    if (item.place.altitude < least_object_height || !above_skyline(skyline, item.place)) continue;
+    if (item.place.altitude < least_object_height || !above_skyline(site.skyline, item.place))
+      continue;
     const double extinction = 0.25 * (1.0 / sin(item.place.altitude) - 1.0);
-    const std::optional<double> opening = least_opening_mm(object, faintest_star - extinction);
+    const bool faint_edges = object.sort == ShowClass::nebula || object.sort == ShowClass::galaxy ||
+                             object.sort == ShowClass::star_cloud;
+    const double dimmed = site.limiting_magnitude - faintest_star;
+    const double limit = site.limiting_magnitude - dimmed * (faint_edges ? dimming_of_extended : 1);
+    const std::optional<double> opening = least_opening_mm(object, limit - extinction);
     if (!opening) continue;
     item.opening_mm = *opening;
     item.magnitude = object.magnitude;
@@ -229,10 +241,13 @@ void take_in_turn(std::vector<Candidate> candidates, std::vector<ShowItem>& list
 }  // namespace
 
 std::optional<double> least_opening_mm(const ShowObject& object, double faintest_star) {
-  for (const double opening : usual_openings_mm)
-    if (object.sort == ShowClass::double_star ? shows_double(object, faintest_star, opening)
-                                              : shows_extended(object, faintest_star, opening))
+  const bool is_double = object.sort == ShowClass::double_star;
+  for (const double opening : usual_openings_mm) {
+    if (opening == 0.0 && !is_double && !object.bare_eye) continue;
+    if (is_double ? shows_double(object, faintest_star, opening)
+                  : shows_extended(object, faintest_star, opening))
       return opening;
+  }
   return {};
 }
 
@@ -243,7 +258,7 @@ std::vector<ShowItem> show_list(const SiteSky& sky, const SiteYear& year, Ut mom
   std::vector<Candidate> candidates;
   add_bodies(sky, year.place.skyline, light, moment, candidates);
   if (light.sun_altitude < civil_altitude)
-    add_objects(sky, year.place.skyline, light.faintest_star, moment, candidates);
+    add_objects(sky, year.place, light.faintest_star, moment, candidates);
   for (const Standing standing : {Standing::rising, Standing::at_its_best, Standing::last_chance}) {
     std::vector<Candidate> part;
     std::copy_if(candidates.begin(), candidates.end(), std::back_inserter(part),

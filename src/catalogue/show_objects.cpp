@@ -35,7 +35,8 @@ std::vector<ShowObject> read_show_objects() {
                     magnitude = table.column("magnitude"),
                     second = table.column("second_magnitude"), size = table.column("size_arcmin"),
                     ratio = table.column("axis_ratio"), area = table.column("constellation"),
-                    hr = table.column("hr"), memory = table.column("from_memory");
+                    hr = table.column("hr"), look = table.column("look"),
+                    bare_eye = table.column("bare_eye"), memory = table.column("from_memory");
   std::vector<ShowObject> all;
   for (std::size_t i = 0; i < table.rows(); ++i) {
     const Angle a = Angle::from_degrees(table.number(i, ra)),
@@ -54,6 +55,8 @@ std::vector<ShowObject> read_show_objects() {
     object.axis_ratio = table.number(i, ratio);
     object.constellation = constellation_index(table.cell(i, area));
     object.star = table.cell(i, hr).empty() ? -1 : star_index(table.integer(i, hr));
+    object.look = table.cell(i, look);
+    object.bare_eye = !table.cell(i, bare_eye).empty();
     object.by_memory = !table.cell(i, memory).empty();
   }
   return all;

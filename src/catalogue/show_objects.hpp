@@ -33,8 +33,11 @@ struct ShowObject {
   double axis_ratio;          // least over greatest diameter; 1 of doubles
   int constellation;          // index into constellations()
   int star;                   // a double's brighter star, index into stars(); -1 otherwise
-  bool by_memory;             // place, magnitude or size not read in a source (choice, kind, rank
-                              // and axis ratio never are)
+  std::string_view look;      // of a double, key of words/LANG.yaml after "show.look-" where its
+                              // colours or the like are known ("gold-blue"), or empty
+  bool bare_eye;              // of all but doubles: observers call it a bare-eye object (dark sky)
+  bool by_memory;             // place, magnitude, size or look not read in a source (choice, kind,
+                              // rank, axis ratio and bare_eye never are)
 };
 /// About 140, of both hemispheres.
 std::span<const ShowObject> show_objects();

@@ -1,12 +1,18 @@
-// Elementary; what counts as dark enough: almanac/evening_moment.hpp.
+// Elementary; what counts as dark enough: almanac/evening_moment.hpp; the best night:
+// almanac/best_nights.hpp.
 #include "sheet/show_moment.hpp"
 
 #include <algorithm>
 #include <optional>
 
-namespace duskleaf {
+#include "almanac/best_nights.hpp"
+#include "almanac/evening_moment.hpp"
 
-ShowMoment show_moment(const BlockContext& c) {
+namespace duskleaf {
+namespace {
+
+/// The first session of the month that does not end in daylight.
+std::optional<ShowMoment> session_moment(const BlockContext& c, const SiteSky& sky) {
   const auto [year, month] = c.year.span.month(c.month_index);
   const Zone& zone = c.year.place.zone;
   std::optional<ShowMoment> found;
@@ -24,11 +30,34 @@ ShowMoment show_moment(const BlockContext& c) {
       const std::optional<Ut> dusk = c.year.nights[index].nautical_dusk;
       if (dusk && *dusk > at)
         at = session.to ? std::max(at, std::min(*dusk, instant(*session.to))) : *dusk;
+      if (sky.altitude(Body::sun, at) > sun_rise_altitude) continue;
       found = ShowMoment{date, at, true};
       break;  // its dates ascend
     }
   }
-  return found ? *found : ShowMoment{c.evening().date, c.evening().moment, false};
+  return found;
+}
+
+}  // namespace
+
+ShowMoment show_moment(const BlockContext& c) {
+  const auto& nights = c.year.nights;
+  const SiteSky sky(c.ephemeris, c.year.place.observer, nights.front().from, nights.back().to);
+  if (const auto session = session_moment(c, sky)) return *session;
+
+  const auto [year, month] = c.year.span.month(c.month_index);
+  std::vector<Date> dates;
+  for (int day = 1; day <= days_in_month(year, month); ++day)
+    dates.push_back(make_date(year, month, day));
+  const std::vector<NightRank> ranks =
+      rank_nights(c.ephemeris, c.year, dates, {}, Aim::any, &c.happenings);
+  // Where no night has any darkness, none is better than the charts' own.
+  if (ranks.empty() || ranks.front().dark_rounded == 0)
+    return {c.evening().date, c.evening().moment, false};
+  const Date best = ranks.front().date;
+  const Night& night = nights[static_cast<std::size_t>((best - nights.front().date).count())];
+  const ChartHour& hour = c.year.place.chart_hours[static_cast<std::size_t>(month - 1)];
+  return {best, evening_moment(sky, c.year.place.zone, hour, night).moment, false};
 }
 
 }  // namespace duskleaf

@@ -11,7 +11,9 @@ struct ShowMoment {
   bool session;  // one of the group's own
 };
 /// The month's first session by date, from its beginning on: when the Sun is 12 degrees down,
-/// within the session's hours; without one the evening and moment of the charts.
+/// within the session's hours, where the Sun has set by then. Without one the month's best night
+/// (rank_nights, aim any) at the chart's hour, or when it is dark; the charts' own evening where
+/// the month has no dark night.
 ShowMoment show_moment(const BlockContext&);
 
 }  // namespace duskleaf

@@ -209,6 +209,7 @@ class Happening : public testing::Test {
     s.best_to = clock(day, to);
     s.best = clock(day, to);
     s.verdict = verdict;
+    s.expected_per_hour = 20;
     happenings.showers.push_back(s);
   }
   std::vector<NightRank> ranks(Aim aim, std::optional<ClockWindow> window) const {
@@ -234,6 +235,8 @@ TEST_F(Happening, CountsAsMinutesInItsOwnNight) {
   shower(9, 22, 30, Verdict::good);
   shower(10, 22, 30, Verdict::fair);
   shower(11, 22, 30, Verdict::poor);
+  shower(12, 22, 30, Verdict::good);
+  happenings.showers.back().expected_per_hour = 4;  // not worth an evening
   const auto any = ranks(Aim::any, {}), moon = ranks(Aim::moon, {}), dark = ranks(Aim::dark, {});
   for (const auto& [day, for_any, for_moon] : {std::tuple{3, 30, 0},
                                                {4, 0, 0},
@@ -242,7 +245,8 @@ TEST_F(Happening, CountsAsMinutesInItsOwnNight) {
                                                {8, 0, 0},
                                                {9, 60, 0},
                                                {10, 30, 0},
-                                               {11, 0, 0}}) {
+                                               {11, 0, 0},
+                                               {12, 0, 0}}) {
     EXPECT_EQ(minutes(any, day), for_any) << day;
     EXPECT_EQ(minutes(moon, day), for_moon) << day;
     EXPECT_EQ(minutes(dark, day), 0) << day;

@@ -153,5 +153,40 @@ TEST(ShowObjects, WellKnownDoubles) {
   }
 }
 
+// B-V of gold and orange stars is above 1.1, of yellow ones 0.6 to 1.1, and blue is what is below
+// 0.1 beside a warm one (common practice); what is from memory says so.
+TEST(ShowObjects, ColoursOfDoublesFollowTheCatalogue) {
+  const std::map<std::string, std::pair<double, double>> range = {
+      {"gold", {1.1, 1.5}}, {"orange", {1.1, 1.8}}, {"yellow", {0.6, 1.1}}, {"blue", {-0.3, 0.1}}};
+  int pairs = 0;
+  for (const ShowObject& o : show_objects()) {
+    if (o.look.empty()) continue;
+    EXPECT_EQ(o.sort, ShowClass::double_star) << o.code;
+    if (o.by_memory && !std::set<std::string_view>{"61 Cyg", "β Cap", "α Cen"}.contains(o.code))
+      continue;  // of these the separation is from memory, the colours are not
+    ++pairs;
+    // The other star: nearest to the first among those of its brightness.
+    const Star& first = stars()[static_cast<std::size_t>(o.star)];
+    const Star* second = nullptr;
+    double nearest = 15.0;
+    for (const Star& star : stars()) {
+      const double distance = arcminutes_between(star.direction, o.direction);
+      if (star.hr == first.hr || distance > nearest) continue;
+      nearest = distance;
+      second = &star;
+    }
+    ASSERT_NE(second, nullptr) << o.code;
+    const std::string look(o.look);
+    const std::size_t dash = look.find('-');
+    const auto& [least, most] = range.at(look.substr(0, dash));
+    const auto& [other_least, other_most] = range.at(look.substr(dash + 1));
+    EXPECT_GE(first.colour_index, least) << o.code;
+    EXPECT_LE(first.colour_index, most) << o.code;
+    EXPECT_GE(second->colour_index, other_least) << o.code;
+    EXPECT_LE(second->colour_index, other_most) << o.code;
+  }
+  EXPECT_GE(pairs, 8);
+}
+
 }  // namespace
 }  // namespace duskleaf

@@ -1,6 +1,7 @@
 #include <gmock/gmock.h>
 #include <gtest/gtest.h>
 
+#include "almanac/best_nights.hpp"
 #include "almanac/show_list.hpp"
 #include "month_scene.hpp"
 #include "sheet/blocks/blocks.hpp"
@@ -46,7 +47,8 @@ TEST(ShowBlock, IsForTheFirstSessionOfTheMonth) {
   const Drawn d = show(scene, "100");
   EXPECT_THAT(d.text, HasSubstr("Fri 5\u00A0February, 20:00"));
   // In a February evening of the north Orion stands high in the south (common fact).
-  for (const char* piece : {"At its best", "Orion Nebula", "bare eye", "binoculars", "mm"})
+  for (const char* piece :
+       {"At its best", "Orion Nebula", "bare eye", "binoculars", "small telescope"})
     EXPECT_THAT(d.text, HasSubstr(piece));
 }
 
@@ -64,7 +66,7 @@ TEST(ShowBlock, MostLimitsItsLines) {
   const auto things = [](const Drawn& d) {
     int n = 0;
     for (const std::string& piece : d.pieces)
-      for (const char* takes : {"bare eye", "binoculars", "telescope", "\u00A0mm"})
+      for (const char* takes : {"bare eye", "binoculars", "telescope"})
         if (piece.ends_with(takes)) ++n;
     return n;
   };
@@ -72,6 +74,55 @@ TEST(ShowBlock, MostLimitsItsLines) {
   EXPECT_EQ(things(six), 6);
   EXPECT_GT(things(whole), 12);
   EXPECT_GT(whole.height, six.height);
+}
+
+// On the full Moon's own evening (a group asked for the Moon) it is not left out for star clusters.
+TEST(ShowBlock, MoonAndBrightPlanetsComeFirst) {
+  MonthScene scene(-43.4, 171.6, "Pacific/Auckland", 2027, 2);
+  scene.site.place.limiting_magnitude = 6.0;
+  Session session;
+  session.when = std::vector<Date>{make_date(2027, 2, 20)};
+  session.from = std::chrono::hours(20);
+  session.to = std::chrono::minutes(21 * 60 + 30);
+  scene.site.sessions = {session};
+  scene.compute(false, true);
+  EXPECT_TRUE(show_moment(scene.context()).session);
+  // Full on February 20 (UT 23:24, common knowledge of the year's almanacs); Mars and Jupiter are
+  // about their oppositions.
+  const Drawn d = show(scene, "3");
+  for (const char* piece : {"Moon, full", "Jupiter, moons", "Mars"})
+    EXPECT_THAT(d.text, HasSubstr(piece));
+  EXPECT_THAT(d.text, HasSubstr("east is on the right"));
+}
+
+TEST(ShowBlock, WithoutASessionItIsForTheBestNight) {
+  for (const int month : {2, 8, 11}) {
+    MonthScene scene(41.3, -73.9, "America/New_York", 2027, month);
+    scene.compute(true, true);
+    std::vector<Date> dates;
+    for (int day = 1; day <= days_in_month(2027, month); ++day)
+      dates.push_back(make_date(2027, month, day));
+    const auto ranks =
+        rank_nights(*scene.ephemeris, scene.year, dates, {}, Aim::any, &scene.happenings);
+    const ShowMoment moment = show_moment(scene.context());
+    EXPECT_FALSE(moment.session);
+    EXPECT_EQ(moment.evening, ranks.front().date) << month;
+    EXPECT_LT(ranks.front().moon_lit, 0.3) << month;
+    EXPECT_THAT(show(scene, "100").text,
+                HasSubstr("best night, " + scene.words.weekday_short(weekday_of(moment.evening)) +
+                          " " + scene.words.day_month(moment.evening)));
+  }
+}
+
+TEST(ShowBlock, DoublesAreNamedWithTheirConstellationAndColours) {
+  MonthScene scene(45, 10, "Europe/Rome", 2027, 9);
+  scene.site.sessions = {fridays(1, 21, 23)};
+  scene.compute(false, true);
+  const Drawn d = show(scene, "100", 190);
+  for (const char* piece :
+       {"Albireo in Cygnus, double: gold and blue", "61 in Cygnus, double: both orange"})
+    EXPECT_THAT(d.text, HasSubstr(piece));
+  EXPECT_THAT(d.text, Not(HasSubstr("β Cyg")));
 }
 
 TEST(ShowBlock, ClosesUpWithALineWhereTheSkyIsTooBright) {
@@ -88,6 +139,8 @@ TEST(ShowBlock, EveryKindHasItsWords) {
   for (const ShowObject& object : show_objects()) {
     EXPECT_TRUE(words.has("show.kind-" + std::string(show_class_name(object.sort))));
     EXPECT_TRUE(object.name.empty() || words.has("show-object." + std::string(object.name)))
+        << object.code;
+    EXPECT_TRUE(object.look.empty() || words.has("show.look-" + std::string(object.look)))
         << object.code;
   }
 }

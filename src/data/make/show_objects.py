@@ -6,7 +6,8 @@ CATALOGUES: the folder /usr/share/siril/catalogue of Debian's siril-common (mess
 in hours; sign; declination in degrees; greatest diameter in arcminutes; magnitude; name; alias; equinox J2000). stars.csv and
 constellation_boundaries.csv must be there already.
 
-The choice, the kinds, the ranks and the axis ratios are from memory. What else is from memory stands in the column from_memory.
+The choice, the kinds, the ranks, the axis ratios and what counts as a bare-eye object are from memory. What else is from memory
+stands in the column from_memory.
 """
 import math
 import re
@@ -80,7 +81,17 @@ NAMED = {"M45", "M44", "NGC 869", "M6", "M7", "M11", "M42", "M8", "M17", "M20", 
          "NGC 7009", "NGC 3132", "NGC 3242", "NGC 2392", "NGC 6543", "NGC 7662", "NGC 7000", "NGC 2244", "NGC 2264",
          "NGC 3372", "NGC 2070", "NGC 4755", "IC 2602", "NGC 253", "NGC 5128", "NGC 292", "LMC", "Mel 25", "Mel 20",
          "Mel 111", "Cr 399", "NGC 3532", "NGC 457", "NGC 4565", "NGC 7789"}
-NAMED_DOUBLES = {7417, 5054, 603, 4057, 7051, 2891, 546, 4915, 6406, 5506, 4825, 424, 5459, 4730, 897, 7754, 5984, 1713, 6134, 7776}
+NAMED_DOUBLES = {7417, 5054, 603, 4057, 2891, 546, 4915, 6406, 5506, 4825, 424, 5459, 4730, 897, 7754, 5984, 1713, 6134, 7776}
+
+# What observers call bare-eye objects under a dark sky, as more than a star: all others take optics, whatever their light sums to.
+BARE_EYE = {"M45", "Mel 25", "M44", "NGC 869", "M6", "M7", "M41", "Mel 20", "Mel 111", "NGC 2451", "NGC 2516", "IC 2391", "IC 2602",
+            "NGC 3532", "NGC 6231", "NGC 104", "NGC 5139", "M42", "M8", "NGC 3372", "M31", "NGC 292", "LMC", "M24"}
+# How a pair looks, the brighter star first: by the B-V of both where the catalogue has them, else from memory (common practice).
+LOOKS = {7417: "gold-blue", 603: "gold-blue", 3475: "yellow-blue", 7735: "orange-blue", 7776: "yellow-blue", 8085: "orange-orange",
+         7754: "yellow-yellow", 5459: "yellow-yellow"}
+LOOKS_BY_MEMORY = {2764: "orange-blue", 8571: "yellow-blue", 5506: "orange-blue", 4057: "gold-gold",
+                   7051: "double-double"}
+B_V = {"gold": (1.1, 1.5), "orange": (1.1, 1.8), "yellow": (0.6, 1.1), "blue": (-0.3, 0.1)}
 
 
 def catalogue(folder):
@@ -127,9 +138,13 @@ def doubles(stars):
         second = float(stars[other]["v"]) if other else v + float(star["magnitude_difference"])
         area = star["designation_constellation"] or star["constellation"]
         code = LETTERS.get(hr) or f"{star['bayer'].rstrip(SUPERSCRIPTS) or star['flamsteed']} {area}"
+        if hr in LOOKS:
+            for colour, row in zip(LOOKS[hr].split("-"), (star, stars[other])):
+                assert B_V[colour][0] <= float(row["b_v"]) <= B_V[colour][1], (code, colour)
         yield {"code": code, "name": key_of(code) if hr in NAMED_DOUBLES else "", "kind": "double-star", "rank": rank,
                "ra": float(star["ra_deg"]), "dec": float(star["dec_deg"]), "magnitude": v, "second_magnitude": f"{second:.2f}",
-               "size": separation / 60, "axis_ratio": 1, "hr": hr, "from_memory": "+".join(sorted(memory))}
+               "size": separation / 60, "axis_ratio": 1, "hr": hr, "look": LOOKS.get(hr) or LOOKS_BY_MEMORY.get(hr, ""),
+               "from_memory": "+".join(sorted(memory) + (["look"] if hr in LOOKS_BY_MEMORY else []))}
 
 
 def main(folder, target):
@@ -137,19 +152,22 @@ def main(folder, target):
     areas = Boundaries.read(join(target, "constellation_boundaries.csv"))
     rows = list(deep_sky(catalogue(folder))) + list(doubles(stars))
     assert len({r["code"] for r in rows}) == len(rows)
+    assert BARE_EYE <= {r["code"] for r in rows}
     columns = ("code,name,kind,rank,ra_deg,dec_deg,magnitude,second_magnitude,size_arcmin,axis_ratio,constellation,hr,"
-               "from_memory").split(",")
+               "look,bare_eye,from_memory").split(",")
     with open(join(target, "show_objects.csv"), "w", encoding="utf-8") as out:
         out.write("# What is worth showing to a group beyond the Solar System, both hemispheres. Places J2000; magnitude V of the whole,\n"
                   "# or of a double's brighter star; size: greatest diameter, or a double's separation; axis_ratio: least over greatest\n"
                   "# diameter; rank: from 3, a showpiece, to 1; name: key of words/LANG.yaml after \"show-object.\"; constellation: IAU area\n"
-                  "# in which it stands. NGC 869 is taken with NGC 884.\n"
+                  "# in which it stands; look: of a double, key of words after \"show.look-\", by the B-V of its stars; bare_eye: yes where\n"
+                  "# observers call it a bare-eye object. NGC 869 is taken with NGC 884.\n"
                   "# source of clusters, nebulae and galaxies: ngc.txt, ic.txt, messier.txt of Debian siril-common 1.0.6. Source of doubles:\n"
-                  "# stars.csv (The Bright Star Catalogue, CDS V/50). Choice, kind, rank and axis ratio: from memory, and so is what\n"
-                  "# from_memory names (separations of doubles in orbit there: about 2027).\n" + ",".join(columns) + "\n")
+                  "# stars.csv (The Bright Star Catalogue, CDS V/50). Choice, kind, rank, axis ratio and bare_eye: from memory,\n"
+                  "# and so is what from_memory names (separations of doubles in orbit there: about 2027).\n" + ",".join(columns) + "\n")
         for r in rows:
             r["ra_deg"], r["dec_deg"], r["size_arcmin"] = f"{r['ra']:.5f}", f"{r['dec']:.5f}", f"{r['size']:.4g}"
             r["magnitude"] = f"{r['magnitude']:.2f}"
+            r["bare_eye"] = "yes" if r["code"] in BARE_EYE else ""
             star = stars.get(r.get("hr"))
             r["constellation"] = star["constellation"] if star else areas.at(vector(r["ra"], r["dec"]))
             out.write(",".join(str(r.get(c, "")) for c in columns) + "\n")

@@ -34,8 +34,11 @@ std::string body_text(const BlockContext& c, Body body, Ut moment) {
   const Tt t = to_tt(moment);
   switch (body) {
     case Body::moon: {
+      // Shadows along the terminator fail towards full Moon; the rays come out (common practice).
       const double lit = moon_lit_fraction(c.ephemeris, t);
-      return c.words(lit > 0.95 ? "show.moon-full" : "show.moon",
+      if (lit > 0.985) return c.words("show.moon-full");
+      if (lit < 0.05) return c.words("show.moon-thin");
+      return c.words(lit > 0.93 ? "show.moon-nearly-full" : "show.moon",
                      {{"n", c.words.number(100 * lit, 0)}});
     }
     case Body::jupiter:
@@ -56,17 +59,28 @@ std::string body_text(const BlockContext& c, Body body, Ut moment) {
   }
 }
 
-/// "Orion Nebula, M42", "M35, open cluster in Gem", "Albireo, β Cyg, double".
+/// "Albireo in Cygnus, double: gold and blue", "η in Cassiopeia, double".
+std::string double_text(const BlockContext& c, const ShowObject& o, const std::string& area) {
+  const std::string letter(o.code.substr(0, o.code.rfind(' ')));
+  const std::string text =
+      o.name.empty()
+          ? c.words("show.plain-double", {{"letter", letter}, {"area", area}})
+          : c.words("show.named-double",
+                    {{"name", c.words("show-object." + std::string(o.name))}, {"area", area}});
+  if (o.look.empty()) return text;
+  return c.words("show.looks",
+                 {{"double", text}, {"look", c.words("show.look-" + std::string(o.look))}});
+}
+
+/// "Orion Nebula, M42", "M35, open cluster in Gemini", and doubles.
 std::string object_text(const BlockContext& c, const ShowObject& o) {
-  const std::string kind = c.words("show.kind-" + std::string(show_class_name(o.sort)));
-  if (!o.name.empty()) {
-    const std::string name = c.words("show-object." + std::string(o.name));
-    return c.words(o.sort == ShowClass::double_star ? "show.named-double" : "show.named",
-                   {{"name", name}, {"code", std::string(o.code)}, {"kind", kind}});
-  }
   const std::string area(constellations()[static_cast<std::size_t>(o.constellation)].name);
-  return c.words(o.sort == ShowClass::double_star ? "show.plain-double" : "show.plain",
-                 {{"code", std::string(o.code)}, {"kind", kind}, {"area", area}});
+  if (o.sort == ShowClass::double_star) return double_text(c, o, area);
+  if (!o.name.empty())
+    return c.words("show.named", {{"name", c.words("show-object." + std::string(o.name))},
+                                  {"code", std::string(o.code)}});
+  const std::string kind = c.words("show.kind-" + std::string(show_class_name(o.sort)));
+  return c.words("show.plain", {{"code", std::string(o.code)}, {"kind", kind}, {"area", area}});
 }
 
 std::string opening_text(const BlockContext& c, const ShowItem& item) {
@@ -79,6 +93,7 @@ std::string opening_text(const BlockContext& c, const ShowItem& item) {
                : c.words("show.bare-eye");
   if (item.opening_mm <= 0) return c.words("show.bare-eye");
   if (item.opening_mm <= 50) return c.words("show.binoculars");
+  if (item.opening_mm <= 100) return c.words("show.telescope");
   return c.words("show.opening", {{"n", c.words.number(item.opening_mm, 0)}});
 }
 
@@ -91,30 +106,48 @@ bool told_beside_night_bars(const BlockContext& c) {
   return jupiter_column(c, nights).has_value();
 }
 
+/// What the row of Jupiter's moons leaves unsaid: their numbers where the night bars have no column
+/// of them, which side is east where the planet stands north, and where a missing one is.
+std::string moons_key(const BlockContext& c, const Horizontal& jupiter, Ut moment) {
+  std::string text;
+  const auto add = [&](const char* key) { text += (text.empty() ? "" : " ") + c.words(key); };
+  if (!told_beside_night_bars(c)) add("show.moons-key");
+  if (jupiter.azimuth.degrees() < 70 || jupiter.azimuth.degrees() > 290) add("show.moons-north");
+  const auto moons = jupiter_moons(c.ephemeris, to_tt(moment));
+  if (std::any_of(moons.begin(), moons.end(),
+                  [](const JupiterMoon& m) { return m.hidden || m.in_front; }))
+    add("show.moons-missing");
+  return text;
+}
+
 /// What everybody asks for first.
 bool is_bright(const ShowItem& item) {
   return item.body && *item.body != Body::uranus && *item.body != Body::neptune;
 }
 
-/// The best of each group: the Moon and bright planets first, then by worth; half of the lines for
-/// what is at its best where the other groups can fill theirs.
+/// The Moon and bright planets of all groups, then the best of each by worth; half of the lines
+/// for what is at its best where the other groups can fill theirs.
 std::array<Group, 3> choose(const std::vector<ShowItem>& items, std::size_t most) {
   std::array<Group, 3> all, chosen;
-  for (const ShowItem& item : items) all[static_cast<std::size_t>(item.standing)].push_back(&item);
-  for (Group& group : all)
-    std::stable_sort(group.begin(), group.end(), [](const ShowItem* a, const ShowItem* b) {
-      if (is_bright(*a) != is_bright(*b)) return is_bright(*a);
-      return a->worth > b->worth;
-    });
+  Group bright;
+  const auto by_worth = [](const ShowItem* a, const ShowItem* b) { return a->worth > b->worth; };
+  for (const ShowItem& item : items)
+    (is_bright(item) ? bright : all[static_cast<std::size_t>(item.standing)]).push_back(&item);
+  std::stable_sort(bright.begin(), bright.end(), by_worth);
+  if (bright.size() > most) bright.resize(most);
+  for (const ShowItem* item : bright)
+    chosen[static_cast<std::size_t>(item->standing)].push_back(item);
+  std::array<std::size_t, 3> next{};
+  for (Group& group : all) std::stable_sort(group.begin(), group.end(), by_worth);
   constexpr std::size_t best = static_cast<std::size_t>(Standing::at_its_best);
   // In turns, the middle group every other time, until the lines or the things are used up.
   const std::array<std::size_t, 4> turns{best, 0, best, 2};
-  std::size_t used = 0;
+  std::size_t used = bright.size();
   for (bool any = true; any && used < most;) {
     any = false;
     for (const std::size_t g : turns)
-      if (used < most && chosen[g].size() < all[g].size()) {
-        chosen[g].push_back(all[g][chosen[g].size()]);
+      if (used < most && next[g] < all[g].size()) {
+        chosen[g].push_back(all[g][next[g]++]);
         ++used;
         any = true;
       }
@@ -129,9 +162,9 @@ double draw_group(const BlockContext& c, const Group& group, std::string_view ti
   Style quiet = cell;
   quiet.ink = c.theme.soft;
   const double pitch = cell.size_pt * mm_per_pt * 1.17;
-  const double takes_x = room.right() - 15, where_right = takes_x - 2;
+  const double takes_x = room.right() - 18.5, where_right = takes_x - 1.5;
   // Above its things where the groups stand side by side, else before them.
-  const double first_x = beside ? room.x : room.x + 18;
+  const double first_x = beside ? room.x : room.x + 16.5;
   double y = room.y;
   set.left(room.x, y + 2.7, c.words(title_key), set.strong(beside ? set.body() : cell));
   if (beside) y += 3.8;
@@ -145,7 +178,7 @@ double draw_group(const BlockContext& c, const Group& group, std::string_view ti
     const double baseline = y + cell.size_pt * mm_per_pt * 0.95;
     set.right(where_right, baseline, where, cell);
     set.left(takes_x, baseline, opening_text(c, *item), quiet);
-    const double text_room = where_right - 12 - first_x;
+    const double text_room = where_right - set.width(where, cell) - 1.5 - first_x;
     y += text_room > 10 && set.width(text, cell) > text_room
              ? set.paragraph(first_x, y, text_room, text, cell, 1.1) + pitch * (1 - 1.1 / 1.17)
              : (set.left(first_x, baseline, text, cell), pitch);
@@ -163,7 +196,7 @@ double draw_show(const BlockContext& c, const BlockOptions& options, const Box& 
   Setter set(c, out);
   double y =
       area.y + set.heading(area.x, area.y, area.width, c.words("show.title"),
-                           c.words("show.aside",
+                           c.words(when.session ? "show.aside" : "show.aside-best",
                                    {{"weekday", c.words.weekday_short(weekday_of(when.evening))},
                                     {"date", c.words.day_month(when.evening)},
                                     {"time", c.words.time(c.year.place.zone.civil(when.at))}}));
@@ -191,13 +224,12 @@ double draw_show(const BlockContext& c, const BlockOptions& options, const Box& 
     else
       y += used;
   }
-  const bool jupiter = std::any_of(groups.begin(), groups.end(), [](const Group& group) {
-    return std::any_of(group.begin(), group.end(),
-                       [](const ShowItem* i) { return i->body == Body::jupiter; });
-  });
-  if (jupiter && !told_beside_night_bars(c))
-    bottom +=
-        set.paragraph(area.x, bottom, area.width, c.words("show.moons-key"), set.small(), 1.2);
+  for (const Group& group : groups)
+    for (const ShowItem* item : group) {
+      if (item->body != Body::jupiter) continue;
+      const std::string key = moons_key(c, item->place, when.at);
+      if (!key.empty()) bottom += set.paragraph(area.x, bottom, area.width, key, set.small(), 1.2);
+    }
   return bottom - area.y + 0.6;
 }
 
