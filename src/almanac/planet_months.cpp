@@ -60,8 +60,9 @@ void note_dates(const std::vector<DaySeen>& days, Date first, PlanetMonth& row) 
 
 HeightWord height_word(Angle apparent_altitude) {
   const double h = apparent_altitude.degrees();
-  return h < 20.0   ? HeightWord::low
-         : h < 50.0 ? HeightWord::halfway
+  return h < 15.0   ? HeightWord::low
+         : h < 30.0 ? HeightWord::fairly_low
+         : h < 60.0 ? HeightWord::halfway
          : h < 75.0 ? HeightWord::high
                     : HeightWord::overhead;
 }
@@ -85,10 +86,15 @@ std::vector<PlanetMonth> planet_month(const YearEphemeris& ephemeris, const Site
   for (std::size_t i = 0; i < last; ++i)
     nights.emplace_back(sky, year, year.nights[first_night + i]);
 
+  Angle darkest_sun = nights.front().night().darkest_sun_altitude;
+  for (const PlanetNight& night : nights)
+    darkest_sun = std::min(darkest_sun, night.night().darkest_sun_altitude);
+
   std::vector<PlanetMonth> rows;
   for (Body planet : planets) {
     PlanetMonth row{};
     row.planet = planet;
+    row.darkest_sun = darkest_sun;
     std::vector<DaySeen> days;
     for (const PlanetNight& night : nights) {
       const double magnitude =

@@ -59,15 +59,17 @@ struct PlanetMonth {
   Angle elongation;  // positive east of the Sun
   int constellation;
   std::optional<Ut> rises, highest, sets;
-  PlanetDisc disc;  // at `best`, or the darkest moment
+  PlanetDisc disc;    // at `best`, or the darkest moment
+  Angle darkest_sun;  // the Sun's altitude at the darkest moment of the month's nights
   // Each on the date nearest to the 15th (the earlier of two) on which it is a sight of that part
   // of the night. Where it is seen from evening to morning both are of the same stretch.
   std::optional<PlanetWindow> evening_window, morning_window;
 };
 
-/// How high a body stands, in a word: low below 20 degrees, high from 50, overhead from 75 degrees
-/// on (this project's choice; two fists at arm's length are 20 degrees, common practice).
-enum class HeightWord { low, halfway, high, overhead };
+/// How high a body stands, in a word: low below 15 degrees, fairly low below 30, halfway up below
+/// 60 and nearly overhead from 75 degrees on (this project's choice; a fist at arm's length is 10
+/// degrees, common practice).
+enum class HeightWord { low, fairly_low, halfway, high, overhead };
 HeightWord height_word(Angle apparent_altitude);
 
 /// A time as people say it: to the quarter of an hour, beyond an hour and a half to the half;

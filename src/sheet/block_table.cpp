@@ -43,7 +43,9 @@ const std::vector<BlockSpec>& block_table() {
       {"planets", "each planet in words and numbers", {}, draw_planets},
       {"constellations",
        "the constellations near the celestial equator: rising, high, sinking",
-       {},
+       {{"leave-out", "0", "0|1|2|3",
+         "1: those that are not up; 2: also those partly too low; 3: all but names; a page without "
+         "room for more raises it"}},
        draw_constellations},
       {"happenings",
        "what happens in the month, by date, with local times",

@@ -2,6 +2,7 @@
 #include "sheet/night_bar_drawing.hpp"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <fmt/format.h>
 
@@ -78,9 +79,11 @@ void draw_night_bar(const BlockContext& c, const NightAxis& axis, const NightRow
   // The Moon's time up: a light band whose thickness follows the lit part, with edges so that it
   // shows on every tone.
   const double thick = height * (0.16 + 0.36 * row.night.moon_lit);
+  // Where the Sun stays up the Moon is shown by day: it is all that the night has to show.
+  const bool by_day = row.night.sun == Presence::up_throughout;
   for (const TimeSpan& up : moon_spans(row.night))
     for (const ToneSpan& tone : tone_spans(row.night)) {
-      if (tone.tone == SkyTone::day) continue;
+      if (tone.tone == SkyTone::day && !by_day) continue;
       const TimeSpan common{std::max(up.from, tone.from), std::min(up.to, tone.to)};
       if (!(common.from < common.to)) continue;
       for (const TimeSpan& piece : by_offset(c, common)) {
@@ -125,27 +128,37 @@ void mark_clock_change(const BlockContext& c, Setter& set, const NightAxis& axis
 void draw_hour_lines(const BlockContext& c, Setter& set, const NightAxis& axis, const Style& style,
                      double baseline, double bars_top, double bars_bottom, std::vector<Mark>& out) {
   const double right = axis.x + axis.width;
-  std::vector<std::pair<double, double>> labels;  // taken: left and right ends
-  const auto label = [&](int hour, const std::string& words) {
-    const double width = set.width(words, style);
-    const double from = std::clamp(axis.at(hour) - width / 2, axis.x, right - width);
-    for (const auto& [taken_from, taken_to] : labels)
-      if (from < taken_to + 1 && from + width > taken_from - 1) return;
-    set.left(from, baseline, words, style);
-    labels.emplace_back(from, from + width);
+  const auto words = [&](int hour) {
+    return hour == 24 ? c.words("night-bars.midnight") : c.words.whole_hour(hour);
   };
-  const int step = axis.to - axis.from > 16 ? 3 : axis.to - axis.from > 9 ? 2 : 1;
-  label(24, c.words("night-bars.midnight"));
-  for (int hour = static_cast<int>(std::ceil(axis.from)); hour <= static_cast<int>(axis.to);
-       ++hour) {
-    const bool named = hour % step == 0;
+  const auto half = [&](int hour) { return set.width(words(hour), style) / 2; };
+  const int first = static_cast<int>(std::ceil(axis.from)), last = static_cast<int>(axis.to);
+  // The labelled hours are evenly spaced from midnight, as closely as their words have room; one
+  // that would hang over an end of the axis has none.
+  constexpr double apart = 2.2;  // mm
+  const auto has_room = [&](int hour) {
+    return axis.at(hour) - half(hour) >= axis.x - 0.5 && axis.at(hour) + half(hour) <= right + 0.01;
+  };
+  const auto all_clear = [&](int step) {
+    double taken = axis.x - 10;
+    for (int hour = first; hour <= last; ++hour) {
+      if (hour % step != 0 || !has_room(hour)) continue;
+      if (axis.at(hour) - half(hour) < taken + apart) return false;
+      taken = axis.at(hour) + half(hour);
+    }
+    return true;
+  };
+  constexpr std::array steps{1, 2, 3, 4, 6, 12};
+  const int step = *std::find_if(steps.begin(), steps.end() - 1, all_clear);
+  for (int hour = first; hour <= last; ++hour) {
+    const bool named = hour % step == 0 && has_room(hour);
     const double at = axis.at(hour);
     out.push_back(Stroke{Path::polyline({{at, bars_top - (named ? 1.2 : 0.4)}, {at, bars_bottom}}),
                          c.theme.hairline_mm,
                          c.theme.faint,
                          {},
                          false});
-    if (named && hour != 24) label(hour, c.words.whole_hour(hour));
+    if (named) set.centre(at, baseline, words(hour), style);
   }
 }
 

@@ -7,8 +7,9 @@
 
 namespace duskleaf {
 
-/// One page's marks on a sheet of that size (mm). A page whose own words make it too long is laid
-/// out on a larger sheet and reduced, in steps, down to seven eighths; the tally's notes say so.
+/// One page's marks on a sheet of that size (mm). Where its words are too many, lists that fill the
+/// room are cut to three lines, then blocks leave out what their option `leave-out` names, then the
+/// lists go; type keeps its size. A page that is too full even then is noted in the tally.
 std::vector<Mark> draw_page(const BlockContext&, const PageTemplate&, const PageTemplate::Page&,
                             double width, double height);
 

@@ -2,7 +2,6 @@
 // saying is this project's own choice.
 #include "sheet/planet_words.hpp"
 
-#include <array>
 #include <chrono>
 #include <optional>
 
@@ -16,6 +15,8 @@ constexpr std::chrono::minutes longest_length = 150min;
 // A planet that stands highest so much later than it comes into sight is worth coming back for.
 constexpr Days later(1.5 / 24.0);
 constexpr Angle near_the_sun = Angle::from_degrees(28);
+// What almanac/planet_months.hpp asks of the Sun for the bare eye and for binoculars.
+constexpr Angle eyes_need_sun = Angle::from_degrees(-5), optics_need_sun = Angle::from_degrees(-12);
 
 struct Teller {
   const Words& words;
@@ -29,6 +30,9 @@ std::string place_words(const Teller& c, const Horizontal& place, bool begins_se
   switch (height_word(place.altitude)) {
     case HeightWord::low:
       return c.words(begins_sentence ? "planet-words.start-low" : "planet-words.low",
+                     {{"direction", direction}});
+    case HeightWord::fairly_low:
+      return c.words(begins_sentence ? "planet-words.start-fairly-low" : "planet-words.fairly-low",
                      {{"direction", direction}});
     case HeightWord::halfway:
       return c.words(begins_sentence ? "planet-words.start-halfway" : "planet-words.halfway",
@@ -75,7 +79,8 @@ std::string window_words(const Teller& c, const PlanetWindow& w, bool brief = fa
   const bool climbs = w.highest && *w.highest - w.from > later;
   const bool from_dusk = w.begins != WindowEdge::height, to_dawn = w.ends != WindowEdge::height;
   if (from_dusk && to_dawn) {
-    if (!w.highest) return c.words("planet-words.all-night");
+    if (!w.highest)
+      return c.words("planet-words.all-night-best", {{"place", place_words(c, w.at_best, false)}});
     return c.words(
         "planet-words.all-night-highest",
         {{"time", clock(c, *w.highest)}, {"place", place_words(c, *w.at_highest, false)}});
@@ -144,9 +149,10 @@ std::string planet_sentence(const Words& words, const Zone& zone, const PlanetMo
                    {{"phrase", phrase}});
   };
   if (p.sight == PlanetSight::not_visible) {
-    if (p.optics_only) return c.words("planet-words.too-faint");
+    if (p.darkest_sun > (p.optics_only ? optics_need_sun : eyes_need_sun))
+      return c.words("planet-words.not-seen-bright");
     const bool beside_sun = p.elongation < near_the_sun && -p.elongation < near_the_sun;
-    return c.words(beside_sun ? "planet-words.near-sun" : "planet-words.not-visible");
+    return c.words(beside_sun ? "planet-words.not-seen-sun" : "planet-words.not-seen-low");
   }
   std::optional<PlanetWindow> evening = p.evening_window, morning = p.morning_window;
   if (evening && morning && overlap(*evening, *morning))

@@ -42,7 +42,7 @@ PageTemplate::Block read_block(const YamlValue& value) {
     throw OrderError(value.at, "a block without its name",
                      "a map with the key 'block', one of " + listed(block_names()));
   const BlockSpec& spec = block_table()[read_choice(*name, "block", block_names())];
-  std::vector<std::string_view> keys{"block", "over", "fill"};
+  std::vector<std::string_view> keys{"block", "over", "fill", "roam"};
   for (const OptionSpec& option : spec.options) keys.push_back(option.name);
   const MapReader reader(value, "the block '" + std::string(spec.name) + "'", keys);
   PageTemplate::Block block;
@@ -53,6 +53,7 @@ PageTemplate::Block read_block(const YamlValue& value) {
     if (block.fill && block.over)
       throw OrderError(fill->at, "a block with both over and fill", "one of the two, or neither");
   }
+  if (const YamlValue* roam = reader.find("roam")) block.roam = read_bool(*roam, "roam");
   for (const OptionSpec& option : spec.options) {
     const YamlValue* given = reader.find(option.name);
     block.options.values.emplace(

@@ -18,6 +18,7 @@ struct PageTemplate {
     bool over = false;  // drawn in the area of the block before it, taking no room of its own
     bool fill = false;  // drawn last of its column, into what room the others leave, with fewer
                         // lines than its option `most` where they are too many
+    bool roam = false;  // may stand at the end of another column of its band, where that is shorter
   };
   struct Column {
     int first = 1, last = 12;  // of the grid, counted from 1

@@ -322,9 +322,10 @@ TEST(PlanetMonth, LengthsAndHeightsInWords) {
   for (const Row& row : {Row{8, 30}, Row{37, 30}, Row{38, 45}, Row{61, 60}, Row{70, 75},
                          Row{84, 90}, Row{104, 90}, Row{106, 120}, Row{170, 180}})
     EXPECT_EQ(spoken(row.minutes), row.spoken) << row.minutes;
-  EXPECT_EQ(height_word(Angle::from_degrees(19.9)), HeightWord::low);
-  EXPECT_EQ(height_word(Angle::from_degrees(20)), HeightWord::halfway);
-  EXPECT_EQ(height_word(Angle::from_degrees(50)), HeightWord::high);
+  EXPECT_EQ(height_word(Angle::from_degrees(14.9)), HeightWord::low);
+  EXPECT_EQ(height_word(Angle::from_degrees(15)), HeightWord::fairly_low);
+  EXPECT_EQ(height_word(Angle::from_degrees(30)), HeightWord::halfway);
+  EXPECT_EQ(height_word(Angle::from_degrees(60)), HeightWord::high);
   EXPECT_EQ(height_word(Angle::from_degrees(75)), HeightWord::overhead);
 }
 

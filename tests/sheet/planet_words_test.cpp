@@ -95,7 +95,7 @@ TEST(PlanetWords, Mornings) {
   EXPECT_EQ(told(p), "Low in the south-east for 1¼\u00A0hours before sunrise.");
   w = window(26.25, height, 29.5, twilight);
   w.at_from = at(5, 95);
-  w.at_to = at(51, 170);
+  w.at_to = at(61, 170);
   p.morning_window = w;
   EXPECT_EQ(told(p), "In the east from 02:15, high in the south by dawn.");
   p.first_morning = make_date(2027, 3, 22);
@@ -116,7 +116,8 @@ TEST(PlanetWords, FromEveningToMorningIsOneSentence) {
   EXPECT_EQ(told(p), "All night, highest 02:30, halfway up in the south.");
   w.highest.reset();
   w.at_highest.reset();
-  EXPECT_EQ(told(month(PlanetSight::all_night, w, w)), "All night.");
+  EXPECT_EQ(told(month(PlanetSight::all_night, w, w)),
+            "All night, at best halfway up in the south-west.");
 }
 
 TEST(PlanetWords, TwoWindowsAreTwoShortSentences) {
@@ -146,12 +147,13 @@ TEST(PlanetWords, ThePolarNightGoesByTheClock) {
   w.highest = clock(19.25);
   w.at_highest = at(18, 180);
   EXPECT_EQ(told(month(PlanetSight::evening, w)),
-            "13:30 to 01:00, highest 19:15, low in the south.");
+            "13:30 to 01:00, highest 19:15, fairly low in the south.");
   w.highest.reset();
   w.at_highest.reset();
   EXPECT_EQ(told(month(PlanetSight::evening, w)), "Halfway up in the south-west, 13:30 to 01:00.");
   w.begins = w.ends = open;
-  EXPECT_EQ(told(month(PlanetSight::all_night, w, w)), "All night.");
+  EXPECT_EQ(told(month(PlanetSight::all_night, w, w)),
+            "All night, at best halfway up in the south-west.");
   // What the cut at noon parts from the next night's stretch is not told apart.
   const PlanetWindow rest = window(35.5, height, 36, open);
   w.begins = w.ends = height;
@@ -161,12 +163,17 @@ TEST(PlanetWords, ThePolarNightGoesByTheClock) {
 
 TEST(PlanetWords, WhatIsNotSeenAndWhatBinocularsShow) {
   PlanetMonth p = month(PlanetSight::not_visible, {});
+  p.darkest_sun = Angle::from_degrees(-11);
   p.elongation = Angle::from_degrees(-12);
-  EXPECT_EQ(told(p), "Too near the Sun to be seen this month.");
+  EXPECT_EQ(told(p), "Not seen this month: too near the Sun.");
   p.elongation = Angle::from_degrees(60);
-  EXPECT_EQ(told(p), "Not in sight this month.");
+  EXPECT_EQ(told(p), "Not seen this month: never high enough while it is dark.");
+  // Binoculars need a darker sky than the eye needs for the bright planets.
   p.optics_only = true;
-  EXPECT_EQ(told(p), "Out of reach here this month.");
+  EXPECT_EQ(told(p), "Not seen this month: the nights are too bright.");
+  p.optics_only = false;
+  p.darkest_sun = Angle::from_degrees(2);
+  EXPECT_EQ(told(p), "Not seen this month: the nights are too bright.");
   p = month(PlanetSight::evening, window(19.5, twilight, 20.0, height));
   p.optics_only = true;
   EXPECT_EQ(told(p), "Halfway up in the south-west for two hours after sunset (binoculars).");

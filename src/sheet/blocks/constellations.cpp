@@ -1,7 +1,9 @@
 #include "catalogue/constellations.hpp"
 
 #include <algorithm>
+#include <array>
 #include <fmt/format.h>
+#include <numeric>
 
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/flow_text.hpp"
@@ -9,7 +11,7 @@
 namespace duskleaf {
 namespace {
 
-constexpr double row_pitch = 2.88, column_gap = 4.5;  // mm
+constexpr double row_pitch = 2.88, column_gap = 4.5, least_gap = 1.2, most_gap = 4.0;  // mm
 
 std::string name_of(const BlockContext& c, const ConstellationEvening& row) {
   const Figure& figure = figures()[static_cast<std::size_t>(row.figure)];
@@ -26,67 +28,141 @@ std::string list_of(const BlockContext& c, const std::vector<const Constellation
   return text;
 }
 
-/// One of the three columns: a phase's constellations, highest first. Returns the height used.
-double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const Box& area,
-                  std::vector<Mark>& out) {
+using Months = std::array<bool, 12>;
+
+/// The months whose evenings show none of the constellations: too bright.
+Months bright_months(const BlockContext& c) {
+  Months bright;
+  bright.fill(true);
+  for (const ConstellationEvening& row : c.evening().constellations)
+    for (std::size_t m = 0; m < 12; ++m) bright[m] = bright[m] && !row.evening_sight[m];
+  return bright;
+}
+
+/// A break that is of bright months alone counts as none: the block's note names these.
+Months without_bright_breaks(Months sight, const Months& bright) {
+  for (std::size_t first = 0; first < 12; ++first) {
+    if (!sight[first]) continue;
+    std::size_t next = first + 1;
+    while (bright[next % 12] && next < first + 12) ++next;
+    if (next < first + 12 && sight[next % 12])
+      for (std::size_t m = first + 1; m < next; ++m) sight[m % 12] = true;
+  }
+  return sight;
+}
+
+/// "Nov–Mar", "Aug–Oct, Feb".
+std::string months_text(const BlockContext& c, const Months& sight) {
+  const auto seen = [&](std::size_t month) { return sight[month % 12]; };
+  if (std::all_of(sight.begin(), sight.end(), [](bool s) { return s; }))
+    return c.words("constellations.all-year");
+  std::string text;
+  // Spans that cross the turn of the year are whole: begun where a month of no sight is before.
+  for (std::size_t first = 0; first < 12; ++first) {
+    if (!seen(first) || seen(first + 11)) continue;
+    std::size_t last = first;
+    while (seen(last + 1)) ++last;
+    const auto name = [&](std::size_t month) {
+      return c.words.month_short(static_cast<int>(month % 12) + 1);
+    };
+    if (!text.empty()) text += c.words("happening.list-comma");
+    text += first == last ? name(first)
+                          : c.words("happening.span", {{"from", name(first)}, {"to", name(last)}});
+  }
+  return text.empty() ? "–" : text;
+}
+
+/// The cells of a row: its name, then the numbers.
+constexpr std::size_t cells = 5;
+struct Row {
+  std::array<std::string, cells> text;
+  bool strong;
+};
+
+Row row_of(const BlockContext& c, const ConstellationEvening& e, const Months& bright) {
+  const Zone& zone = c.year.place.zone;
+  const double altitude = e.mean_place.altitude.degrees();
+  const std::string direction = c.words.direction_short(e.mean_place.azimuth);
+  std::string name = name_of(c, e);
+  if (e.state == FigureState::partly_up) name = c.words("constellations.partly", {{"name", name}});
+  return {{name,
+           altitude < 5 ? c.words("constellations.low", {{"direction", direction}})
+                        : c.words("constellations.at", {{"direction", direction},
+                                                        {"altitude", c.words.number(altitude, 0)}}),
+           e.highest ? c.words.time(zone.civil(*e.highest)) : "–",
+           e.sets              ? c.words.time(zone.civil(*e.sets))
+           : e.half_never_sets ? c.words("constellations.never-sets")
+                               : std::string("–"),
+           months_text(c, without_bright_breaks(e.evening_sight, bright))},
+          e.on_equator};
+}
+
+/// A phase's constellations, highest first.
+std::vector<const ConstellationEvening*> rows_of(const BlockContext& c, FigurePhase phase,
+                                                 bool with_low) {
   std::vector<const ConstellationEvening*> rows;
   for (const ConstellationEvening& row : c.evening().constellations)
-    if (row.phase == phase && row.state != FigureState::below) rows.push_back(&row);
+    if (row.phase == phase &&
+        (row.state == FigureState::up || (with_low && row.state == FigureState::partly_up)))
+      rows.push_back(&row);
   std::stable_sort(rows.begin(), rows.end(), [](const auto* a, const auto* b) {
     return a->mean_place.altitude > b->mean_place.altitude;
   });
-  const Zone& zone = c.year.place.zone;
+  return rows;
+}
+
+std::string phase_title(const BlockContext& c, FigurePhase phase) {
+  return c.words(fmt::format("constellations.phase-{}", static_cast<int>(phase)));
+}
+
+/// One of the three columns. Returns the height used.
+double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, bool with_low,
+                  const Box& area) {
   Style cell = set.table();
-  if (c.order.clock_12) cell.size_pt = c.theme.table_pt;
+  cell.size_pt = c.theme.table_pt;
   Style head = cell;
   head.ink = c.theme.soft;
-  const bool wide = c.order.clock_12;
-  const double time_width = wide ? 10.9 : 9.2, name_width = wide ? 16.2 : 17.5,
-               where_width = wide ? 10.8 : 12.0;
-  const double where_x = area.x + name_width + where_width, highest_x = where_x + time_width,
-               sets_x = highest_x + time_width;
-  const double months_x = sets_x + 1.3, month_cell = (area.right() - months_x) / 12;
+  const Style title{Face::bold, 8, c.theme.blue};
+  const Row heads{
+      {phase_title(c, phase), c.words("constellations.where"), c.words("constellations.highest"),
+       c.words("constellations.sets"), c.words("constellations.months")},
+      false};
+  std::vector<Row> rows;
+  const Months bright = bright_months(c);
+  for (const ConstellationEvening* e : rows_of(c, phase, with_low))
+    rows.push_back(row_of(c, *e, bright));
+
+  // Each column as wide as its widest cell; what is left over goes between them.
+  std::array<double, cells> widths{};
+  for (std::size_t k = 0; k < cells; ++k) {
+    widths[k] = set.width(heads.text[k], k == 0 ? title : head);
+    for (const Row& row : rows)
+      widths[k] = std::max(widths[k],
+                           set.width(row.text[k], k == 0 && row.strong ? set.strong(cell) : cell));
+  }
+  // Months with a break between them may be set smaller, names may not.
+  const double others = std::accumulate(widths.begin(), widths.end() - 1, 0.0);
+  widths[cells - 1] = std::min(widths[cells - 1], area.width - others - least_gap * (cells - 1));
+  const double sum = std::accumulate(widths.begin(), widths.end(), 0.0);
+  const double gap = std::clamp((area.width - sum) / (cells - 1), least_gap, most_gap);
+  std::array<double, cells> right{};
+  for (std::size_t k = cells; k-- > 1;)
+    right[k] = k + 1 == cells ? area.x + std::min(area.width, sum + gap * (cells - 1))
+                              : right[k + 1] - widths[k + 1] - gap;
+  const double months_room = right[cells - 1] - right[cells - 2] - least_gap;
 
   double y = area.y;
-  set.left(area.x, y + 2.6,
-           c.words(fmt::format("constellations.phase-{}", static_cast<int>(phase))),
-           {Face::bold, 8, c.theme.blue});
-  set.right(where_x, y + 2.6, c.words("constellations.where"), head);
-  set.right(highest_x, y + 2.6, c.words("constellations.highest"), head);
-  set.right(sets_x, y + 2.6, c.words("constellations.sets"), head);
-  set.left(months_x, y + 2.6, c.words("constellations.months"), head);
+  set.left(area.x, y + 2.6, heads.text[0], title);
+  for (std::size_t k = 1; k < cells; ++k) set.right(right[k], y + 2.6, heads.text[k], head);
   y += 3.3;
   if (rows.empty()) set.left(area.x, y + 2.5, c.words("constellations.none"), head);
-  const int month = c.year.span.month(c.month_index).second;
-  for (const ConstellationEvening* row : rows) {
+  for (const Row& row : rows) {
     const double baseline = y + 2.4;
-    Style name = row->on_equator ? set.strong(cell) : cell;
-    if (row->state == FigureState::partly_up) name.ink = c.theme.soft;
-    set.fitted(area.x, baseline, name_of(c, *row), name, name_width);
-    const double altitude = row->mean_place.altitude.degrees();
-    const std::string direction = c.words.direction_short(row->mean_place.azimuth);
-    set.right(where_x, baseline,
-              altitude < 5
-                  ? c.words("constellations.low", {{"direction", direction}})
-                  : c.words("constellations.at",
-                            {{"direction", direction}, {"altitude", c.words.number(altitude, 0)}}),
-              cell);
-    set.right(highest_x, baseline, row->highest ? c.words.time(zone.civil(*row->highest)) : "–",
-              cell);
-    set.right(sets_x, baseline,
-              row->sets              ? c.words.time(zone.civil(*row->sets))
-              : row->half_never_sets ? c.words("constellations.never-sets")
-                                     : std::string("–"),
-              cell);
-    for (std::size_t m = 0; m < 12; ++m) {
-      const double x = months_x + month_cell * static_cast<double>(m);
-      if (row->evening_sight[m])
-        out.push_back(Fill{Path::rectangle({x, baseline - 1.8, month_cell - 0.12, 1.8}),
-                           static_cast<int>(m) + 1 == month ? c.theme.blue : c.theme.astronomical});
-      else
-        out.push_back(
-            Fill{Path::rectangle({x, baseline - 0.2, month_cell - 0.12, 0.2}), c.theme.faint});
-    }
+    set.left(area.x, baseline, row.text[0], row.strong ? set.strong(cell) : cell);
+    for (std::size_t k = 1; k + 1 < cells; ++k) set.right(right[k], baseline, row.text[k], cell);
+    const std::string& months = row.text[cells - 1];
+    const double width = std::min(months_room, set.width(months, cell));
+    set.fitted(right[cells - 1] - width, baseline, months, cell, months_room);
     y += row_pitch;
   }
   return y - area.y;
@@ -94,7 +170,7 @@ double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, const B
 
 }  // namespace
 
-double draw_constellations(const BlockContext& c, const BlockOptions&, const Box& area,
+double draw_constellations(const BlockContext& c, const BlockOptions& options, const Box& area,
                            std::vector<Mark>& out) {
   Setter set(c, out);
   const EveningSky& evening = c.evening();
@@ -110,30 +186,47 @@ double draw_constellations(const BlockContext& c, const BlockOptions&, const Box
                                  : c.words("constellations.too-bright");
     return y + set.paragraph(area.x, y, area.width, text, set.body()) - area.y;
   }
+  const int left_out = std::stoi(options.get("leave-out"));
+  const Style quiet{Face::condensed, c.theme.table_pt, c.theme.soft};
+  std::vector<Run> rest;
+  const auto list = [&](const std::string& title,
+                        const std::vector<const ConstellationEvening*>& rows) {
+    if (rows.empty()) return;
+    rest.push_back({title, set.strong(quiet)});
+    rest.push_back({list_of(c, rows) + ".", quiet});
+  };
+  constexpr std::array phases{FigurePhase::rising, FigurePhase::high, FigurePhase::sinking};
+  if (left_out >= 3) {
+    for (const FigurePhase phase : phases)
+      list(phase_title(c, phase) + ":", rows_of(c, phase, false));
+    return y + flow(set, area.x, y, area.width, rest, 1.18) - area.y;
+  }
+  const bool with_low = left_out < 2;
   const double width = (area.width - 2 * column_gap) / 3;
   double used = 0, x = area.x;
-  for (const FigurePhase phase : {FigurePhase::rising, FigurePhase::high, FigurePhase::sinking}) {
-    used = std::max(used, draw_phase(c, set, phase, {x, y, width, area.height}, out));
+  for (const FigurePhase phase : phases) {
+    used = std::max(used, draw_phase(c, set, phase, with_low, {x, y, width, area.height}));
     x += width + column_gap;
   }
   y += used + 0.3;
 
   std::vector<const ConstellationEvening*> below, never, circumpolar;
+  bool partly = false;
   for (const ConstellationEvening& row : evening.constellations) {
     if (row.circumpolar) circumpolar.push_back(&row);
     if (row.state == FigureState::below) (row.never_rises ? never : below).push_back(&row);
+    partly = partly || row.state == FigureState::partly_up;
   }
-  const Style quiet{Face::condensed, c.theme.table_pt, c.theme.soft};
-  std::vector<Run> rest;
-  const auto list = [&](std::string_view key,
-                        const std::vector<const ConstellationEvening*>& rows) {
-    if (rows.empty()) return;
-    rest.push_back({c.words(key), set.strong(quiet)});
-    rest.push_back({list_of(c, rows) + ".", quiet});
-  };
-  list("constellations.below", below);
-  list("constellations.never", never);
-  list("constellations.circumpolar", circumpolar);
+  if (left_out < 1) {
+    list(c.words("constellations.below"), below);
+    list(c.words("constellations.never"), never);
+  }
+  list(c.words("constellations.circumpolar"), circumpolar);
+  if (partly && with_low) rest.push_back({c.words("constellations.partly-note"), quiet});
+  const Months bright = bright_months(c);
+  if (std::any_of(bright.begin(), bright.end(), [](bool b) { return b; }))
+    rest.push_back(
+        {c.words("constellations.bright-note", {{"months", months_text(c, bright)}}), quiet});
   rest.push_back({c.words("constellations.note"), quiet});
   y += flow(set, area.x, y, area.width, rest, 1.18);
   return y - area.y;

@@ -63,9 +63,10 @@ double draw_in_corners(const BlockContext& c, const std::vector<Phase>& phases, 
   Setter set(c, out);
   const double radius = dome_radius(c, area) + clearance;
   const Point dome{area.x + area.width / 2, area.y + dome_radius(c, area)};
-  set.left(area.x, area.y + 2.6, c.words("moon-phases.title"), {Face::bold, 8.5, c.theme.blue});
-  set.right(area.right(), area.y + 2.6, c.words("moon-phases.aside"),
-            {Face::italic, c.theme.table_pt, c.theme.soft});
+  const Style title{Face::bold, 8.5, c.theme.blue};
+  set.left(area.x, area.y + 2.6, c.words("moon-phases.title"), title);
+  set.left(area.x + set.width(c.words("moon-phases.title"), title) + 2, area.y + 2.6,
+           c.words("moon-phases.aside"), {Face::italic, c.theme.table_pt, c.theme.soft});
   const std::size_t left_rows = (phases.size() + 1) / 2;
   const Style name{Face::bold, 8, c.theme.black}, line{Face::condensed, 8, c.theme.black};
   double bottom = 0;

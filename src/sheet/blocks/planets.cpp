@@ -5,6 +5,7 @@
 #include "almanac/planet_months.hpp"
 #include "catalogue/constellations.hpp"
 #include "sheet/blocks/blocks.hpp"
+#include "sheet/flow_text.hpp"
 #include "sheet/planet_words.hpp"
 #include "sheet/setting.hpp"
 
@@ -71,9 +72,13 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   // them, so that it has all of its width.
   std::string names, hidden;
   const auto finish_hidden = [&] {
-    const double indent = std::max(text_x, area.x + set.width(names, set.strong(cell)) + 2);
-    set.left(area.x, y + cell.size_pt * mm_per_pt * 0.95, names, set.strong(cell));
-    y += set.paragraph(indent, y, right - indent, hidden, cell, 1.12) + 0.3;
+    if (area.x + set.width(names, set.strong(cell)) < text_x) {
+      set.left(area.x, y + cell.size_pt * mm_per_pt * 0.95, names, set.strong(cell));
+      y += set.paragraph(text_x, y, right - text_x, hidden, cell, 1.12) + 0.3;
+    } else {
+      y +=
+          flow(set, area.x, y, area.width, {{names, set.strong(cell)}, {hidden, cell}}, 1.12) + 0.3;
+    }
     names.clear();
     hidden.clear();
   };

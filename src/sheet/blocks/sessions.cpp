@@ -25,7 +25,8 @@ std::string dates_text(const BlockContext& c, const std::vector<Date>& dates) {
   return text;
 }
 
-/// "(the Sun sets at 21:17)" where a session begins before the first date's sunset.
+/// "(the Sun sets at 21:17)" where a session begins before the first date's sunset; with a word of
+/// the stars where it ends before the Sun is 6 degrees down.
 std::string daylight(const BlockContext& c, const Session& session,
                      const std::vector<Date>& dates) {
   if (!session.from || *session.from < std::chrono::hours(12)) return {};
@@ -33,9 +34,18 @@ std::string daylight(const BlockContext& c, const Session& session,
     if (night.date == dates.front() && night.sun == Presence::up_throughout)
       return c.words("sessions.sun-up");
   const auto sunset = sunset_after(c.year, dates.front(), *session.from);
-  return sunset ? c.words("sessions.sunset",
-                          {{"time", c.words.time(c.year.place.zone.civil(*sunset))}})
-                : std::string();
+  if (!sunset) return {};
+  const auto night = std::find_if(c.year.nights.begin(), c.year.nights.end(),
+                                  [&](const Night& n) { return n.date == dates.front(); });
+  bool stars = true;
+  if (session.to && night != c.year.nights.end()) {
+    const bool next_day = *session.to < *session.from;
+    const Ut ends =
+        c.year.place.zone.instant(dates.front() + std::chrono::days(next_day ? 1 : 0), *session.to);
+    stars = night->civil_dusk && *night->civil_dusk < ends;
+  }
+  return c.words(stars ? "sessions.sunset" : "sessions.no-stars",
+                 {{"time", c.words.time(c.year.place.zone.civil(*sunset))}});
 }
 
 }  // namespace
