@@ -15,7 +15,8 @@
 //   wide: ten times magnified in binoculars, D times in a telescope of D mm. The bare eye is given
 //   only to what observers call bare-eye objects (ShowObject::bare_eye): enough light in all is not
 //   yet a sight. What moonlight and twilight take counts 1.3 times for nebulae, galaxies and star
-//   clouds, whose faint edges go first: under a full Moon M42 stays, M31 does not.
+//   clouds, whose faint edges go first; and no galaxy is offered while a Moon more than three
+//   quarters lit is 5 degrees up (common practice).
 // The sky's brightness follows from the faintest star by B. E. Schaefer 1990, PASP 102, 212, as in
 // sky/brightness.cpp, turned round. The faintest star is the zenith's; lower down an ordinary
 // night takes 0.25 magnitude for each further air mass (common practice), 1 / sine of the altitude.
@@ -48,6 +49,7 @@ constexpr Days two_months(60);
 // A thinner crescent does not stand in a dark sky (common practice).
 constexpr double moon_lit_from = 0.01;
 constexpr double dimming_of_extended = 1.3;
+constexpr double moon_hides_galaxies_from = 0.75;  // lit
 
 /// Magnitudes that an opening gains on the bare eye.
 double gain(double opening_mm) {
@@ -185,16 +187,19 @@ void add_bodies(const SiteSky& sky, const std::vector<SkylinePoint>& skyline, co
   }
 }
 
-void add_objects(const SiteSky& sky, const Place& site, double faintest_star, Ut moment,
+void add_objects(const SiteSky& sky, const Place& site, const SkyLight& light, Ut moment,
                  std::vector<Candidate>& candidates) {
   const Tt now = to_tt(moment);
   const Angle latitude = sky.observer().latitude, sidereal = sky.local_sidereal_time(moment);
   const Eigen::Matrix3d to_date = sky.ephemeris().icrs_to_date(now);
   const Eigen::Vector3d velocity = sky.ephemeris().earth_velocity(now);
   const double years = now.julian_centuries() * 100.0;
+  const bool bright_moon = light.moon_lit > moon_hides_galaxies_from &&
+                           refracted(light.moon).altitude >= least_bright_height;
   const std::span<const ShowObject> objects = show_objects();
   for (std::size_t i = 0; i < objects.size(); ++i) {
     const ShowObject& object = objects[i];
+    if (object.sort == ShowClass::galaxy && bright_moon) continue;
     Eigen::Vector3d place = object.direction;
     if (object.star >= 0)
       place += years * stars()[static_cast<std::size_t>(object.star)].proper_motion;
@@ -207,7 +212,7 @@ void add_objects(const SiteSky& sky, const Place& site, double faintest_star, Ut
     const double extinction = 0.25 * (1.0 / sin(item.place.altitude) - 1.0);
     const bool faint_edges = object.sort == ShowClass::nebula || object.sort == ShowClass::galaxy ||
                              object.sort == ShowClass::star_cloud;
-    const double dimmed = site.limiting_magnitude - faintest_star;
+    const double dimmed = site.limiting_magnitude - light.faintest_star;
     const double limit = site.limiting_magnitude - dimmed * (faint_edges ? dimming_of_extended : 1);
     const std::optional<double> opening = least_opening_mm(object, limit - extinction);
     if (!opening) continue;
@@ -257,8 +262,7 @@ std::vector<ShowItem> show_list(const SiteSky& sky, const SiteYear& year, Ut mom
   if (light.sun_altitude > sun_rise_altitude) return list;
   std::vector<Candidate> candidates;
   add_bodies(sky, year.place.skyline, light, moment, candidates);
-  if (light.sun_altitude < civil_altitude)
-    add_objects(sky, year.place, light.faintest_star, moment, candidates);
+  if (light.sun_altitude < civil_altitude) add_objects(sky, year.place, light, moment, candidates);
   for (const Standing standing : {Standing::rising, Standing::at_its_best, Standing::last_chance}) {
     std::vector<Candidate> part;
     std::copy_if(candidates.begin(), candidates.end(), std::back_inserter(part),

@@ -111,11 +111,12 @@ bool told_beside_night_bars(const BlockContext& c) {
 std::string moons_key(const BlockContext& c, const Horizontal& jupiter, Ut moment) {
   std::string text;
   const auto add = [&](const char* key) { text += (text.empty() ? "" : " ") + c.words(key); };
-  if (!told_beside_night_bars(c)) add("show.moons-key");
+  const bool told = told_beside_night_bars(c);
+  if (!told) add("show.moons-key");
   if (jupiter.azimuth.degrees() < 70 || jupiter.azimuth.degrees() > 290) add("show.moons-north");
   const auto moons = jupiter_moons(c.ephemeris, to_tt(moment));
-  if (std::any_of(moons.begin(), moons.end(),
-                  [](const JupiterMoon& m) { return m.hidden || m.in_front; }))
+  if (!told && std::any_of(moons.begin(), moons.end(),
+                           [](const JupiterMoon& m) { return m.hidden || m.in_front; }))
     add("show.moons-missing");
   return text;
 }
