@@ -96,9 +96,8 @@ double rank_of(const Meeting& m) {
     rank = by_distance(b.sort == Target::Sort::cluster ? 1.5 : 2.2, 2.9, 3.7);
   rank += 0.01 * apart;
   if (!m.bare_eye) rank += 1.5;
-  // Nobody goes out for what the hills hide.
-  if (!m.look->above_skyline) rank += 2;
-  return std::min(rank, fact_rank - 0.1);
+  // Nobody sees what the hills hide.
+  return m.look->above_skyline ? std::min(rank, fact_rank - 0.1) : fact_rank;
 }
 
 // Wider pairs are no sight (about a binocular's field, common practice).
@@ -160,7 +159,8 @@ void write_group(HappeningWriter& w, Group group) {
                                    [](const Meeting* m) { return m->bare_eye; });
   if (optics) text += " " + w.words("with-optics");
   // Several at once are rarer than the nearest of them.
-  const double rank = rank_of(first) - (group.meetings.size() > 1 ? 0.3 : 0.0);
+  const double rank =
+      rank_of(first) - (group.meetings.size() > 1 && first.look->above_skyline ? 0.3 : 0.0);
   HappeningLine* line = w.by_night(first.look->at, rank, text,
                                    w.words("meeting-brief", {{"a", a}, {"b", brief_names}}));
   if (line != nullptr && !first.look->above_skyline) line->text += w.words("behind-skyline");

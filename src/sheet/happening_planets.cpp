@@ -8,13 +8,12 @@
 namespace duskleaf {
 namespace {
 
-constexpr double rank_bright_opposition = 1, rank_elongation = 2, rank_faint_opposition = 4,
-                 rank_hidden = 4.6;
+constexpr double rank_bright_opposition = 1, rank_elongation = 2, rank_faint_opposition = 4;
 
-/// Behind the hills it is told last of what could be seen.
+/// Nobody sees it behind the hills.
 void hide(const HappeningWriter& w, HappeningLine& line) {
   line.text += w.words("behind-skyline");
-  line.rank = std::max(line.rank, rank_hidden);
+  line.rank = fact_rank;
 }
 
 void write_opposition(HappeningWriter& w, const Event& event) {

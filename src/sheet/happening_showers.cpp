@@ -38,7 +38,7 @@ double rank_of(const SiteShower& s) {
   }
 }
 
-/// The shower's better hours while the Moon is down and the sky dark, where its best one has both.
+/// The shower's better hours while the Moon is down, if it is at the best, and the sky dark.
 struct Hours {
   Ut from, to;
   bool moon_sets_first = false, moon_rises_after = false;
@@ -47,36 +47,46 @@ struct Hours {
 
 Hours hours_of(const HappeningWriter& w, const SiteShower& s) {
   const SiteSky& sky = w.sky();
-  Hours h{s.best_from.value_or(*s.best), s.best_to.value_or(*s.best)};
-  const bool moon_matters = !s.moon_up && s.moon_lit >= thin_moon,
-             dark = sky.altitude(Body::sun, *s.best) <= astronomical_altitude;
+  const Hours whole{s.best_from.value_or(*s.best), s.best_to.value_or(*s.best)};
+  const Days step(10.0 / 1440), fine(1.0 / 86400), moment(2.0 / 1440), worth_it(45.0 / 1440);
+  const bool moon_matters = s.moon_lit >= thin_moon && !sky.moon_up(*s.best);
   const auto moon_allows = [&](Ut t) { return !moon_matters || !sky.moon_up(t); };
-  const auto serves = [&](Ut t) {
-    return moon_allows(t) && (!dark || sky.altitude(Body::sun, t) <= astronomical_altitude);
-  };
-  const Days step(10.0 / 1440), fine(1.0 / 86400);
-  /// From the best moment towards an end of the hours, as far as all serves.
-  const auto reach = [&](Ut end, int direction, bool& moon_ends) {
-    Ut inside = *s.best;
-    while (inside != end) {
-      Ut next = direction > 0 ? std::min(inside + step, end) : std::max(inside - step, end);
-      if (serves(next)) {
-        inside = next;
-        continue;
+  /// From a moment on to both ends of the hours, as far as Moon and Sun allow.
+  const auto stretch = [&](Ut middle, Angle sun_below) {
+    const auto serves = [&](Ut t) {
+      return moon_allows(t) && sky.altitude(Body::sun, t) <= sun_below;
+    };
+    const auto reach = [&](Ut end, int direction) {
+      Ut inside = middle;
+      while (inside != end) {
+        Ut next = direction > 0 ? std::min(inside + step, end) : std::max(inside - step, end);
+        if (serves(next)) {
+          inside = next;
+          continue;
+        }
+        while (std::abs((next - inside).count()) > fine.count()) {
+          const Ut half = inside + (next - inside) / 2;
+          (serves(half) ? inside : next) = half;
+        }
+        break;
       }
-      while (std::abs((next - inside).count()) > fine.count()) {
-        const Ut middle = inside + (next - inside) / 2;
-        (serves(middle) ? inside : next) = middle;
-      }
-      moon_ends = !moon_allows(next);
-      break;
-    }
-    return inside;
+      return inside;
+    };
+    Hours h{reach(whole.from, -1), reach(whole.to, +1)};
+    h.moon_sets_first = !moon_allows(h.from - moment);
+    h.moon_rises_after = !moon_allows(h.to + moment);
+    h.moonless = !sky.moon_up(middle) && !sky.moon_up(h.from) && !sky.moon_up(h.to);
+    return h;
   };
-  h.from = reach(h.from, -1, h.moon_sets_first);
-  h.to = reach(h.to, +1, h.moon_rises_after);
-  h.moonless = !s.moon_up && !sky.moon_up(h.from) && !sky.moon_up(h.to);
-  return h;
+  // The dark moment nearest to the best, which may be in the twilight.
+  std::optional<Ut> dark;
+  for (Ut t = whole.from; t <= whole.to; t = t + step)
+    if (moon_allows(t) && sky.altitude(Body::sun, t) <= astronomical_altitude &&
+        (!dark || std::abs((t - *s.best).count()) < std::abs((*dark - *s.best).count())))
+      dark = t;
+  if (dark)
+    if (const Hours h = stretch(*dark, astronomical_altitude); h.to - h.from >= worth_it) return h;
+  return stretch(*s.best, civil_altitude);
 }
 
 /// To ten minutes, inwards: the hours of a shower are no sharper.
@@ -151,7 +161,9 @@ void write_shower(HappeningWriter& w, const SiteShower& s) {
          {"dark", darker ? w.words("shower-dark", {{"n", n(honest(s.expected_dark))}}) : ""},
          {"source", from}});
   }
-  text += " " + verdict(w, s, hours);
+  // Hardly one an hour: why there are few needs no more words.
+  if (rate >= 2 || !shower.zhr || s.spoiler != Spoiler::few_meteors)
+    text += " " + verdict(w, s, hours);
   const Ut begins = ten_minutes(hours.from, true), ends = ten_minutes(hours.to, false);
   // Nobody knows whether one of no known rate comes.
   const double rank = shower.zhr ? rank_of(s) : fact_rank;

@@ -40,6 +40,28 @@ TEST(EclipsePanel, ATotalEclipseOfTheSunHasItsContactsAndTheCaution) {
   }
 }
 
+// What stood near the Sun then: Venus 15 degrees to the west and Jupiter 30 to the east (common
+// reports of that day; from memory), right and left of it at this latitude.
+TEST(EclipsePanel, TotalityNamesWhatShinesNearTheSun) {
+  MonthScene scene(41.0341, -83.6523, "America/New_York", 2024, 4);
+  scene.compute(true);
+  const Drawn d = panel(scene, 186);
+  EXPECT_THAT(d.text, HasSubstr("corona"));
+  EXPECT_THAT(d.text, testing::ContainsRegex("Venus 15° to the (lower )?right"));
+  EXPECT_THAT(d.text, testing::ContainsRegex("Jupiter (29|30|31)° to the (upper )?left"));
+  EXPECT_THAT(d.text, Not(HasSubstr("magnitude")));
+}
+
+// 2027 February 6 in the south of Spain: the Moon's penumbra barely reaches it (this project's own
+// figures, some 2 % at the Sun's setting): a line, no panel.
+TEST(EclipsePanel, ABiteTooSmallHasNone) {
+  MonthScene scene(36.1, -5.3, "Europe/Madrid", 2027, 2);
+  scene.compute(true);
+  ASSERT_FALSE(scene.happenings.solar_eclipses.empty());
+  EXPECT_LT(scene.happenings.solar_eclipses.front().best_obscuration, 0.05);
+  EXPECT_THAT(panel(scene).text, Not(HasSubstr("eclipse of the Sun")));
+}
+
 // The same page's 2023 April 20 at 4.6622 N 170.8101 E: the last contact comes with the Sun 4.4
 // degrees down. Pacific/Kosrae is UT + 11 h.
 TEST(EclipsePanel, ASunThatSetsEclipsedSaysWhatIsCut) {

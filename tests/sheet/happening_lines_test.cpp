@@ -150,7 +150,10 @@ TEST_F(HappeningDates, ClocksChangeByTheOldTime) {
     return l.text.find("forward") != std::string::npos;
   });
   ASSERT_NE(clocks, lines.end());
-  EXPECT_EQ(iso_date(clocks->date), "2027-03-28");
+  // In the night of the 27th, as all that comes before sunrise.
+  EXPECT_EQ(iso_date(clocks->date), "2027-03-27");
+  ASSERT_TRUE(clocks->after_midnight);
+  EXPECT_EQ(iso_date(*clocks->after_midnight), "2027-03-28");
   EXPECT_EQ(clocks->when, "01:00");
 }
 
@@ -160,7 +163,7 @@ TEST_F(HappeningDates, ALineSaysWhatWhenWhichWayAndHowHigh) {
   const auto lines = lines_of({meeting_at(universal(2027, 3, 3, 21, 30, 0))}, 3);
   ASSERT_EQ(lines.size(), 1u);
   EXPECT_EQ(lines[0].when, "21:30");
-  EXPECT_EQ(lines[0].text, "Moon 2.1° from Regulus, 34° up in the south-east.");
+  EXPECT_EQ(lines[0].text, "Moon 2.1° from Regulus, 34° up in the SE.");
 }
 
 TEST_F(HappeningDates, MeetingsOfOneHourShareALineAndUnseenOnesHaveNone) {
@@ -171,7 +174,7 @@ TEST_F(HappeningDates, MeetingsOfOneHourShareALineAndUnseenOnesHaveNone) {
                          meeting_at(at + Days(5), "moon", "spica")},
                         3);
   ASSERT_EQ(lines.size(), 2u);
-  EXPECT_EQ(lines[0].text, "Moon 3.4° from Mars and 2.1° from Regulus, 34° up in the south-east.");
+  EXPECT_EQ(lines[0].text, "Moon 3.4° from Mars and 2.1° from Regulus, 34° up in the SE.");
   EXPECT_THAT(lines[1].text, HasSubstr("Spica"));
 }
 
@@ -181,18 +184,54 @@ TEST_F(HappeningDates, WhatTheSkylineHidesSaysSo) {
   const auto lines = lines_of({hidden}, 3);
   ASSERT_EQ(lines.size(), 1u);
   EXPECT_THAT(lines[0].text, HasSubstr("Behind your hills."));
+  const auto open = lines_of({meeting_at(universal(2027, 3, 3, 21, 30, 0))}, 3);
+  EXPECT_GT(lines[0].rank, open.at(0).rank + 1) << "told after what can be seen";
+}
+
+TEST_F(HappeningDates, WidePairsAreNoMeetings) {
+  const Ut at = universal(2027, 3, 3, 21, 30, 0);
+  EXPECT_EQ(lines_of({meeting_at(at, "moon", "regulus", 5.9)}, 3).size(), 1u);
+  EXPECT_TRUE(lines_of({meeting_at(at, "moon", "regulus", 6.1)}, 3).empty());
+}
+
+// 2027-08-11 and 2027-08-12: Venus and Mercury pass behind the Sun (superior conjunctions; from
+// memory): whatever a meeting says, nobody sees them.
+TEST_F(HappeningDates, WhatThePlanetsBlockDoesNotShowMeetsNothing) {
+  const Ut at = universal(2027, 8, 12, 21, 0, 0);
+  EXPECT_EQ(lines_of({meeting_at(at, "moon", "antares")}, 8).size(), 1u);
+  EXPECT_TRUE(lines_of({meeting_at(at, "moon", "venus")}, 8).empty());
+  EXPECT_TRUE(lines_of({meeting_at(at, "moon", "mercury")}, 8).empty());
+}
+
+TEST_F(HappeningDates, TheBestSightIsMarkedAndTheGroupsOwnNightComesFirst) {
+  const Ut early = universal(2027, 3, 3, 21, 30, 0), late = universal(2027, 3, 20, 21, 30, 0);
+  const std::vector<Meeting> both = {meeting_at(early, "moon", "mars", 1.0),
+                                     meeting_at(late, "moon", "regulus", 5.0)};
+  auto lines = lines_of(both, 3);
+  ASSERT_EQ(lines.size(), 2u);
+  EXPECT_TRUE(lines[0].best);
+  EXPECT_FALSE(lines[1].best);
+  EXPECT_LT(lines[0].rank, lines[1].rank);
+  Session session;
+  session.when = std::vector<Date>{make_date(2027, 3, 20)};
+  scene_->site.sessions = {session};
+  lines = lines_of(both, 3);
+  scene_->site.sessions.clear();
+  ASSERT_EQ(lines.size(), 2u);
+  EXPECT_TRUE(lines[0].best) << "the rarest sight stays the best";
+  EXPECT_GT(lines[0].rank, lines[1].rank);
 }
 
 TEST_F(HappeningDates, OccultationsAreToldWhereTheyCanBeWatched) {
   const Ut at = universal(2027, 3, 3, 21, 14, 0);
   const auto contact = [&](Ut when, bool dark, double altitude, double sun) {
-    return LimbContact{when,
-                       {Angle::from_degrees(altitude), Angle::from_degrees(225)},
-                       Angle(),
-                       Angle(),
-                       dark,
-                       altitude > -0.5,
-                       Angle::from_degrees(sun)};
+    LimbContact c{};
+    c.at = when;
+    c.place = {Angle::from_degrees(altitude), Angle::from_degrees(225)};
+    c.dark_limb = dark;
+    c.up = altitude > -0.5;
+    c.sun_altitude = Angle::from_degrees(sun);
+    return c;
   };
   const auto occultation = [&](std::string_view name, bool first_dark, double altitude,
                                double sun) {
@@ -212,8 +251,7 @@ TEST_F(HappeningDates, OccultationsAreToldWhereTheyCanBeWatched) {
   auto lines = told(occultation("antares", true, 27, -30));
   ASSERT_EQ(lines.size(), 1u) << "the meeting is not told beside the occultation";
   EXPECT_EQ(lines[0].when, "21:14");
-  EXPECT_EQ(lines[0].text,
-            "The Moon’s dark edge covers Antares, until 22:20; 27° up in the south-west.");
+  EXPECT_EQ(lines[0].text, "The Moon’s dark edge covers Antares, until 22:20; 27° up in the SW.");
   lines = told(occultation("antares", true, 8, -30));
   EXPECT_THAT(lines.at(0).text, Not(HasSubstr("22:20"))) << "it has set by then";
   lines = told(occultation("antares", true, 27, 10));
@@ -279,7 +317,7 @@ INSTANTIATE_TEST_SUITE_P(
 
 // ---- choosing
 
-HappeningLine line_of(int day, int rank, bool own = false) {
+HappeningLine line_of(int day, double rank, bool own = false) {
   return {make_date(2027, 3, day),
           std::nullopt,
           ut_midnight(make_date(2027, 3, day)),
@@ -305,11 +343,18 @@ TEST(HappeningChoice, LeavesOutTheLeastImportantInOrderOfDate) {
 }
 
 TEST(HappeningChoice, ASingleOneIsToldRatherThanCountedAndOwnDatesStay) {
-  EXPECT_TRUE(choose_lines({line_of(1, 5), line_of(2, 0)}, 1).left_out.empty());
+  EXPECT_TRUE(choose_lines({line_of(1, 4), line_of(2, 0)}, 1).left_out.empty());
   const auto choice =
       choose_lines({line_of(1, 0), line_of(2, 0), line_of(3, 0, true), line_of(4, 0, true)}, 1);
   ASSERT_EQ(choice.shown.size(), 2u);
   EXPECT_TRUE(choice.shown[0].own && choice.shown[1].own);
+}
+
+TEST(HappeningChoice, WhatNobodySeesIsNamedLastAlone) {
+  const auto choice = choose_lines({line_of(1, fact_rank), line_of(2, 4)}, 100);
+  ASSERT_EQ(choice.shown.size(), 1u);
+  EXPECT_EQ(day_of(choice.shown[0].date), 2);
+  ASSERT_EQ(choice.left_out.size(), 1u);
 }
 
 TEST_F(HappeningDates, AFullMonthClosesWithTheCount) {

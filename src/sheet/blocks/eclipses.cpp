@@ -3,9 +3,12 @@
 #include <algorithm>
 #include <cmath>
 #include <functional>
+#include <string>
 
+#include "catalogue/stars.hpp"
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/eclipse_drawing.hpp"
+#include "sheet/eclipse_sky.hpp"
 #include "sheet/flow_text.hpp"
 #include "sheet/happening_writer.hpp"
 
@@ -26,6 +29,7 @@ struct Row {
 struct Panel {
   std::string title, aside;
   std::vector<Row> rows;
+  std::string lead;  // in larger type: how long a total or annular one lasts
   std::string text, caution;
   std::string drawn;  // under the drawing
 };
@@ -58,6 +62,25 @@ std::string date_of_day(const BlockContext& c, Date date) {
                                             {"date", c.words.day_month(date)}});
 }
 
+/// What stands near the Sun in totality: "Venus 15° to the left, Mercury 18° to the lower right".
+std::string near_sun(const HappeningWriter& w, Ut at) {
+  const BlockContext& c = w.context();
+  std::string list;
+  const std::vector<NearSun> things = bright_near_sun(w.sky(), at);
+  for (const NearSun& thing : things) {
+    if (!list.empty())
+      list += c.words(&thing == &things.back() ? "happening.list-and" : "happening.list-comma");
+    const long eighth = std::lround(thing.side.degrees() / 45.0) % 8;
+    list += c.words(
+        "eclipse.near-sun-item",
+        {{"name", thing.star < 0 ? w.body(thing.planet)
+                                 : std::string(stars()[static_cast<std::size_t>(thing.star)].name)},
+         {"degrees", c.words.number(thing.distance.degrees(), 0)},
+         {"side", c.words("eclipse.side-" + std::to_string(eighth))}});
+  }
+  return list.empty() ? list : " " + c.words("eclipse.near-sun", {{"list", list}});
+}
+
 Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   const BlockContext& c = w.context();
   const std::string kind(eclipse_name(e.kind));
@@ -74,10 +97,12 @@ Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   if (e.sunset) p.rows.push_back(edge(w, "sunset", Body::sun, *e.sunset));
   sort_rows(p.rows);
   if (central && e.central_begins->visible && e.central_ends->visible)
-    p.text = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
+    p.lead = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
                      {{"duration", w.minutes_seconds(e.central_begins->at, e.central_ends->at)}});
   else
     p.text = c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)}});
+  if (kind == "total" && e.best.visible)
+    p.text = c.words("eclipse.corona") + near_sun(w, e.best.at);
   if (!e.greatest.visible)
     p.text += " " + c.words("eclipse.solar-cut", {{"percent", w.percent(e.obscuration)}});
   p.caution = c.words("eclipse.sun-caution");
@@ -184,32 +209,54 @@ Point draw_contacts(const HappeningWriter& w, const Panel& p, double x, double y
   return {right, y + static_cast<double>(in_column) * pitch};
 }
 
+/// What a panel says, one paragraph below the other; returns the height used.
+double draw_words(const BlockContext& c, const Panel& p, bool with_caution, double x, double top,
+                  double width, std::vector<Mark>& out) {
+  Setter set(c, out);
+  double y = top;
+  if (with_caution && !p.caution.empty())
+    y += flow(set, x, y, width, {{p.caution, set.strong(set.body())}}, 1.22);
+  if (!p.lead.empty()) {
+    Style large = set.strong(set.body());
+    large.size_pt += 3;
+    y += flow(set, x, y, width, {{p.lead, large}}, 1.22);
+  }
+  std::vector<Run> runs;
+  if (!p.text.empty()) runs.push_back({p.text, set.body()});
+  runs.push_back({c.words("eclipse.drawn", {{"time", p.drawn}}), set.body()});
+  return y - top + flow(set, x, y, width, runs, 1.22);
+}
+
 /// The drawing at the left, the contacts beside it, and the words right of them where there is room
-/// for that, else below.
+/// for that, else below. Contacts in one column or two, whichever makes the panel lower.
 double draw_panel(const HappeningWriter& w, const Panel& p, const Draw& drawing, double x,
                   double top, double width, std::vector<Mark>& out) {
   const BlockContext& c = w.context();
   Setter set(c, out);
   double y = top + set.heading(x, top, width, p.title, p.aside);
   const bool wide = width > 115;
-  const double side = wide ? 15 : 18, table_x = x + side + 4;
-  const std::string drawn = c.words("eclipse.drawn", {{"time", p.drawn}});
+  const double side = wide ? 15 : 18, table_x = x + side + 4, between = 6;
   // The caution first: it is read before the times.
   if (!p.caution.empty() && !wide)
     y += flow(set, x, y, width, {{p.caution, set.strong(set.body())}}, 1.2) + 0.6;
   drawing(Box{x, y, side, side}, out);
-  const Point table = draw_contacts(w, p, table_x, y, wide && p.rows.size() > 4, out);
-  std::vector<Run> runs;
-  if (!p.caution.empty() && wide) runs.push_back({p.caution, set.strong(set.body())});
-  runs.push_back({p.text, set.body()});
-  runs.push_back({drawn, set.body()});
-  double bottom = table.y;
+  const auto rest = [&](bool split, std::vector<Mark>& marks) {
+    const Point table = draw_contacts(w, p, table_x, y, split, marks);
+    if (!wide)
+      return table.y + 0.4 +
+             draw_words(c, p, false, table_x, table.y + 0.4, x + width - table_x, marks);
+    const double text_x = table.x + between;
+    return std::max(table.y, y + draw_words(c, p, true, text_x, y, x + width - text_x, marks));
+  };
+  std::vector<Mark> one, two;
+  double bottom = rest(false, one);
   if (wide) {
-    const double text_x = table.x + 6;
-    bottom = std::max(bottom, y + flow(set, text_x, y, x + width - text_x, runs, 1.22));
-  } else {
-    bottom += 0.4 + flow(set, table_x, bottom + 0.4, x + width - table_x, runs, 1.2);
+    if (const double with_two = rest(true, two); with_two < bottom) {
+      bottom = with_two;
+      one.swap(two);
+    }
   }
+  out.insert(out.end(), one.begin(), one.end());
   return std::max(bottom, y + side) - top + 1.0;
 }
 

@@ -77,7 +77,7 @@ double draw_happenings(const BlockContext& c, const BlockOptions& options, const
   Style body = set.table();  // the narrow face: the list is long
   body.size_pt = c.theme.body_pt;
   const Style day = body;
-  const double day_right = area.x + 14.6, text_x = area.x + 17.8;
+  const double day_right = area.x + 14.6, text_x = area.x + 18.4;
   std::optional<HappeningLine> before;
   for (const HappeningLine& line : choice.shown) {
     const double baseline = y + body.size_pt * mm_per_pt * 0.95;
@@ -95,7 +95,7 @@ double draw_happenings(const BlockContext& c, const BlockOptions& options, const
     }
     before = line;
     if (line.best)
-      out.emplace_back(Fill{star({day_right + 1.7, baseline - 0.95}, 1.2), c.theme.black});
+      out.emplace_back(Fill{star({day_right + 1.9, baseline - 0.95}, 1.15), c.theme.black});
     std::vector<Run> runs;
     if (!line.when.empty()) runs.push_back({line.when, set.strong(body)});
     runs.push_back({line.text, body});
