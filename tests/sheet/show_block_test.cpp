@@ -87,10 +87,9 @@ TEST(ShowBlock, MoonAndBrightPlanetsComeFirst) {
   scene.site.sessions = {session};
   scene.compute(false, true);
   EXPECT_TRUE(show_moment(scene.context()).session);
-  // Full on February 20 (UT 23:24, common knowledge of the year's almanacs); Mars and Jupiter are
-  // about their oppositions.
-  const Drawn d = show(scene, "3");
-  for (const char* piece : {"Moon, full", "Jupiter, moons", "Mars"})
+  // Full on February 20, UT 23 h (from memory); Mars and Jupiter are about their oppositions.
+  const Drawn d = show(scene, "4");
+  for (const char* piece : {"Moon, full", "Jupiter, moons", "Mars", "Saturn"})
     EXPECT_THAT(d.text, HasSubstr(piece));
   EXPECT_THAT(d.text, HasSubstr("east is on the right"));
 }
