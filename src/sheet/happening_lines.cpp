@@ -152,9 +152,9 @@ void sort_by_date(std::vector<HappeningLine>& lines) {
   });
 }
 
-/// The best sight of the month, and a second one that is as rare as an eclipse or a great shower.
+/// The best sight of the month, and a second one as rare as a great shower or an opposition.
 void mark_best(std::vector<HappeningLine>& lines) {
-  constexpr double worth_it = 3, rare = 1;
+  constexpr double worth_it = 3, rare = 1.01;
   std::vector<HappeningLine*> sights;
   for (HappeningLine& line : lines)
     if (line.sight && line.rank < worth_it) sights.push_back(&line);
