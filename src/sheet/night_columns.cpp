@@ -10,7 +10,8 @@ namespace duskleaf {
 namespace {
 
 // mm
-constexpr double dates_width = 12.4, between = 2.1, moon_radius = 1.45, before_bars = 3.4;
+constexpr double dates_width = 12.4, moon_radius = 1.45, before_bars = 3.4;
+constexpr double most_between = 2.1, least_between = 1.2, wanted_bars = 50;
 
 /// A time, or a word in its place.
 using Cell = std::variant<CivilMinute, std::string>;
@@ -142,6 +143,7 @@ NightColumns night_columns(const BlockContext& c, const std::vector<const Night*
   };
   NightColumns columns;
   columns.times = time_columns(c, nights);
+  columns.axis = night_axis(c, nights);
   for (const Night* night : nights) {
     columns.lit.push_back(
         c.words("night-bars.percent", {{"n", c.words.number(100 * night->moon_lit, 0)}}));
@@ -151,34 +153,44 @@ NightColumns night_columns(const BlockContext& c, const std::vector<const Night*
       c.words(counts_darkest(nights) ? "night-bars.darkest-hours" : "night-bars.hours-1"),
       c.words("night-bars.hours-2")};
 
-  double x = area.x + dates_width;
-  for (TimeColumn& column : columns.times) {
-    const double width = std::max(widest(column.cells, cell), widest(column.head, cell));
-    column.centre = x + width / 2;
-    x += width + between;
-  }
-  columns.lit_right = x + widest(columns.lit, cell);
-  columns.moon = columns.lit_right + 1.2 + moon_radius;
-  x = columns.moon + moon_radius + between;
-  columns.dark_right = x + std::max(widest(columns.dark, strong), widest(columns.dark_head, cell));
-  x = columns.dark_right;
-  if (jupiter) {
-    double half = std::max(set.width(c.words("night-bars.jupiter-1"), cell),
-                           set.width(c.words("night-bars.jupiter-2"), cell)) /
-                  2;
-    double left = half, right = half;
-    for (const std::string& order : jupiter->order) {
-      const std::size_t planet = order.find('J');
-      if (planet == std::string::npos) continue;
-      left = std::max(left, set.width(order.substr(0, planet), cell) + 1.4);
-      right = std::max(right, set.width(order.substr(planet + 1), cell) + 1.4);
+  // Columns close up before the bars get short.
+  double between = most_between;
+  const auto place = [&] {
+    double x = area.x + dates_width;
+    for (TimeColumn& column : columns.times) {
+      const double width = std::max(widest(column.cells, cell), widest(column.head, cell));
+      column.centre = x + width / 2;
+      x += width + between;
     }
-    columns.jupiter = x + between + 0.6 + left;
-    x = columns.jupiter + right;
+    columns.lit_right = x + widest(columns.lit, cell);
+    columns.moon = columns.lit_right + 1.2 + moon_radius;
+    x = columns.moon + moon_radius + between;
+    columns.dark_right =
+        x + std::max(widest(columns.dark, strong), widest(columns.dark_head, cell));
+    x = columns.dark_right;
+    if (jupiter) {
+      double half = std::max(set.width(c.words("night-bars.jupiter-1"), cell),
+                             set.width(c.words("night-bars.jupiter-2"), cell)) /
+                    2;
+      double left = half, right = half;
+      for (const std::string& order : jupiter->order) {
+        const std::size_t planet = order.find('J');
+        if (planet == std::string::npos) continue;
+        left = std::max(left, set.width(order.substr(0, planet), cell) + 1.4);
+        right = std::max(right, set.width(order.substr(planet + 1), cell) + 1.4);
+      }
+      columns.jupiter = x + between + 0.6 + left;
+      x = columns.jupiter + right;
+    }
+    columns.axis.x = x + before_bars;
+    columns.axis.width = area.right() - columns.axis.x;
+  };
+  place();
+  if (const double missing = wanted_bars - columns.axis.width; missing > 0) {
+    const auto gaps = static_cast<double>(columns.times.size() + (jupiter ? 3 : 2));
+    between = std::max(least_between, between - missing / gaps);
+    place();
   }
-  columns.axis = night_axis(c, nights);
-  columns.axis.x = x + before_bars;
-  columns.axis.width = area.right() - columns.axis.x;
   return columns;
 }
 

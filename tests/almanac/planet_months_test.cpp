@@ -323,9 +323,9 @@ TEST(PlanetMonth, LengthsAndHeightsInWords) {
                          Row{84, 90}, Row{104, 90}, Row{106, 120}, Row{170, 180}})
     EXPECT_EQ(spoken(row.minutes), row.spoken) << row.minutes;
   EXPECT_EQ(height_word(Angle::from_degrees(14.9)), HeightWord::low);
-  EXPECT_EQ(height_word(Angle::from_degrees(15)), HeightWord::fairly_low);
-  EXPECT_EQ(height_word(Angle::from_degrees(30)), HeightWord::halfway);
-  EXPECT_EQ(height_word(Angle::from_degrees(60)), HeightWord::high);
+  EXPECT_EQ(height_word(Angle::from_degrees(15.1)), HeightWord::fairly_low);
+  EXPECT_EQ(height_word(Angle::from_degrees(30.1)), HeightWord::halfway);
+  EXPECT_EQ(height_word(Angle::from_degrees(60.1)), HeightWord::high);
   EXPECT_EQ(height_word(Angle::from_degrees(75)), HeightWord::overhead);
 }
 

@@ -2,8 +2,10 @@
 // or at some sites. Jupiter was opposite the Sun on 2027 February 11 (UT) and beside it on August
 // 31 (tests/reference/configurations_de431.csv), so evenings show it in March and not in September.
 #include <cmath>
+#include <fmt/format.h>
 #include <gmock/gmock.h>
 #include <gtest/gtest.h>
+#include <map>
 
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/jupiter_column.hpp"
@@ -152,7 +154,8 @@ TEST(NightBars, HaveTheHillsTimesBesideTheStandardOnes) {
       ASSERT_TRUE(day.gone && night->sunset);
       EXPECT_LT(*day.gone, *night->sunset);
       const auto shown = [&](Ut t) {
-        return testing::Contains(south().words.time(south().site.place.zone.civil(t)));
+        const CivilMinute time = south().site.place.zone.civil(t);  // "sets pm": 5:07
+        return testing::Contains(fmt::format("{}:{:02}", time.hour() - 12, time.minute()));
       };
       EXPECT_THAT(words_of(hills), shown(*day.gone));
       EXPECT_THAT(words_of(hills), shown(*night->sunset));
@@ -170,6 +173,86 @@ TEST(NightBars, ShrinkToTheirLeastHeight) {
       EXPECT_LE(draw_night_bars(context, {}, {12, 30, 186, least}, marks), least + 0.001);
       EXPECT_LT(least, 115);
     }
+}
+
+// Where all of a column's times are of one half of the day its head says so.
+TEST(NightBars, NameTheHalfOfTheDayOnce) {
+  std::vector<Mark> marks;
+  draw_night_bars(south().context(6), {}, {12, 30, 186, 130}, marks);
+  const auto words = words_of(marks);
+  EXPECT_THAT(words, testing::IsSupersetOf({std::string("sets pm"), std::string("from pm"),
+                                            std::string("until am"), std::string("rises am")}));
+  const Night& night = *nights_of(south(), 6).front();
+  const CivilMinute sets = south().site.place.zone.civil(*night.sunset);
+  EXPECT_THAT(words, testing::Contains(fmt::format("{}:{:02}", sets.hour() - 12, sets.minute())));
+}
+
+// At 54.2 degrees north the Sun is never 18 degrees down in June (its declination is above 17.8).
+TEST(NightBars, CallNothingDarkInMonthsOfTwilight) {
+  std::vector<Mark> june, march;
+  draw_night_bars(north().context(6), {}, {12, 30, 186, 130}, june);
+  draw_night_bars(north().context(3), {}, {12, 30, 186, 130}, march);
+  EXPECT_THAT(words_of(june),
+              testing::IsSupersetOf({std::string("darkest"), std::string("darkest,")}));
+  EXPECT_THAT(words_of(june), testing::Not(testing::Contains("dark,")));
+  EXPECT_THAT(words_of(march), testing::Contains("dark,"));
+}
+
+// Jupiter stands highest in the north of the southern site, in the south of the northern one.
+TEST(NightBars, TellWhereEastIsSouthOfTheEquator) {
+  std::vector<Mark> northern, southern;
+  draw_night_bars(north().context(3), {}, {12, 30, 186, 130}, northern);
+  draw_night_bars(south().context(3), {}, {12, 30, 186, 130}, southern);
+  const auto told = testing::Contains(testing::StartsWith(north().words("night-bars.east-right")));
+  EXPECT_THAT(words_of(northern), testing::Not(told));
+  EXPECT_THAT(words_of(southern), told);
+}
+
+TEST(NightBars, LabelTheHoursEvenly) {
+  for (Desk* desk : {&north(), &south()})
+    for (int month = 1; month <= 12; ++month) {
+      std::vector<Mark> marks;
+      draw_night_bars(desk->context(month), {}, {12, 30, 186, 130}, marks);
+      std::map<std::string, int> hours;
+      for (int hour = 13; hour < 36; ++hour)
+        hours[hour == 24 ? desk->words("night-bars.midnight") : desk->words.whole_hour(hour)] =
+            hour;
+      std::vector<std::pair<double, double>> labels;  // from left to right: left end, right end
+      std::vector<int> named;
+      for (const Text& text : texts_of(marks))
+        if (const auto hour = hours.find(text.words); hour != hours.end()) {
+          named.push_back(hour->second);
+          labels.emplace_back(text.start.x,
+                              text.start.x + desk->type.width(text.words, text.face, text.size_pt));
+        }
+      ASSERT_GE(named.size(), 3u) << month;
+      for (std::size_t i = 1; i < named.size(); ++i) {
+        EXPECT_EQ(named[i] - named[i - 1], named[1] - named[0]) << month;
+        EXPECT_GT(labels[i].first - labels[i - 1].second, 2) << month;
+      }
+      EXPECT_LT(labels.back().second, 198.01);
+    }
+}
+
+TEST(ConstellationTable, LeavesOutWhatIsAskedOfIt) {
+  const BlockContext context = north().context(3);
+  std::vector<double> heights;
+  std::vector<std::string> pages;
+  for (const char* level : {"0", "1", "2", "3"}) {
+    std::vector<Mark> marks;
+    heights.push_back(
+        draw_constellations(context, {{{"leave-out", level}}}, {12, 30, 186, 90}, marks));
+    pages.emplace_back();
+    for (const std::string& piece : words_of(marks)) pages.back() += piece + " ";
+  }
+  EXPECT_THAT(heights, testing::ElementsAre(testing::_, testing::Lt(heights[0]),
+                                            testing::Le(heights[1]), testing::Lt(heights[2] / 2)));
+  EXPECT_THAT(pages[0], testing::HasSubstr(north().words("constellations.below")));
+  EXPECT_THAT(pages[1], testing::Not(testing::HasSubstr(north().words("constellations.below"))));
+  // Orion in March: an evening sight of the winter months.
+  EXPECT_THAT(pages[2], testing::ContainsRegex("Orion .*Dec–"));
+  EXPECT_THAT(pages[3], testing::HasSubstr("Orion"));
+  EXPECT_THAT(pages[3], testing::Not(testing::HasSubstr("Dec–")));
 }
 
 }  // namespace

@@ -25,7 +25,7 @@ PlanetWindow window(double from, WindowEdge begins, double to, WindowEdge ends) 
   w.to = clock(to);
   w.begins = begins;
   w.ends = ends;
-  w.at_from = w.at_best = at(30, 225);
+  w.at_from = w.at_best = at(35, 225);
   w.at_to = at(5, 270);
   w.sunset = clock(18);
   w.sunrise = clock(30);
@@ -77,7 +77,7 @@ TEST(PlanetWords, LowInTheWestAfterSunset) {
 TEST(PlanetWords, FromNightfallUntilItSets) {
   PlanetWindow w = window(18.5, twilight, 23.2, height);
   w.sets = clock(23 + 40.0 / 60);
-  w.at_from = at(60, 180);
+  w.at_from = at(61, 180);
   EXPECT_EQ(told(month(PlanetSight::evening, w)), "High in the south at nightfall, sets 23:40.");
   w.highest = clock(21);
   w.at_highest = at(40, 180);

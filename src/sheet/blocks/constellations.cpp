@@ -11,7 +11,7 @@
 namespace duskleaf {
 namespace {
 
-constexpr double row_pitch = 2.88, column_gap = 4.5, least_gap = 1.2, most_gap = 4.0;  // mm
+constexpr double row_pitch = 2.88, column_gap = 4.0, least_gap = 1.2, most_gap = 4.0;  // mm
 
 std::string name_of(const BlockContext& c, const ConstellationEvening& row) {
   const Figure& figure = figures()[static_cast<std::size_t>(row.figure)];
@@ -115,56 +115,65 @@ std::string phase_title(const BlockContext& c, FigurePhase phase) {
   return c.words(fmt::format("constellations.phase-{}", static_cast<int>(phase)));
 }
 
-/// One of the three columns. Returns the height used.
-double draw_phase(const BlockContext& c, Setter& set, FigurePhase phase, bool with_low,
-                  const Box& area) {
-  Style cell = set.table();
-  cell.size_pt = c.theme.table_pt;
-  Style head = cell;
-  head.ink = c.theme.soft;
-  const Style title{Face::bold, 8, c.theme.blue};
-  const Row heads{
-      {phase_title(c, phase), c.words("constellations.where"), c.words("constellations.highest"),
-       c.words("constellations.sets"), c.words("constellations.months")},
-      false};
-  std::vector<Row> rows;
+/// One of the three tables, with its columns as wide as their widest cells.
+struct PhaseTable {
+  std::vector<Row> rows;  // the heads first
+  std::array<double, cells> widths{};
+  double sum() const { return std::accumulate(widths.begin(), widths.end(), 0.0); }
+  double least_width() const { return sum() + least_gap * (cells - 1); }
+};
+
+struct TableStyles {
+  Style title, head, cell, strong;
+  const Style& of(std::size_t row, std::size_t k, bool bold) const {
+    return row == 0 ? (k == 0 ? title : head) : k == 0 && bold ? strong : cell;
+  }
+};
+
+PhaseTable phase_table(const BlockContext& c, const Setter& set, const TableStyles& styles,
+                       FigurePhase phase, bool with_low) {
+  PhaseTable table;
+  table.rows.push_back(
+      {{phase_title(c, phase), c.words("constellations.where"), c.words("constellations.highest"),
+        c.words("constellations.sets"), c.words("constellations.months")},
+       false});
   const Months bright = bright_months(c);
   for (const ConstellationEvening* e : rows_of(c, phase, with_low))
-    rows.push_back(row_of(c, *e, bright));
+    table.rows.push_back(row_of(c, *e, bright));
+  for (std::size_t i = 0; i < table.rows.size(); ++i)
+    for (std::size_t k = 0; k < cells; ++k)
+      table.widths[k] = std::max(
+          table.widths[k], set.width(table.rows[i].text[k], styles.of(i, k, table.rows[i].strong)));
+  return table;
+}
 
-  // Each column as wide as its widest cell; what is left over goes between them.
-  std::array<double, cells> widths{};
-  for (std::size_t k = 0; k < cells; ++k) {
-    widths[k] = set.width(heads.text[k], k == 0 ? title : head);
-    for (const Row& row : rows)
-      widths[k] = std::max(widths[k],
-                           set.width(row.text[k], k == 0 && row.strong ? set.strong(cell) : cell));
-  }
-  // Months with a break between them may be set smaller, names may not.
-  const double others = std::accumulate(widths.begin(), widths.end() - 1, 0.0);
-  widths[cells - 1] = std::min(widths[cells - 1], area.width - others - least_gap * (cells - 1));
-  const double sum = std::accumulate(widths.begin(), widths.end(), 0.0);
-  const double gap = std::clamp((area.width - sum) / (cells - 1), least_gap, most_gap);
+/// Returns the height used.
+double draw_phase(const BlockContext& c, Setter& set, const TableStyles& styles, PhaseTable table,
+                  const Box& area) {
+  // Where room is short the months are set smaller, and names where that is not enough.
+  const double short_of = std::max(0.0, table.least_width() - area.width);
+  double& months = table.widths[cells - 1];
+  const double taken =
+      std::min(short_of, months - set.width(table.rows[0].text[cells - 1], styles.head));
+  months -= taken;
+  table.widths[0] -= short_of - taken;
+  const double gap = std::clamp((area.width - table.sum()) / (cells - 1), least_gap, most_gap);
   std::array<double, cells> right{};
-  for (std::size_t k = cells; k-- > 1;)
-    right[k] = k + 1 == cells ? area.x + std::min(area.width, sum + gap * (cells - 1))
-                              : right[k + 1] - widths[k + 1] - gap;
-  const double months_room = right[cells - 1] - right[cells - 2] - least_gap;
-
+  right[0] = area.x + table.widths[0];
+  for (std::size_t k = 1; k < cells; ++k) right[k] = right[k - 1] + gap + table.widths[k];
   double y = area.y;
-  set.left(area.x, y + 2.6, heads.text[0], title);
-  for (std::size_t k = 1; k < cells; ++k) set.right(right[k], y + 2.6, heads.text[k], head);
-  y += 3.3;
-  if (rows.empty()) set.left(area.x, y + 2.5, c.words("constellations.none"), head);
-  for (const Row& row : rows) {
-    const double baseline = y + 2.4;
-    set.left(area.x, baseline, row.text[0], row.strong ? set.strong(cell) : cell);
-    for (std::size_t k = 1; k + 1 < cells; ++k) set.right(right[k], baseline, row.text[k], cell);
-    const std::string& months = row.text[cells - 1];
-    const double width = std::min(months_room, set.width(months, cell));
-    set.fitted(right[cells - 1] - width, baseline, months, cell, months_room);
-    y += row_pitch;
+  for (std::size_t i = 0; i < table.rows.size(); ++i) {
+    const double baseline = i == 0 ? y + 2.6 : y + 2.4;
+    for (std::size_t k = 0; k < cells; ++k) {
+      const std::string& text = table.rows[i].text[k];
+      const Style& style = styles.of(i, k, table.rows[i].strong);
+      const double width = std::min(table.widths[k] + 0.01, set.width(text, style));
+      set.fitted(k == 0 ? area.x : right[k] - width, baseline, text, style, table.widths[k] + 0.01);
+    }
+    y += i == 0 ? 3.3 : row_pitch;
   }
+  if (table.rows.size() == 1)
+    set.left(area.x, y + 2.5, c.words("constellations.none"), styles.head);
   return y - area.y;
 }
 
@@ -202,10 +211,21 @@ double draw_constellations(const BlockContext& c, const BlockOptions& options, c
     return y + flow(set, area.x, y, area.width, rest, 1.18) - area.y;
   }
   const bool with_low = left_out < 2;
-  const double width = (area.width - 2 * column_gap) / 3;
-  double used = 0, x = area.x;
+  Style cell = set.table();
+  cell.size_pt = c.theme.table_pt;
+  Style head = cell;
+  head.ink = c.theme.soft;
+  const TableStyles styles{{Face::bold, 8, c.theme.blue}, head, cell, set.strong(cell)};
+  std::vector<PhaseTable> tables;
+  double spare = area.width - 2 * column_gap;
   for (const FigurePhase phase : phases) {
-    used = std::max(used, draw_phase(c, set, phase, with_low, {x, y, width, area.height}));
+    tables.push_back(phase_table(c, set, styles, phase, with_low));
+    spare -= tables.back().least_width();
+  }
+  double used = 0, x = area.x;
+  for (const PhaseTable& table : tables) {
+    const double width = table.least_width() + spare / 3;
+    used = std::max(used, draw_phase(c, set, styles, table, {x, y, width, area.height}));
     x += width + column_gap;
   }
   y += used + 0.3;
