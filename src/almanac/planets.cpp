@@ -61,7 +61,7 @@ bool bare_eye_visible(Body planet, double magnitude, Angle apparent_altitude,
 
 Angle signed_elongation(const YearEphemeris& ephemeris, Body planet, Tt t) {
   const Eigen::Vector3d a = ephemeris.apparent(planet, t), b = ephemeris.apparent(Body::sun, t);
-  const Angle distance = arctan2(a.cross(b).norm(), a.dot(b));
+  const Angle distance = angle_between(a, b);
   const Angle east =
       (ephemeris.ecliptic_longitude(planet, t) - ephemeris.ecliptic_longitude(Body::sun, t))
           .centred();

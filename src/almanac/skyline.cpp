@@ -8,12 +8,13 @@
 #include <algorithm>
 #include <cmath>
 
+#include "ephemeris/constants.hpp"
 #include "events/search.hpp"
 
 namespace duskleaf {
 namespace {
 
-constexpr Angle sun_radius_at_1_au = Angle::from_arcseconds(959.63);
+constexpr Angle sun_radius_at_1_au = Angle::from_radians(sun_semidiameter);
 constexpr Days step(20.0 / 1440.0);
 // The altitude's curvature leaves a chord of `step` by 0.06 degree at most (15 degrees an hour); a
 // steep piece of skyline by more, as the azimuth is curved too.

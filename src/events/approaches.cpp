@@ -14,6 +14,7 @@
 #include <cmath>
 
 #include "events/search.hpp"
+#include "sky/horizon.hpp"
 
 namespace duskleaf {
 namespace {
@@ -34,11 +35,6 @@ struct Company {
 constexpr Company moon_company{true, 0.02, Angle::from_degrees(8.0)},
     planet_company{false, 0.1, Angle::from_degrees(2.5)};
 
-bool is_body(const Target& t) { return t.sort == Target::Sort::body; }
-bool is_moon(const Target& t) { return is_body(t) && t.body == Body::moon; }
-
-Angle between(const Vector& a, const Vector& b) { return arctan2(a.cross(b).norm(), a.dot(b)); }
-
 class Search {
  public:
   Search(const YearEphemeris& ephemeris, const Company& company)
@@ -55,22 +51,20 @@ class Search {
     }
     const int n = static_cast<int>(targets().size());
     for (int a = 0; a < n; ++a) {
-      const Target& first = target(a);
-      if (!is_body(first) || is_moon(first) != company_.with_moon) continue;
+      const Target& first = target_at(a);
+      if (!first.is_body() || first.is_moon() != company_.with_moon) continue;
       for (int b = a + 1; b < n; ++b)
-        if (target(b).meets) search_pair(a, b, found);
+        if (target_at(b).meets) search_pair(a, b, found);
     }
   }
 
  private:
-  static const Target& target(int i) { return targets()[static_cast<std::size_t>(i)]; }
-
   Tt shifted(Ut t, double days) const {
     return Tt(
         Days(std::clamp(to_tt(t).days() + days, ephemeris_.from().days(), ephemeris_.to().days())));
   }
   Vector direction(int i, Tt t) const {
-    return apparent_direction(ephemeris_, target(i), t).normalized();
+    return apparent_direction(ephemeris_, target_at(i), t).normalized();
   }
   Directions all_directions(Ut at, double shift) const {
     const Tt t = shifted(at, shift);
@@ -78,11 +72,11 @@ class Search {
     Directions directions;
     directions.reserve(targets().size());
     for (const Target& x : targets()) {
-      if (!x.meets || (is_moon(x) && !company_.with_moon))
+      if (!x.meets || (x.is_moon() && !company_.with_moon))
         directions.emplace_back(Vector::Zero());
       else
-        directions.push_back(is_body(x) ? ephemeris_.apparent(x.body, t).normalized()
-                                        : apparent_direction(frame, x));
+        directions.push_back(x.is_body() ? ephemeris_.apparent(x.body, t).normalized()
+                                         : apparent_direction(frame, x));
     }
     return directions;
   }
@@ -126,9 +120,9 @@ class Search {
     const Tt t = to_tt(at);
     const Vector p = direction(a, t), q = direction(b, t),
                  sun = ephemeris_.apparent(Body::sun, t).normalized();
-    const Angle separation = between(p, q);
-    if (separation < greatest_separation && between(p, sun) >= least_from_sun &&
-        between(q, sun) >= least_from_sun)
+    const Angle separation = angle_between(p, q);
+    if (separation < greatest_separation && angle_between(p, sun) >= least_from_sun &&
+        angle_between(q, sun) >= least_from_sun)
       found.push_back({at, a, b, separation});
   }
 
@@ -153,8 +147,8 @@ std::vector<Approach> closest_approaches(const YearEphemeris& ephemeris, Ut from
 }
 
 Event approach_event(const Approach& approach) {
-  return {EventKind::closest_approach, targets()[static_cast<std::size_t>(approach.a)].body,
-          approach.at, approach.separation.degrees(), pair_name(approach.a, approach.b)};
+  return {EventKind::closest_approach, target_at(approach.a).body, approach.at,
+          approach.separation.degrees(), pair_name(approach.a, approach.b)};
 }
 
 }  // namespace duskleaf

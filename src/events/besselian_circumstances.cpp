@@ -13,6 +13,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "ephemeris/constants.hpp"
 #include "events/besselian_elements.hpp"
 #include "events/search.hpp"
 #include "sky/moon_look.hpp"
@@ -38,7 +39,7 @@ class Ground {
       : elements_(elements),
         // With the longitude in the sidereal time's place: axes fixed to the Earth, x to Greenwich.
         place_(observer_vector_au(observer.latitude, observer.elevation_m, observer.longitude) /
-               besselian_unit_au),
+               earth_radius_au),
         from_axis_(std::hypot(place_.x(), place_.y())),
         longitude_(observer.longitude.radians()) {}
 
@@ -194,14 +195,11 @@ std::optional<SiteSolarEclipse> at_site(const SiteSky& sky, const SolarEclipse& 
   s.best_obscuration = seen.obscuration;
   s.moon_radius = drawn.moon_radius();
   s.moon_distance = drawn.moon_distance();
-  const Angle sidereal = sky.local_sidereal_time(s.best.at);
-  const Eigen::Vector3d zenith(cos(here.latitude) * cos(sidereal),
-                               cos(here.latitude) * sin(sidereal), sin(here.latitude));
   const auto seen_from_here = [&](Body body) {
     return topocentric(ephemeris, body, here.latitude, here.longitude, here.elevation_m, s.best.at);
   };
-  s.moon_from_zenith =
-      position_angle(seen_from_here(Body::sun), seen_from_here(Body::moon), zenith);
+  s.moon_from_zenith = position_angle(seen_from_here(Body::sun), seen_from_here(Body::moon),
+                                      zenith(here.latitude, sky.local_sidereal_time(s.best.at)));
   return s;
 }
 

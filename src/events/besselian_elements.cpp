@@ -30,15 +30,15 @@ constexpr double half_span_hours = 4.0;
 constexpr int points = 9, coefficients = 4;
 constexpr double turn = 2.0 * std::numbers::pi;
 constexpr double k1 = 0.272488, k2 = 0.272281;
-const double sun_radius = std::sin(959.63 * arcsecond) / besselian_unit_au;
+const double sun_radius = std::sin(sun_semidiameter) / earth_radius_au;
 
 struct Cones {
   double x, y, l1, l2, d, mu, tan_f1, tan_f2;
 };
 
 Cones cones_at(const YearEphemeris& ephemeris, Tt t) {
-  const Eigen::Vector3d sun = ephemeris.apparent(Body::sun, t) / besselian_unit_au,
-                        moon = ephemeris.apparent(Body::moon, t) / besselian_unit_au;
+  const Eigen::Vector3d sun = ephemeris.apparent(Body::sun, t) / earth_radius_au,
+                        moon = ephemeris.apparent(Body::moon, t) / earth_radius_au;
   const Eigen::Vector3d between = sun - moon;
   const double g = between.norm();
   const Eigen::Vector3d axis = between / g;

@@ -4,10 +4,6 @@
 
 namespace duskleaf {
 
-/// The Earth's equatorial radius in au (IERS Conventions 2010: 6378.1366 km; IAU 2012 au): unit of
-/// the elements.
-inline constexpr double besselian_unit_au = 6378.1366 / 149597870.7;
-
 /// Elements for four hours on either side of `t0`, fitted to the ephemeris, which must reach there
 /// (else std::out_of_range). How well: besselian_elements.cpp.
 BesselianElements besselian_elements(const YearEphemeris&, Tt t0);

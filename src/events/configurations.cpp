@@ -13,9 +13,9 @@
 #include "events/configurations.hpp"
 
 #include <algorithm>
-#include <cmath>
 
 #include "events/search.hpp"
+#include "sky/horizon.hpp"
 
 namespace duskleaf {
 namespace {
@@ -38,8 +38,7 @@ Base base_about(const YearEphemeris& ephemeris, Ut t, double half_base) {
 }
 
 Angle from_sun(const YearEphemeris& ephemeris, Body planet, Tt t) {
-  const Eigen::Vector3d a = ephemeris.apparent(planet, t), b = ephemeris.apparent(Body::sun, t);
-  return arctan2(a.cross(b).norm(), a.dot(b));
+  return angle_between(ephemeris.apparent(planet, t), ephemeris.apparent(Body::sun, t));
 }
 
 }  // namespace

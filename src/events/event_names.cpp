@@ -1,5 +1,4 @@
 // Spelling of events in the tables: this project's own.
-#include <algorithm>
 #include <array>
 
 #include "events/events.hpp"

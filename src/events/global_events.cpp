@@ -9,13 +9,13 @@
 #include <algorithm>
 #include <cmath>
 
+#include "ephemeris/constants.hpp"
 #include "events/events.hpp"
 #include "events/search.hpp"
 
 namespace duskleaf {
 namespace {
 
-constexpr double au_km = 149597870.7;  // IAU 2012 resolution B2
 constexpr double half_base =
     0.01;  // days; half the base of the distance's rate, whose bias is then below 1 s
 
@@ -60,7 +60,7 @@ void add_apsides(const YearEphemeris& ephemeris, Ut from, Ut to, std::vector<Eve
       events.push_back(
           {c.rising ? nearest : farthest, body, c.at, distance(to_tt(c.at).days()) * unit});
   };
-  add(Body::moon, Days(1), au_km, EventKind::perigee, EventKind::apogee);
+  add(Body::moon, Days(1), km_per_au, EventKind::perigee, EventKind::apogee);
   add(Body::sun, Days(5), 1.0, EventKind::perihelion, EventKind::aphelion);
 }
 

@@ -28,9 +28,7 @@
 namespace duskleaf {
 namespace {
 
-constexpr double earth_radius_au = 6378.1366 / km_per_au;  // IERS Conventions 2010
-constexpr double enlargement = 1.01, moon_k = 0.2725076;
-constexpr double sun_semidiameter = 959.63 * arcsecond;  // at 1 au (Auwers 1891)
+constexpr double enlargement = 1.01;
 // Past 1.6 degrees of latitude at full Moon the penumbra is missed.
 constexpr double largest_latitude_degrees = 1.7;
 constexpr double half_span_days = 4.0 / 24.0, tolerance_days = 0.005 / 86400.0;
@@ -214,9 +212,8 @@ SiteLunarEclipse at_site(const SiteSky& sky, const LunarEclipse& e) {
   const Eigen::Vector3d centre = -ephemeris.apparent(Body::sun, drawn).normalized() * moon.norm();
   const Angle sidereal = sky.local_sidereal_time(s.drawn_at);
   const Eigen::Vector3d site = observer_vector_au(here.latitude, here.elevation_m, sidereal);
-  const Eigen::Vector3d zenith(cos(here.latitude) * cos(sidereal),
-                               cos(here.latitude) * sin(sidereal), sin(here.latitude));
-  s.shadow_from_zenith = position_angle(moon - site, centre - site, zenith);
+  s.shadow_from_zenith =
+      position_angle(moon - site, centre - site, zenith(here.latitude, sidereal));
   return s;
 }
 

@@ -22,12 +22,12 @@ namespace {
 
 using Vector = Eigen::Vector3d;
 
-constexpr double moon_radius_au = 0.2725076 * 6378.137 / km_per_au;  // GRS 80 equatorial radius
+constexpr double moon_radius_au = moon_k * earth_radius_au;
 // The Moon's parallax and radius together are at most 1.31 degree.
-constexpr double geocentric_reach = 1.35 / 57.29578;
+constexpr double geocentric_reach = Angle::from_degrees(1.35).radians();
 constexpr Days coarse(0.25);
 // Between coarse samples the Moon leaves a great circle by less than this, radians.
-constexpr double path_bend = 0.05 / 57.29578;
+constexpr double path_bend = Angle::from_degrees(0.05).radians();
 constexpr Days fine(20.0 / 1440.0);
 constexpr Seconds tolerance(0.01);
 
@@ -66,13 +66,10 @@ class Encounter {
   LimbContact contact(Ut t) const {
     const Vector moon = seen(Body::moon, t), sun = seen(Body::sun, t), other = target(t);
     const Angle sidereal = sky_.local_sidereal_time(t), latitude = sky_.observer().latitude;
-    const Vector zenith(cos(latitude) * cos(sidereal), cos(latitude) * sin(sidereal),
-                        sin(latitude));
     LimbContact c;
     c.at = t;
     c.place = to_horizontal(other, sidereal, latitude);
     c.position_angle = position_angle(moon, other, Vector::UnitZ());
-    c.from_zenith = position_angle(moon, other, zenith);
     const Angle from_bright = c.position_angle - position_angle(moon, sun, Vector::UnitZ());
     c.dark_limb = cos(from_bright) < 0.0;
     c.up = c.place.altitude > star_rise_altitude;
@@ -152,7 +149,7 @@ MoonPath moon_path(const YearEphemeris& ephemeris, Ut from, Ut to) {
 template <class F>
 void add_visits(const MoonPath& path, const F& direction, std::vector<Visit>& visits) {
   // The Moon and a target part by at most 4 degrees in a lap.
-  const double near = std::cos(geocentric_reach + 4.2 / 57.29578);
+  const double near = std::cos(geocentric_reach + Angle::from_degrees(4.2).radians());
   for (std::size_t i = 0; i + 1 < path.times.size(); ++i) {
     const Vector here = direction(i);
     if (path.moon[i].dot(here) < near) continue;

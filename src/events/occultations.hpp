@@ -13,7 +13,6 @@ struct LimbContact {
   Ut at;
   Horizontal place;      // of the target, topocentric, no refraction
   Angle position_angle;  // of the point on the Moon's edge, from celestial north through east
-  Angle from_zenith;     // the same point, counterclockwise from the zenith
   bool dark_limb;        // over 90 degrees from the middle of the bright limb
   bool up;               // the target stands above -34'
   Angle sun_altitude;

@@ -8,7 +8,6 @@
 #include "events/showers.hpp"
 
 #include <algorithm>
-#include <cmath>
 #include <numbers>
 
 #include "events/search.hpp"

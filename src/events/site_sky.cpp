@@ -8,13 +8,12 @@
 #include <cmath>
 #include <numbers>
 
+#include "ephemeris/constants.hpp"
 #include "events/search.hpp"
 
 namespace duskleaf {
 
 namespace {
-constexpr double earth_radius_au =
-    6378.1366 / 149597870.7;  // equatorial radius (IERS Conventions 2010); IAU 2012 au, km
 constexpr double moon_limit_parallax = 0.7275;
 }  // namespace
 

@@ -1,7 +1,7 @@
 // Contacts of a planet's disc with the Sun's: J. Meeus, Transits (1989), ch. 2; here with vectors,
 // centre to centre, from the Earth's centre or the site. Radii: Sun 959.63" at 1 au (A. Auwers
-// 1891), Mercury 2439.7 km and Venus 6051.8 km (IAU Working Group on Cartographic Coordinates
-// 2015); Venus's air, which widens it by 1 percent, is left out.
+// 1891), the planets' as in sky/planet_disc.cpp; Venus's air, which widens it by 1 percent, is left
+// out.
 #include "events/sun_transits.hpp"
 
 #include <algorithm>
@@ -10,13 +10,13 @@
 
 #include "ephemeris/constants.hpp"
 #include "events/search.hpp"
+#include "sky/planet_disc.hpp"
 
 namespace duskleaf {
 namespace {
 
 using Vector = Eigen::Vector3d;
 
-constexpr double sun_radius_au = 959.63 * arcsecond;
 constexpr Angle equatorial_parallax_at_1_au = Angle::from_arcseconds(8.794143);  // IAU 1976
 constexpr Seconds tolerance(0.02);
 
@@ -25,19 +25,16 @@ constexpr Days rounding(1e-8);
 Ut first_instant(const YearEphemeris& ephemeris) { return to_ut(ephemeris.from()) + rounding; }
 Ut last_instant(const YearEphemeris& ephemeris) { return to_ut(ephemeris.to()) - rounding; }
 
-double planet_radius_au(Body planet) {
-  return (planet == Body::mercury ? 2439.7 : 6051.8) / km_per_au;
-}
-
 /// Sun and planet as they stand to an eye at `here`.
 struct Discs {
   Discs(const YearEphemeris& ephemeris, Body planet, Ut t, const Vector& here = Vector::Zero()) {
     sun = ephemeris.apparent(Body::sun, to_tt(t)) - here;
     const Vector other = ephemeris.apparent(planet, to_tt(t)) - here;
     in_front = other.norm() < sun.norm();
-    separation = std::atan2(sun.cross(other).norm(), sun.dot(other));
-    sun_radius = sun_radius_au / sun.norm();
-    planet_radius = planet_radius_au(planet) / other.norm();
+    separation = angle_between(sun, other).radians();
+    sun_radius = sun_semidiameter / sun.norm();
+    planet_distance = other.norm();
+    planet_radius = disc_radius(planet, planet_distance).radians();
   }
   /// Smooth in time also where the centres meet; zero at the contact. side 1: exterior, -1:
   /// interior.
@@ -48,6 +45,7 @@ struct Discs {
   Vector sun;
   bool in_front;
   double separation, sun_radius, planet_radius;  // radians
+  double planet_distance;                        // au
 };
 
 /// When `separation(t)` is least between a and b.
@@ -122,8 +120,7 @@ std::vector<SunTransit> sun_transits(const YearEphemeris& ephemeris, Ut from, Ut
       if (greatest < from || greatest >= to) continue;
       const Discs d = discs(greatest);
       const Angle parallax =
-          equatorial_parallax_at_1_au *
-          (1.0 / (planet_radius_au(planet) / d.planet_radius) - 1.0 / d.sun.norm());
+          equatorial_parallax_at_1_au * (1.0 / d.planet_distance - 1.0 / d.sun.norm());
       if (d.separation > d.sun_radius + d.planet_radius + parallax.radians()) continue;
       const auto seen = contacts([&](Ut t) { return discs(t).excess(1.0); },
                                  std::max(greatest - Days(0.5), first_instant(ephemeris)), greatest,

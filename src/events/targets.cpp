@@ -162,6 +162,8 @@ const Table& table() {
 
 std::span<const Target> targets() { return table().targets; }
 
+const Target& target_at(int index) { return targets()[static_cast<std::size_t>(index)]; }
+
 int target_index(Body body) {
   const std::span<const Target> all = targets();
   for (std::size_t i = 0; i < all.size(); ++i)

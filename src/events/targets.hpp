@@ -20,12 +20,16 @@ struct Target {
   double magnitude = 0.0;                                   // star, cluster; a planet's changes
   Angle radius;                                             // of a cluster as the eye sees it
   bool meets = true;                                        // closest approaches are sought with it
+
+  bool is_body() const { return sort == Sort::body; }
+  bool is_moon() const { return is_body() && body == Body::moon; }
 };
 
 /// In the order of pair names: the Moon, the planets outward, the stars (those that meet: bright
 /// and near the ecliptic; then those that the Moon alone can cover, to V 3.5), the clusters of
 /// Taurus and Cancer.
 std::span<const Target> targets();
+const Target& target_at(int index);
 /// Index into targets() of a body or a name; -1 when there is none.
 int target_index(Body);
 int target_index(std::string_view name);

@@ -2,10 +2,10 @@
 // counterclockwise from the zenith, as the observer faces it. Elementary.
 #include "sheet/eclipse_drawing.hpp"
 
-#include <algorithm>
 #include <memory>
 
 #include "sky/moon_look.hpp"
+#include "sky/planet_disc.hpp"
 
 namespace duskleaf {
 namespace {
@@ -69,13 +69,11 @@ void draw_sun_transit(const SiteSky& sky, const SiteSunTransit& transit, const B
   // The sky turns meanwhile: all three places stand as at the middle.
   const Ut at = transit.greatest.at;
   const Angle sidereal = sky.local_sidereal_time(at);
-  const Eigen::Vector3d zenith(cos(o.latitude) * cos(sidereal), cos(o.latitude) * sin(sidereal),
-                               sin(o.latitude));
-  constexpr double sun_radius_au = 695700.0 / 149597870.7;  // IAU 2015 resolution B3
+  const Eigen::Vector3d up = zenith(o.latitude, sidereal);
   const auto place = [&](Ut t) {
     const Eigen::Vector3d s = seen(Body::sun, t), p = seen(transit.planet, t);
-    const double apart = s.normalized().cross(p.normalized()).norm() / (sun_radius_au / s.norm());
-    return towards(centre, position_angle(s, p, zenith), sun * apart);
+    const double apart = angle_between(s, p) / disc_radius(Body::sun, s.norm());
+    return towards(centre, position_angle(s, p, up), sun * apart);
   };
   out.emplace_back(Fill{Path::circle(centre, sun), theme.paper});
   out.emplace_back(Stroke{Path::circle(centre, sun), outline_mm, theme.black});

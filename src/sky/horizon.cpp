@@ -8,11 +8,13 @@
 #include <erfa.h>
 #include <numbers>
 
+#include "ephemeris/constants.hpp"
+
 namespace duskleaf {
 namespace {
 
-constexpr double metres_per_au = 149597870700.0;  // IAU 2012 resolution B2
-constexpr int wgs84 = 1;                          // ERFA_WGS84
+constexpr double metres_per_au = km_per_au * 1000.0;
+constexpr int wgs84 = 1;  // ERFA_WGS84
 
 /// Components towards the meridian's point of the equator, the east point and the pole.
 Eigen::Vector3d turned_to_meridian(const Eigen::Vector3d& v, Angle local_sidereal_time) {
@@ -49,6 +51,15 @@ Eigen::Vector3d observer_vector_au(Angle latitude, double elevation_m, Angle loc
   Eigen::Vector3d metres;
   eraGd2gc(wgs84, local_sidereal_time.radians(), latitude.radians(), elevation_m, metres.data());
   return metres / metres_per_au;
+}
+
+Eigen::Vector3d zenith(Angle latitude, Angle local_sidereal_time) {
+  return {cos(latitude) * cos(local_sidereal_time), cos(latitude) * sin(local_sidereal_time),
+          sin(latitude)};
+}
+
+Angle angle_between(const Eigen::Vector3d& a, const Eigen::Vector3d& b) {
+  return arctan2(a.cross(b).norm(), a.dot(b));
 }
 
 Angle refraction(Angle true_altitude) {

@@ -9,10 +9,6 @@ Angle local_sidereal_time(const YearEphemeris& ephemeris, Angle longitude, Ut t)
   return ephemeris.apparent_sidereal_time(t) + longitude;
 }
 
-Eigen::Vector3d zenith(Angle latitude, Angle sidereal_time) {
-  return {cos(latitude) * cos(sidereal_time), cos(latitude) * sin(sidereal_time), sin(latitude)};
-}
-
 }  // namespace
 
 Angle position_angle(const Eigen::Vector3d& body, const Eigen::Vector3d& other,

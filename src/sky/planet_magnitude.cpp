@@ -11,16 +11,14 @@
 #include <stdexcept>
 #include <string>
 
+#include "sky/horizon.hpp"
+
 namespace duskleaf {
 namespace {
 
 const Eigen::Vector3d saturn_pole(0.08547883, 0.07323576, 0.99364475);
 const Eigen::Vector3d uranus_pole(-0.21199958, -0.94155916, -0.26176809);
 constexpr double uranus_axes = 24973.0 / 25559.0;  // polar over equatorial
-
-double angle_between(const Eigen::Vector3d& a, const Eigen::Vector3d& b) {
-  return std::atan2(a.cross(b).norm(), a.dot(b));
-}
 
 double venus(double a) {
   return a < 163.7 ? -4.384 + a * (-1.044e-3 + a * (3.687e-4 + a * (-2.814e-6 + a * 8.938e-9)))
@@ -70,7 +68,7 @@ PlanetAspect planet_aspect(const YearEphemeris& ephemeris, Body planet, Tt t) {
   const Eigen::Vector3d from_sun = from_earth - ephemeris.apparent(Body::sun, t);
   PlanetAspect aspect{ephemeris.heliocentric_distance_au(planet, t),
                       from_earth.norm(),
-                      Angle::from_radians(angle_between(from_sun, from_earth)),
+                      angle_between(from_sun, from_earth),
                       Angle(),
                       Angle(),
                       2000.0 + (t.days() + 0.5) / 365.25};
@@ -127,7 +125,7 @@ double lit_fraction(Angle phase_angle) { return 0.5 * (1.0 + cos(phase_angle)); 
 double moon_lit_fraction(const YearEphemeris& ephemeris, Tt t) {
   const Eigen::Vector3d moon = ephemeris.apparent(Body::moon, t);
   const Eigen::Vector3d sun = ephemeris.apparent(Body::sun, t);
-  return lit_fraction(Angle::from_radians(angle_between(sun - moon, -moon)));
+  return lit_fraction(angle_between(sun - moon, -moon));
 }
 
 }  // namespace duskleaf
