@@ -1,6 +1,5 @@
 #pragma once
 
-#include <memory>
 #include <vector>
 
 #include "almanac/meetings.hpp"
@@ -24,7 +23,8 @@ struct SkyYear {
   std::vector<SolarEclipse> solar_eclipses;
   std::vector<SunTransit> sun_transits;
   std::vector<ShowerPeak> shower_peaks;
-  std::vector<Event> events;  // phases, seasons, apsides and all of the above as instants, in order
+  std::vector<Event> events;  // phases, seasons, apsides and of the above what has the same
+                              // instants everywhere (not the Sun's eclipses and transits), in order
 };
 /// From two days before the span to two days after it.
 SkyYear make_sky_year(const YearEphemeris&, const Span&);

@@ -2,7 +2,6 @@
 #include "almanac/planet_nights.hpp"
 
 #include <algorithm>
-#include <cmath>
 
 #include "almanac/evening_moment.hpp"
 #include "sky/brightness.hpp"
