@@ -7,6 +7,7 @@
 
 #include "almanac/happenings.hpp"
 #include "almanac/site_year.hpp"
+#include "base/csv.hpp"
 #include "order/order.hpp"
 #include "sheet/marks.hpp"
 #include "sheet/theme.hpp"
@@ -43,6 +44,8 @@ struct BlockContext {
 struct BlockOptions {
   std::map<std::string, std::string, std::less<>> values;
   const std::string& get(std::string_view name) const { return values.find(name)->second; }
+  /// Of an option that is a whole number of 0 or more, which the template's reader has checked.
+  int number(std::string_view name) const { return static_cast<int>(parse_number(get(name))); }
 };
 
 /// Draws into `area` and returns the height used in mm (at most area.height unless the block cannot

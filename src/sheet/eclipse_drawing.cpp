@@ -58,7 +58,7 @@ void draw_lunar_phase(const SiteLunarEclipse& e, const Box& box, const Theme& th
   out.emplace_back(Stroke{Path::circle(centre, moon), outline_mm, theme.black});
 }
 
-void draw_sun_transit(const SiteSky& sky, const SiteSunTransit& transit, const Box& box,
+void draw_sun_transit(const SiteSky& sky, const SiteSunTransit& transit, Ut at, const Box& box,
                       const Theme& theme, std::vector<Mark>& out) {
   const Point centre = middle(box);
   const double sun = box.width * 0.4;
@@ -66,8 +66,7 @@ void draw_sun_transit(const SiteSky& sky, const SiteSunTransit& transit, const B
   const auto seen = [&](Body body, Ut t) {
     return topocentric(sky.ephemeris(), body, o.latitude, o.longitude, o.elevation_m, t);
   };
-  // The sky turns meanwhile: all three places stand as at the middle.
-  const Ut at = transit.greatest.at;
+  // The sky turns meanwhile: all places stand as at the moment drawn.
   const Angle sidereal = sky.local_sidereal_time(at);
   const Eigen::Vector3d up = zenith(o.latitude, sidereal);
   const auto place = [&](Ut t) {

@@ -19,7 +19,7 @@ void draw_solar_phase(const SiteSolarEclipse&, const Box& box, const Theme&, std
 void draw_lunar_phase(const SiteLunarEclipse&, const Box& box, const Theme&, std::vector<Mark>&);
 /// The Sun with the planet's way over it, and the planet at the middle of the transit, larger than
 /// it is.
-void draw_sun_transit(const SiteSky&, const SiteSunTransit&, const Box& box, const Theme&,
+void draw_sun_transit(const SiteSky&, const SiteSunTransit&, Ut at, const Box& box, const Theme&,
                       std::vector<Mark>&);
 
 }  // namespace duskleaf

@@ -35,8 +35,7 @@ std::vector<NearSun> bright_near_sun(const SiteSky& sky, Ut at) {
     found.push_back(thing);
   };
   for (const Body planet : {Body::mercury, Body::venus, Body::mars, Body::jupiter, Body::saturn}) {
-    const double magnitude =
-        planet_magnitude(planet, planet_aspect(sky.ephemeris(), planet, tt));
+    const double magnitude = planet_magnitude(planet, planet_aspect(sky.ephemeris(), planet, tt));
     if (magnitude < faintest_planet)
       offer(seen(planet), planet_reach, {planet, -1, magnitude, Angle(), Angle()});
   }

@@ -2,6 +2,7 @@
 // Whoever is told to look at the Sun is told of the filter (ISO 12312-2) in the same line.
 #include <algorithm>
 #include <cmath>
+#include <optional>
 
 #include "sheet/happening_writer.hpp"
 
@@ -10,9 +11,23 @@ namespace {
 
 constexpr double rank_seen = 0, rank_slight = 2, rank_not_seen = fact_rank, rank_shading = 4;
 
+struct Stretch {
+  Ut from, to;
+};
+/// The part of [from, to] in which the body is up. Where it sets and rises again within, the part
+/// that holds the best moment.
+Stretch part_up(Ut from, Ut to, const std::optional<Ut>& rise, const std::optional<Ut>& set,
+                Ut best) {
+  const bool twice = rise && set && *set < *rise;
+  Stretch s{from, to};
+  if (rise && !(twice && best <= *set)) s.from = std::max(from, *rise);
+  if (set && !(twice && best > *set)) s.to = std::min(to, *set);
+  return s;
+}
+
 void write_solar(HappeningWriter& w, const SiteSolarEclipse& e) {
-  const Ut from = e.sunrise ? std::max(*e.sunrise, e.partial_begins.at) : e.partial_begins.at;
-  const Ut to = e.sunset ? std::min(*e.sunset, e.partial_ends.at) : e.partial_ends.at;
+  const auto [from, to] =
+      part_up(e.partial_begins.at, e.partial_ends.at, e.sunrise, e.sunset, e.best.at);
   const Horizontal place = HappeningWriter::apparent(e.best.place);
   const bool central = e.kind != SolarEclipseKind::partial && e.central_begins &&
                        e.central_begins->visible && e.central_ends && e.central_ends->visible;
@@ -36,17 +51,22 @@ void write_solar(HappeningWriter& w, const SiteSolarEclipse& e) {
 }
 
 void write_transit(HappeningWriter& w, const SiteSunTransit& t) {
-  const Sighting& best = t.greatest.visible ? t.greatest : t.begins.visible ? t.begins : t.ends;
-  const Horizontal place = HappeningWriter::apparent(best.place);
+  const SunCuts cuts = sun_cuts(w.context().year, t.begins.at, t.ends.at);
+  const Ut from = cuts.sunrise.value_or(t.begins.at), to = cuts.sunset.value_or(t.ends.at);
+  const std::string body = w.body(t.planet);
+  const Horizontal place = HappeningWriter::apparent(t.greatest.place);
   HappeningLine* line = w.by_day(
-      t.begins.at, rank_seen,
-      w.words("sun-transit",
-              {{"body", w.body(t.planet)}, {"time", w.time(best.at)}, {"place", w.place(place)}}),
+      from, rank_seen,
+      t.greatest.visible
+          ? w.words("sun-transit",
+                    {{"body", body}, {"time", w.time(t.greatest.at)}, {"place", w.place(place)}})
+          : w.words(t.begins.visible ? "sun-transit-until-sunset" : "sun-transit-from-sunrise",
+                    {{"body", body}}),
       {});
   if (line == nullptr) return;
   line->sight = true;
-  if (w.behind_skyline(place)) line->text += w.words("behind-skyline");
-  line->when = w.span(t.begins.at, t.ends.at);
+  if (t.greatest.visible && w.behind_skyline(place)) line->text += w.words("behind-skyline");
+  line->when = w.span(from, to);
   line->caution = w.words("sun-transit-caution");
 }
 
@@ -75,10 +95,9 @@ void write_lunar(HappeningWriter& w, const SiteLunarEclipse& e) {
   const Sighting* best = best_sighting(e);
   const std::string where =
       best == nullptr ? std::string() : w.place(HappeningWriter::apparent(best->place));
-  Ut from = eclipse.partial_begins.value_or(eclipse.penumbral_begins);
-  Ut to = eclipse.partial_ends.value_or(eclipse.penumbral_ends);
-  if (e.moonrise) from = std::max(from, *e.moonrise);
-  if (e.moonset) to = std::min(to, *e.moonset);
+  const auto [from, to] = part_up(eclipse.partial_begins.value_or(eclipse.penumbral_begins),
+                                  eclipse.partial_ends.value_or(eclipse.penumbral_ends), e.moonrise,
+                                  e.moonset, e.drawn_at);
   std::string text;
   if (penumbral) {
     text = w.words("lunar-penumbral", {{"time", w.time(e.drawn_at)}, {"place", where}});
@@ -118,6 +137,16 @@ bool stands_high(const Sighting& s) {
 }
 
 }  // namespace
+
+SunCuts sun_cuts(const SiteYear& year, Ut from, Ut to) {
+  SunCuts cuts;
+  for (const Event& e : year.local) {
+    if (e.at <= from || e.at >= to) continue;
+    if (e.kind == EventKind::sunrise && !cuts.sunrise) cuts.sunrise = e.at;
+    if (e.kind == EventKind::sunset) cuts.sunset = e.at;
+  }
+  return cuts;
+}
 
 bool worth_a_panel(const SiteSolarEclipse& e) {
   if (e.central_begins && e.central_begins->visible) return true;

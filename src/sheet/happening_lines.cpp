@@ -74,15 +74,20 @@ std::string HappeningWriter::place(const Horizontal& h) const {
 }
 
 std::string HappeningWriter::target(const Target& target) const {
+  constexpr double well_known = 1.7;  // magnitude; common practice
   if (target.sort == Target::Sort::body) return body(target.body);
   const std::string key = "happening.target-" + std::string(target.name);
   if (c_.words.has(key)) return c_.words(key);
   if (target.star < 0) return std::string(target.name);
   const Star& star = stars()[static_cast<std::size_t>(target.star)];
-  if (!star.name.empty()) return std::string(star.name);
   const std::string_view letter = star.bayer.empty() ? star.flamsteed : star.bayer;
-  return std::string(letter) + "\u00A0" +
-         std::string(constellations()[static_cast<std::size_t>(star.constellation)].genitive);
+  const std::string designation =
+      std::string(letter) + "\u00A0" +
+      std::string(constellations()[static_cast<std::size_t>(star.constellation)].genitive);
+  if (star.name.empty()) return designation;
+  // Fainter stars are known by their letters: their names were given lately.
+  if (target.magnitude <= well_known) return std::string(star.name);
+  return words("star-with-name", {{"star", designation}, {"name", std::string(star.name)}});
 }
 
 bool HappeningWriter::behind_skyline(const Horizontal& apparent) const {
@@ -190,6 +195,7 @@ std::vector<HappeningLine> happening_lines(const BlockContext& c) {
 }
 
 HappeningChoice choose_lines(std::vector<HappeningLine> lines, std::size_t most) {
+  constexpr std::size_t most_own = 16;  // a sheet of nights is no diary
   HappeningChoice choice;
   const auto is_fact = [](const HappeningLine& l) {
     return l.rank >= fact_rank && !l.brief.empty() && !l.own;
@@ -201,9 +207,12 @@ HappeningChoice choose_lines(std::vector<HappeningLine> lines, std::size_t most)
     if (a.own != b.own) return a.own;
     return a.rank < b.rank;
   });
+  std::size_t own = 0;
   for (HappeningLine& line : lines) {
-    const bool stays =
-        line.own || line.brief.empty() || (choice.shown.size() < most && !is_fact(line));
+    const bool stays = line.own
+                           ? ++own <= most_own
+                           : line.brief.empty() || (choice.shown.size() < most && !is_fact(line));
+    if (!stays && line.own) line.brief = line.text;
     (stays ? choice.shown : choice.left_out).push_back(std::move(line));
   }
   sort_by_date(choice.shown);

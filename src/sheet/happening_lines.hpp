@@ -37,7 +37,7 @@ struct HappeningChoice {
   std::vector<HappeningLine> shown, left_out;  // both in order of date
 };
 /// At most `most` lines and one that names or counts the rest: the least important are left out, of
-/// equal ones the later. The order's own dates always stay.
+/// equal ones the later. The order's own dates stay, but for those after the sixteenth.
 HappeningChoice choose_lines(std::vector<HappeningLine>, std::size_t most);
 
 }  // namespace duskleaf

@@ -3,6 +3,7 @@
 #include <initializer_list>
 #include <map>
 #include <memory>
+#include <optional>
 #include <string>
 #include <string_view>
 #include <utility>
@@ -66,6 +67,12 @@ class HappeningWriter {
   std::vector<HappeningLine> lines_;
   mutable std::map<Date, std::unique_ptr<const PlanetNight>> planet_nights_;
 };
+
+/// The Sun's rise and set that cut a stretch of time at the site.
+struct SunCuts {
+  std::optional<Ut> sunrise, sunset;
+};
+SunCuts sun_cuts(const SiteYear&, Ut from, Ut to);
 
 /// Whether an eclipse is told in a panel besides its line: not where it covers less than a
 /// twentieth or is never 5 degrees up; a total or annular one always.

@@ -1,7 +1,8 @@
 // Bands from top to bottom: first those of known height, then those with a block that fills what
 // room is left, then the shares of the rest. What shares need at least is kept free for them.
-// What has no room gives way in an order (gives); type is never reduced: a page is read outdoors by
-// red light, and less of it is better than smaller (this project's own choice).
+// What has no room gives way in an order (gives): a page is read outdoors by red light, and less of
+// it is better than smaller (this project's own choice). Type is reduced only where the order's own
+// words leave no room for the cautions at the foot.
 #include "sheet/page_layout.hpp"
 
 #include <algorithm>
@@ -12,23 +13,32 @@
 namespace duskleaf {
 namespace {
 
-/// Shifts a mark.
+/// Scales a mark about the origin, then shifts it.
 struct Mover {
-  double dx, dy;
-  void point(Point& p) const { p = {p.x + dx, p.y + dy}; }
+  double scale, dx, dy;
+  void point(Point& p) const { p = {p.x * scale + dx, p.y * scale + dy}; }
   void box(Box& b) const {
-    b.x += dx;
-    b.y += dy;
+    b = {b.x * scale + dx, b.y * scale + dy, b.width * scale, b.height * scale};
   }
   void path(Path& p) const {
     for (Point& q : p.points) point(q);
   }
-  void operator()(Stroke& m) const { path(m.path); }
+  void operator()(Stroke& m) const {
+    path(m.path);
+    m.width_mm *= scale;
+    for (double& dash : m.dash_mm) dash *= scale;
+  }
   void operator()(Fill& m) const { path(m.path); }
   void operator()(Dots& m) const {
-    for (auto& dot : m.dots) point(dot.centre);
+    for (auto& dot : m.dots) {
+      point(dot.centre);
+      dot.diameter_mm *= scale;
+    }
   }
-  void operator()(Text& m) const { point(m.start); }
+  void operator()(Text& m) const {
+    point(m.start);
+    m.size_pt *= scale;
+  }
   void operator()(Image& m) const { box(m.box); }
   void operator()(Link& m) const { box(m.box); }
   void operator()(std::shared_ptr<ClipGroup>& m) const {
@@ -39,7 +49,7 @@ struct Mover {
 
 void append_moved(std::vector<Mark>& to, std::vector<Mark>& from, double down) {
   for (Mark& mark : from) {
-    std::visit(Mover{0, down}, mark);
+    std::visit(Mover{1, 0, down}, mark);
     to.push_back(std::move(mark));
   }
 }
@@ -49,6 +59,7 @@ void append_moved(std::vector<Mark>& to, std::vector<Mark>& from, double down) {
 struct Give {
   int fewest_lines, left_out;
 };
+constexpr double smallest_scale = 0.56;
 constexpr std::array<Give, 7> gives{{{3, 0}, {3, 1}, {3, 2}, {2, 2}, {2, 3}, {1, 3}, {0, 3}}};
 
 /// A band with its first block that may roam at the end of another column, for each such column.
@@ -218,7 +229,7 @@ class PageLayout {
 
   BlockOptions given(BlockOptions options) const {
     const auto left_out = options.values.find("leave-out");
-    if (left_out != options.values.end() && std::stod(left_out->second) < give_.left_out)
+    if (left_out != options.values.end() && options.number("leave-out") < give_.left_out)
       left_out->second = std::to_string(give_.left_out);
     return options;
   }
@@ -236,8 +247,8 @@ class PageLayout {
     double height = draw(options);
     const auto most = options.values.find("most");
     if (height <= area.height || most == options.values.end()) return height;
-    int fits = give_.fewest_lines,
-        too_many = std::min(static_cast<int>(std::stod(most->second)), longest_list);
+    int too_many = std::min(options.number("most"), longest_list),
+        fits = std::min(give_.fewest_lines, too_many);
     while (too_many - fits > 1) {
       const int middle = (fits + too_many) / 2;
       most->second = std::to_string(middle);
@@ -266,17 +277,25 @@ std::vector<Mark> draw_page(const BlockContext& context, const PageTemplate& pag
   const Tally before = context.tally;
   std::vector<Mark> marks;
   double overfull = 0;
-  for (const Give& give : gives) {
+  const auto fits = [&](const Give& give, double scale) {
     context.tally = before;
-    PageLayout layout(context, width - 2 * margin, height - 2 * margin, give);
+    PageLayout layout(context, (width - 2 * margin) / scale, (height - 2 * margin) / scale, give);
     marks = layout.draw(page);
     overfull = layout.overfull();
-    if (overfull < 0.05) break;
-  }
-  if (overfull >= 0.05)
+    return overfull < 0.05;
+  };
+  double scale = 1;
+  bool done = std::any_of(gives.begin(), gives.end(), [&](const Give& g) { return fits(g, 1); });
+  // The order's own words may be too many even so: small type is better than a foot cut off, where
+  // the cautions stand.
+  while (!done && scale > smallest_scale) done = fits(gives.back(), scale -= 0.05);
+  if (!done)
     context.tally.notes.push_back("a page is too full by " + context.words.number(overfull, 1) +
                                   " mm");
-  for (Mark& mark : marks) std::visit(Mover{margin, margin}, mark);
+  else if (scale < 1)
+    context.tally.notes.push_back("a page is reduced to " + context.words.number(100 * scale, 0) +
+                                  " % to hold all its words");
+  for (Mark& mark : marks) std::visit(Mover{scale, margin, margin}, mark);
   return marks;
 }
 

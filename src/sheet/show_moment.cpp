@@ -24,7 +24,7 @@ std::optional<ShowMoment> session_moment(const BlockContext& c, const SiteSky& s
       const auto index = static_cast<std::size_t>((date - c.year.span.first_day()).count());
       // Readings up to noon are of the morning after.
       const auto instant = [&](std::chrono::minutes m) {
-        return zone.instant(m < std::chrono::hours(12) ? date + std::chrono::days(1) : date, m);
+        return zone.instant(m <= std::chrono::hours(12) ? date + std::chrono::days(1) : date, m);
       };
       Ut at = instant(*session.from);
       const std::optional<Ut> dusk = c.year.nights[index].nautical_dusk;

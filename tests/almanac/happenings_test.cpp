@@ -55,11 +55,10 @@ TEST(Happenings, EverySiteGetsAWholeYearInOrder) {
     EXPECT_TRUE(in_order(sky.events, [](const Event& e) { return e.at; }));
     EXPECT_TRUE(in_order(site.events, [](const Event& e) { return e.at; }));
     EXPECT_TRUE(in_order(sky.approaches, [](const Approach& a) { return a.at; }));
-    // Common practice: a year has 4 to 7 eclipses of Sun and Moon together, two or more of each;
-    // four days' margin can add none here.
+    // Common practice: a year has 4 to 7 eclipses of Sun and Moon together, two or more of each.
     EXPECT_GE(sky.solar_eclipses.size(), 2u);
     EXPECT_GE(sky.lunar_eclipses.size(), 2u);
-    EXPECT_LE(sky.solar_eclipses.size() + sky.lunar_eclipses.size(), 8u);
+    EXPECT_LE(sky.solar_eclipses.size() + sky.lunar_eclipses.size(), 7u);
     // Each planet passes the Sun once or more in 13 months but Mars, which may miss.
     std::set<Body> passed;
     for (const Event& e : sky.configurations)
@@ -113,6 +112,7 @@ TEST(Happenings, ThePolesSeeHalfTheSkyAlone) {
         make_site_year(ephemeris, test_place(latitude, 0, "UTC"), span, {.evenings = false});
     const SiteHappenings site =
         make_site_happenings(ephemeris, year, make_sky_year(ephemeris, span));
+    EXPECT_FALSE(site.occultations.empty());
     for (const Occultation& o : site.occultations) {
       const double z = apparent_direction(ephemeris, targets()[static_cast<std::size_t>(o.target)],
                                           to_tt(o.disappears.at))

@@ -193,7 +193,7 @@ TEST(Press, SaysThatOwnWordsHardlyFit) {
   EXPECT_EQ(answer.code, 0);
   EXPECT_EQ(answer.err, "1 file has a page whose words hardly fit; see the report in out\n");
   EXPECT_THAT(bytes_of(folder.file("out/report.csv")),
-              HasSubstr(",pressed,a page is too full by "));
+              HasSubstr(",pressed,a page is reduced to "));
 }
 
 }  // namespace

@@ -1,8 +1,10 @@
+#include <algorithm>
 #include <gmock/gmock.h>
 #include <gtest/gtest.h>
 
 #include "month_scene.hpp"
 #include "sheet/blocks/blocks.hpp"
+#include "sheet/happening_lines.hpp"
 
 namespace duskleaf {
 namespace {
@@ -103,6 +105,42 @@ TEST(EclipsePanel, ATransitOfTheSunCarriesTheCaution) {
   const Drawn d = panel(scene);
   EXPECT_THAT(d.text, HasSubstr("Mercury before the Sun"));
   EXPECT_THAT(d.text, HasSubstr("Never look at the Sun"));
+}
+
+// 2026 August 12 ends at sunset over the western Mediterranean (F. Espenak & J. Meeus, Five
+// Millennium Canon of Solar Eclipses, NASA/TP-2006-214141, the map of that eclipse; from memory):
+// at 8 E the Sun is down before the totality. Nobody there may be told to take the filter off.
+TEST(EclipsePanel, ATotalityAfterSunsetIsNone) {
+  MonthScene scene(39.0, 8.0, "Europe/Rome", 2026, 8);
+  scene.compute(true);
+  ASSERT_EQ(scene.happenings.solar_eclipses.size(), 1u);
+  const SiteSolarEclipse& e = scene.happenings.solar_eclipses.front();
+  ASSERT_EQ(e.kind, SolarEclipseKind::total);
+  ASSERT_FALSE(e.central_begins->visible);
+  const Drawn d = panel(scene, 186);
+  EXPECT_THAT(d.text, HasSubstr("Partial eclipse of the Sun"));
+  EXPECT_THAT(d.text, HasSubstr("Never look at the Sun"));
+  EXPECT_THAT(d.text, Not(HasSubstr("wholly covered")));
+  EXPECT_THAT(d.text, Not(HasSubstr("corona")));
+}
+
+// At Australia's east coast the Sun sets on the transit of 2032 (the times of its middle and end,
+// after sunset there: as above). The line once called the beginning the middle.
+TEST(EclipsePanel, ATransitThatSunsetCutsSaysSo) {
+  MonthScene scene(-33.9, 151.2, "Australia/Sydney", 2032, 11);
+  scene.compute(true);
+  const Drawn d = panel(scene, 186);
+  EXPECT_THAT(d.text, HasSubstr("Sun sets"));
+  EXPECT_THAT(d.text, HasSubstr("below the horizon"));
+  const std::vector<HappeningLine> lines = happening_lines(scene.context());
+  const auto line = std::find_if(lines.begin(), lines.end(), [](const HappeningLine& l) {
+    return l.text.find("crosses the Sun") != std::string::npos;
+  });
+  ASSERT_NE(line, lines.end());
+  EXPECT_THAT(line->text, HasSubstr("until the Sun sets"));
+  EXPECT_THAT(line->text, Not(HasSubstr("middle")));
+  EXPECT_THAT(line->when, testing::MatchesRegex("17:4.–19:3."));
+  EXPECT_THAT(line->caution, HasSubstr("filter"));
 }
 
 }  // namespace

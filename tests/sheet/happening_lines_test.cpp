@@ -259,7 +259,7 @@ TEST_F(HappeningDates, OccultationsAreToldWhereTheyCanBeWatched) {
   // A faint star at the bright edge is drowned: only its return at the dark edge is told.
   lines = told(occultation("alcyone", false, 27, -30));
   const auto returns = std::find_if(lines.begin(), lines.end(), [](const HappeningLine& l) {
-    return l.text.find("Alcyone comes out") != std::string::npos;
+    return l.text.find("η\u00A0Tauri (Alcyone) comes out") != std::string::npos;
   });
   ASSERT_NE(returns, lines.end());
   EXPECT_EQ(returns->when, "22:20");

@@ -30,7 +30,7 @@ double draw_chart_fits(const BlockContext& c, const BlockOptions&, const Box& ar
       out.push_back(
           Fill{Path::rectangle({x - cell * 0.46, area.y + 0.5, cell * 0.92, height - 1.0}),
                c.theme.lap});
-    set.centre(x, area.y + 3.4, c.words.day_month(fit.date), date_style);
+    set.centre(x, area.y + 3.4, c.words.day_month(fit.clock.date()), date_style);
     set.centre(x, area.y + 7.0, c.words.time(fit.clock), time_style);
     if (changed) {
       const double at = x - cell / 2;

@@ -183,9 +183,10 @@ double draw_constellations(const BlockContext& c, const BlockOptions& options, c
                            std::vector<Mark>& out) {
   Setter set(c, out);
   const EveningSky& evening = c.evening();
-  const std::string when = c.words(
-      "constellations.aside", {{"date", c.words.day_month(evening.date)},
-                               {"time", c.words.time(c.year.place.zone.civil(evening.moment))}});
+  const CivilMinute moment = c.year.place.zone.civil(evening.moment);
+  const std::string when =
+      c.words("constellations.aside",
+              {{"date", c.words.day_month(moment.date())}, {"time", c.words.time(moment)}});
   double y =
       area.y + set.heading(area.x, area.y, area.width, c.words("constellations.title"), when);
   if (evening.shift == EveningShift::no_stars) {

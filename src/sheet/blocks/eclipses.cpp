@@ -85,8 +85,11 @@ Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   const BlockContext& c = w.context();
   const std::string kind(eclipse_name(e.kind));
   const bool central = e.central_begins && e.central_ends;
+  // Nobody may be told to take the filter off where the Sun is down for a part of the totality.
+  const bool central_seen = central && e.central_begins->visible && e.central_ends->visible;
+  const bool totality = central_seen && kind == "total";
   Panel p;
-  p.title = c.words("eclipse.solar-" + kind);
+  p.title = c.words("eclipse.solar-" + (central && !central_seen ? "partial" : kind));
   p.aside = date_of_day(c, w.civil_date(e.best.at));
   p.rows.push_back(row(w, "partial-begins", e.partial_begins));
   if (central) p.rows.push_back(row(w, kind + "-begins", *e.central_begins));
@@ -96,17 +99,16 @@ Panel solar_panel(const HappeningWriter& w, const SiteSolarEclipse& e) {
   if (e.sunrise) p.rows.push_back(edge(w, "sunrise", Body::sun, *e.sunrise));
   if (e.sunset) p.rows.push_back(edge(w, "sunset", Body::sun, *e.sunset));
   sort_rows(p.rows);
-  if (central && e.central_begins->visible && e.central_ends->visible)
+  if (central_seen)
     p.lead = c.words(kind == "total" ? "eclipse.total-lasts" : "eclipse.annular-lasts",
                      {{"duration", w.minutes_seconds(e.central_begins->at, e.central_ends->at)}});
   else
     p.text = c.words("eclipse.solar-size", {{"percent", w.percent(e.best_obscuration)}});
-  if (kind == "total" && e.best.visible)
-    p.text = c.words("eclipse.corona") + near_sun(w, e.best.at);
+  if (totality) p.text = c.words("eclipse.corona") + near_sun(w, e.best.at);
   if (!e.greatest.visible)
     p.text += " " + c.words("eclipse.solar-cut", {{"percent", w.percent(e.obscuration)}});
   p.caution = c.words("eclipse.sun-caution");
-  if (kind == "total") p.caution += " " + c.words("eclipse.totality-caution");
+  if (totality) p.caution += " " + c.words("eclipse.totality-caution");
   p.drawn = w.time(e.best.at);
   return p;
 }
@@ -156,6 +158,14 @@ Panel lunar_panel(const HappeningWriter& w, const SiteLunarEclipse& e) {
   return p;
 }
 
+/// The moment of a transit that is drawn: the middle, or the Sun's rise or set where it is down
+/// then.
+Ut drawn_moment(const HappeningWriter& w, const SiteSunTransit& t) {
+  if (t.greatest.visible) return t.greatest.at;
+  const SunCuts cuts = sun_cuts(w.context().year, t.begins.at, t.ends.at);
+  return (t.begins.visible ? cuts.sunset : cuts.sunrise).value_or(t.greatest.at);
+}
+
 Panel transit_panel(const HappeningWriter& w, const SiteSunTransit& t) {
   const BlockContext& c = w.context();
   Panel p;
@@ -163,9 +173,13 @@ Panel transit_panel(const HappeningWriter& w, const SiteSunTransit& t) {
   p.aside = date_of_day(c, w.civil_date(t.greatest.at));
   p.rows = {row(w, "transit-begins", t.begins), row(w, "transit-greatest", t.greatest, true),
             row(w, "transit-ends", t.ends)};
+  const SunCuts cuts = sun_cuts(c.year, t.begins.at, t.ends.at);
+  if (cuts.sunrise) p.rows.push_back(edge(w, "sunrise", Body::sun, *cuts.sunrise));
+  if (cuts.sunset) p.rows.push_back(edge(w, "sunset", Body::sun, *cuts.sunset));
+  sort_rows(p.rows);
   p.text = c.words(t.planet == Body::mercury ? "eclipse.transit-mercury" : "eclipse.transit-venus");
   p.caution = c.words("eclipse.transit-caution");
-  p.drawn = w.time(t.greatest.at);
+  p.drawn = w.time(drawn_moment(w, t));
   return p;
 }
 
@@ -274,7 +288,7 @@ double draw_eclipses(const BlockContext& c, const BlockOptions&, const Box& area
   for (const SiteSunTransit& t : c.happenings.sun_transits)
     if (w.in_month(w.civil_date(t.begins.at)))
       panels.emplace_back(transit_panel(w, t), [&](const Box& box, std::vector<Mark>& marks) {
-        draw_sun_transit(w.sky(), t, box, c.theme, marks);
+        draw_sun_transit(w.sky(), t, drawn_moment(w, t), box, c.theme, marks);
       });
   for (const SiteLunarEclipse& e : c.happenings.lunar_eclipses)
     if (worth_a_panel(e) && w.in_month(w.evening_of(e.eclipse.greatest)))

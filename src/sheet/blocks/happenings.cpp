@@ -1,5 +1,4 @@
 #include <algorithm>
-#include <charconv>
 
 #include "sheet/blocks/blocks.hpp"
 #include "sheet/flow_text.hpp"
@@ -10,13 +9,6 @@ namespace {
 
 // Named in the closing line; the others are counted alone.
 constexpr std::size_t most_named = 5;
-
-std::size_t number_option(const BlockOptions& options, std::string_view name) {
-  const std::string& text = options.get(name);
-  std::size_t value = 100;
-  std::from_chars(text.data(), text.data() + text.size(), value);
-  return value;
-}
 
 std::string closing_line(const BlockContext& c, std::vector<HappeningLine> left_out) {
   const std::size_t count = left_out.size();
@@ -66,7 +58,8 @@ std::string help(const BlockContext& c, const std::vector<HappeningLine>& shown)
 
 double draw_happenings(const BlockContext& c, const BlockOptions& options, const Box& area,
                        std::vector<Mark>& out) {
-  const HappeningChoice choice = choose_lines(happening_lines(c), number_option(options, "most"));
+  const HappeningChoice choice =
+      choose_lines(happening_lines(c), static_cast<std::size_t>(options.number("most")));
   if (choice.shown.empty()) return 0;
   const bool across_midnight = std::any_of(choice.shown.begin(), choice.shown.end(),
                                            [](const auto& l) { return l.after_midnight; });

@@ -24,7 +24,7 @@ std::string position(const BlockContext& c) {
 std::string charts_line(const BlockContext& c) {
   const EveningSky& evening = c.evening();
   const Zone& zone = c.year.place.zone;
-  const std::string date = c.words.day_month(evening.date);
+  const std::string date = c.words.day_month(zone.civil(evening.moment).date());
   const std::string hour = c.words.time(zone.civil(evening.chart_moment));
   const std::string moment = c.words.time(zone.civil(evening.moment));
   switch (evening.shift) {

@@ -81,7 +81,11 @@ double draw_sessions(const BlockContext& c, const BlockOptions&, const Box& area
     seen.push_back(entry.session);
     std::vector<Date> dates;
     for (const Entry& other : entries)
-      if (other.session == entry.session) dates.push_back(other.date);
+      if (other.session == entry.session)
+        // Hours up to noon are of the morning after: they are announced by its date.
+        dates.push_back(entry.session->from && *entry.session->from <= std::chrono::hours(12)
+                            ? other.date + std::chrono::days(1)
+                            : other.date);
     std::string rest;
     const Session& s = *entry.session;
     if (s.from && s.to)

@@ -2,7 +2,6 @@
 // takes. The list and its rule of openings: almanac/show_list.hpp.
 #include <algorithm>
 #include <array>
-#include <charconv>
 #include <cmath>
 
 #include "almanac/evening_moment.hpp"
@@ -21,13 +20,6 @@ namespace duskleaf {
 namespace {
 
 using Group = std::vector<const ShowItem*>;
-
-std::size_t number_option(const BlockOptions& options, std::string_view name) {
-  const std::string& text = options.get(name);
-  std::size_t value = 100;
-  std::from_chars(text.data(), text.data() + text.size(), value);
-  return value;
-}
 
 std::string body_text(const BlockContext& c, Body body, Ut moment) {
   const std::string name = c.words("body." + std::string(body_name(body)));
@@ -192,19 +184,21 @@ double draw_group(const BlockContext& c, const Group& group, std::string_view ti
 double draw_show(const BlockContext& c, const BlockOptions& options, const Box& area,
                  std::vector<Mark>& out) {
   const ShowMoment when = show_moment(c);
+  const CivilMinute moment = c.year.place.zone.civil(when.at);
   const SiteSky sky(c.ephemeris, c.year.place.observer, when.at - Days(1), when.at + Days(1));
   const std::vector<ShowItem> items = show_list(sky, c.year, when.at);
   Setter set(c, out);
   double y =
       area.y + set.heading(area.x, area.y, area.width, c.words("show.title"),
                            c.words(when.session ? "show.aside" : "show.aside-best",
-                                   {{"weekday", c.words.weekday_short(weekday_of(when.evening))},
-                                    {"date", c.words.day_month(when.evening)},
-                                    {"time", c.words.time(c.year.place.zone.civil(when.at))}}));
+                                   {{"weekday", c.words.weekday_short(weekday_of(moment.date()))},
+                                    {"date", c.words.day_month(moment.date())},
+                                    {"time", c.words.time(moment)}}));
   if (items.empty())
     return y + set.paragraph(area.x, y, area.width, c.words("show.nothing"), set.body()) - area.y +
            0.8;
-  const std::array<Group, 3> groups = choose(items, number_option(options, "most"));
+  const std::array<Group, 3> groups =
+      choose(items, static_cast<std::size_t>(options.number("most")));
   const std::array<std::string_view, 3> titles{"show.rising", "show.best", "show.last"};
   const auto filled =
       std::count_if(groups.begin(), groups.end(), [](const Group& g) { return !g.empty(); });
