@@ -15,8 +15,9 @@
 //   wide: ten times magnified in binoculars, D times in a telescope of D mm. The bare eye is given
 //   only to what observers call bare-eye objects (ShowObject::bare_eye): enough light in all is not
 //   yet a sight. What moonlight and twilight take counts 1.3 times for nebulae, galaxies and star
-//   clouds, whose faint edges go first; and no galaxy is offered while a Moon more than three
-//   quarters lit is 5 degrees up (common practice).
+//   clouds, whose faint edges go first; and while a Moon more than three quarters lit is 5 degrees
+//   up, no galaxy is offered, and no nebula fainter than 21 magnitudes a square arcsecond in the
+//   mean (common practice; the number is this project's own).
 // The sky's brightness follows from the faintest star by B. E. Schaefer 1990, PASP 102, 212, as in
 // sky/brightness.cpp, turned round. The faintest star is the zenith's; lower down an ordinary
 // night takes 0.25 magnitude for each further air mass (common practice), 1 / sine of the altitude.
@@ -49,7 +50,8 @@ constexpr Days two_months(60);
 // A thinner crescent does not stand in a dark sky (common practice).
 constexpr double moon_lit_from = 0.01;
 constexpr double dimming_of_extended = 1.3;
-constexpr double moon_hides_galaxies_from = 0.75;  // lit
+constexpr double moon_hides_faint_things_from = 0.75;  // lit
+constexpr double drowned_surface = 21.0;               // magnitudes per square arcsecond
 
 /// Magnitudes that an opening gains on the bare eye.
 double gain(double opening_mm) {
@@ -72,11 +74,24 @@ bool shows_double(const ShowObject& pair, double faintest_star, double opening_m
   return opening_mm > binoculars_mm || separation * binoculars_magnify >= gap_arcsec;
 }
 
+/// Mean over the object, V magnitudes per square arcsecond.
+double surface_brightness(const ShowObject& object) {
+  const double width = object.size.arcseconds();
+  return object.magnitude +
+         2.5 * std::log10(std::numbers::pi / 4.0 * width * width * object.axis_ratio);
+}
+
+bool drowns_in_moonlight(const ShowObject& object) {
+  const bool nebula =
+      object.sort == ShowClass::nebula || object.sort == ShowClass::planetary_nebula;
+  return object.sort == ShowClass::galaxy ||
+         (nebula && surface_brightness(object) > drowned_surface);
+}
+
 bool shows_extended(const ShowObject& object, double faintest_star, double opening_mm) {
   const double width = object.size.arcseconds();
-  const double area = std::numbers::pi / 4.0 * width * width * object.axis_ratio;
-  const double below_sky = std::max(
-      0.0, object.magnitude + 2.5 * std::log10(area) - sky_surface_brightness(faintest_star));
+  const double below_sky =
+      std::max(0.0, surface_brightness(object) - sky_surface_brightness(faintest_star));
   double allowance = 0.5 * below_sky;
   if (object.sort == ShowClass::open_cluster) {
     allowance = std::min(allowance, 2.0);
@@ -194,12 +209,12 @@ void add_objects(const SiteSky& sky, const Place& site, const SkyLight& light, U
   const Eigen::Matrix3d to_date = sky.ephemeris().icrs_to_date(now);
   const Eigen::Vector3d velocity = sky.ephemeris().earth_velocity(now);
   const double years = now.julian_centuries() * 100.0;
-  const bool bright_moon = light.moon_lit > moon_hides_galaxies_from &&
+  const bool bright_moon = light.moon_lit > moon_hides_faint_things_from &&
                            refracted(light.moon).altitude >= least_bright_height;
   const std::span<const ShowObject> objects = show_objects();
   for (std::size_t i = 0; i < objects.size(); ++i) {
     const ShowObject& object = objects[i];
-    if (object.sort == ShowClass::galaxy && bright_moon) continue;
+    if (bright_moon && drowns_in_moonlight(object)) continue;
     Eigen::Vector3d place = object.direction;
     if (object.star >= 0)
       place += years * stars()[static_cast<std::size_t>(object.star)].proper_motion;

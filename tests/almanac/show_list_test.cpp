@@ -118,9 +118,10 @@ TEST(ShowList, BareEyeIsForBareEyeObjects) {
 
 // Under a Moon nearly full and high no galaxy is offered, bright nebulae and clusters are (common
 // practice); the same hour a fortnight before or after, without the Moon, offers galaxies.
-TEST(ShowList, MoonlightTakesGalaxies) {
+// Helix is a faint glow half as wide as the Moon: it once stood on a sheet for a full-Moon night.
+TEST(ShowList, MoonlightTakesGalaxiesAndFaintNebulae) {
   const Site site(-0.4, 37, "Africa/Nairobi", 6.0);
-  int moonlit = 0, others = 0, dark_galaxies = 0;
+  int moonlit = 0, others = 0, dark_galaxies = 0, helix = 0;
   for (const Night& night : site.year.nights) {
     const Ut t = site.year.place.zone.instant(night.date, std::chrono::hours(22));
     const SkyLight light = sky_light(site.sky, 6.0, t);
@@ -132,6 +133,8 @@ TEST(ShowList, MoonlightTakesGalaxies) {
       if (item.body) continue;
       const ShowObject& o = show_objects()[static_cast<std::size_t>(item.object)];
       if (o.sort != ShowClass::galaxy) {
+        EXPECT_FALSE(bright && o.code == "NGC 7293") << iso_date(night.date);
+        helix += o.code == "NGC 7293";
         others += bright;
         continue;
       }
@@ -142,6 +145,7 @@ TEST(ShowList, MoonlightTakesGalaxies) {
   EXPECT_GT(moonlit, 20);
   EXPECT_GT(others, 300);
   EXPECT_GT(dark_galaxies, 300);
+  EXPECT_GT(helix, 10);
 }
 
 // What never sets has no last chance: its lower culmination is above the horizon.

@@ -192,8 +192,7 @@ TEST(Press, SaysThatOwnWordsHardlyFit) {
   const Answer answer = run(folder, {"press", "o.yaml"});
   EXPECT_EQ(answer.code, 0);
   EXPECT_EQ(answer.err, "1 file has a page whose words hardly fit; see the report in out\n");
-  EXPECT_THAT(bytes_of(folder.file("out/report.csv")),
-              HasSubstr(",pressed,a page is reduced to "));
+  EXPECT_THAT(bytes_of(folder.file("out/report.csv")), HasSubstr(",pressed,a page is reduced to "));
 }
 
 }  // namespace
