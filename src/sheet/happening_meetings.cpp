@@ -11,9 +11,7 @@ namespace {
 constexpr double rank_covered_bright = 0.8, rank_covered = 2.6, rank_covered_faint = 3.4;
 constexpr Angle least_height_of_faint = Angle::from_degrees(10);
 
-const Target& target_of(int index) { return targets()[static_cast<std::size_t>(index)]; }
-bool is_moon(const Target& t) { return t.sort == Target::Sort::body && t.body == Body::moon; }
-bool is_planet(const Target& t) { return t.sort == Target::Sort::body && t.body != Body::moon; }
+bool is_planet(const Target& t) { return t.is_body() && !t.is_moon(); }
 bool is_faint_planet(const Target& t) {
   return is_planet(t) && (t.body == Body::uranus || t.body == Body::neptune);
 }
@@ -27,7 +25,7 @@ constexpr Angle least_height = Angle::from_degrees(3);
 /// Whether a contact can be watched: a bright edge drowns all but the brightest stars, and so does
 /// a sky that is not dark (common practice).
 bool observable(const HappeningWriter& w, const Occultation& o, const LimbContact& contact) {
-  const Target& t = target_of(o.target);
+  const Target& t = target_at(o.target);
   const Horizontal place = HappeningWriter::apparent(contact.place);
   if (!contact.up || place.altitude < least_height || w.behind_skyline(place)) return false;
   const bool bright = (is_planet(t) && !is_faint_planet(t)) || is_bright_star(t);
@@ -47,7 +45,7 @@ Told write_occultations(HappeningWriter& w) {
   for (const Occultation& o : w.context().happenings.occultations) {
     const bool goes = observable(w, o, o.disappears), returns = observable(w, o, o.reappears);
     if (!goes && !returns) continue;
-    const Target& t = target_of(o.target);
+    const Target& t = target_at(o.target);
     const std::string name = w.target(t);
     const LimbContact& first = goes ? o.disappears : o.reappears;
     const std::string place = w.place(HappeningWriter::apparent(first.place));
@@ -78,7 +76,7 @@ Told write_occultations(HappeningWriter& w) {
 
 /// How many go out for it: common practice of those who invite people to look.
 double rank_of(const Meeting& m) {
-  const Target &a = target_of(m.closest.a), &b = target_of(m.closest.b);
+  const Target &a = target_at(m.closest.a), &b = target_at(m.closest.b);
   const double apart = m.separation.degrees();
   const auto by_distance = [&](double near, double middle, double far) {
     return apart < 1.5 ? near : apart < 3.5 ? middle : far;
@@ -86,18 +84,20 @@ double rank_of(const Meeting& m) {
   double rank = 4;
   if (is_planet(a) && is_planet(b))
     rank = apart < 1 ? 0.5 : by_distance(1.0, 2.0, 3.0);
-  else if (is_moon(a) && is_planet(b))
+  else if (a.is_moon() && is_planet(b))
     rank = by_distance(1.0, 1.7, 2.3) + (b.body == Body::mercury ? 0.5 : 0.0);
-  else if (is_moon(a) && b.sort == Target::Sort::cluster)
+  else if (a.is_moon() && b.sort == Target::Sort::cluster)
     rank = by_distance(2.0, 2.7, 3.4);
-  else if (is_moon(a))
+  else if (a.is_moon())
     rank = is_bright_star(b) ? by_distance(2.0, 2.8, 3.5) : 4.2;
   else if (is_planet(a))
     rank = by_distance(b.sort == Target::Sort::cluster ? 1.5 : 2.2, 2.9, 3.7);
   rank += 0.01 * apart;
   if (!m.bare_eye) rank += 1.5;
-  // Nobody sees what the hills hide.
-  return m.look->above_skyline ? std::min(rank, fact_rank - 0.1) : fact_rank;
+  if (m.look->above_skyline) return std::min(rank, fact_rank - 0.1);
+  // Nobody sees what the hills hide; but two planets beside each other are worth a walk to a place
+  // without them.
+  return rank < 1 && is_planet(a) ? 3.0 : fact_rank;
 }
 
 // Wider pairs are no sight (about a binocular's field, common practice).
@@ -106,7 +106,7 @@ constexpr Angle widest = Angle::from_degrees(6.0);
 /// As the planets' own block has it; and of those that need optics at the moment itself.
 bool shows_planets(const HappeningWriter& w, const Meeting& m) {
   for (const int index : {m.closest.a, m.closest.b}) {
-    const Target& t = target_of(index);
+    const Target& t = target_at(index);
     if (!is_planet(t)) continue;
     if (w.planet_sight(t.body, w.evening_of(m.look->at)) == PlanetSight::not_visible) return false;
     if (is_faint_planet(t) && (w.sky().altitude(Body::sun, m.look->at) > nautical_altitude ||
@@ -130,12 +130,12 @@ void write_group(HappeningWriter& w, Group group) {
   std::stable_sort(group.meetings.begin(), group.meetings.end(),
                    [](const Meeting* a, const Meeting* b) { return rank_of(*a) < rank_of(*b); });
   const Meeting& first = *group.meetings.front();
-  const std::string a = w.target(target_of(first.closest.a));
+  const std::string a = w.target(target_at(first.closest.a));
   const std::string place = w.place(first.look->place);
   std::string text;
   std::string brief_names;
   if (group.meetings.size() == 1) {
-    brief_names = w.target(target_of(first.closest.b));
+    brief_names = w.target(target_at(first.closest.b));
     text = w.words(
         "meeting",
         {{"a", a}, {"b", brief_names}, {"apart", degrees(w, first.separation)}, {"place", place}});
@@ -143,7 +143,7 @@ void write_group(HappeningWriter& w, Group group) {
     std::string list;
     for (std::size_t i = 0; i < group.meetings.size(); ++i) {
       const Meeting& m = *group.meetings[i];
-      const std::string name = w.target(target_of(m.closest.b));
+      const std::string name = w.target(target_at(m.closest.b));
       const std::string piece =
           w.words("meeting-piece", {{"apart", degrees(w, m.separation)}, {"name", name}});
       if (i > 0) {
@@ -180,10 +180,11 @@ void write_meetings(HappeningWriter& w) {
   std::vector<Group> groups;
   for (const Meeting& m : w.context().happenings.meetings) {
     if (!m.look || m.separation > widest || !w.in_month(w.evening_of(m.look->at))) continue;
-    const Target &a = target_of(m.closest.a), &b = target_of(m.closest.b);
+    const Target &a = target_at(m.closest.a), &b = target_at(m.closest.b);
     // The Moon drowns what needs optics, and two that need them are no sight for beginners.
-    if (!m.bare_eye && (is_moon(a) || is_faint_planet(a) || b.sort != Target::Sort::body)) continue;
-    if (is_moon(a) && std::any_of(told.begin(), told.end(), [&](const auto& t) {
+    if (!m.bare_eye && (a.is_moon() || is_faint_planet(a) || b.sort != Target::Sort::body))
+      continue;
+    if (a.is_moon() && std::any_of(told.begin(), told.end(), [&](const auto& t) {
           return t.first == m.closest.b && std::abs((t.second - m.look->at).count()) < 1.0;
         }))
       continue;
