@@ -17,7 +17,8 @@
 //   yet a sight. What moonlight and twilight take counts 1.3 times for nebulae, galaxies and star
 //   clouds, whose faint edges go first; and while a Moon more than three quarters lit is 5 degrees
 //   up, no galaxy is offered, and no nebula fainter than 21 magnitudes a square arcsecond in the
-//   mean (common practice; the number is this project's own).
+//   mean (common practice; the number is this project's own). Doubles alone are offered until the
+//   Sun is 10 degrees down; such glows, galaxies and star clouds wait until it is 13.
 // The sky's brightness follows from the faintest star by B. E. Schaefer 1990, PASP 102, 212, as in
 // sky/brightness.cpp, turned round. The faintest star is the zenith's; lower down an ordinary
 // night takes 0.25 magnitude for each further air mass (common practice), 1 / sine of the altitude.
@@ -86,6 +87,15 @@ bool drowns_in_moonlight(const ShowObject& object) {
       object.sort == ShowClass::nebula || object.sort == ShowClass::planetary_nebula;
   return object.sort == ShowClass::galaxy ||
          (nebula && surface_brightness(object) > drowned_surface);
+}
+
+/// Stars come out first; glows wait for the night (common practice).
+bool fits_twilight(const ShowObject& object, Angle sun_altitude) {
+  constexpr Angle clusters_from = Angle::from_degrees(-10), glows_from = Angle::from_degrees(-13);
+  const bool glow = object.sort == ShowClass::galaxy || object.sort == ShowClass::star_cloud ||
+                    surface_brightness(object) > drowned_surface;
+  return object.sort == ShowClass::double_star ||
+         sun_altitude < (glow ? glows_from : clusters_from);
 }
 
 bool shows_extended(const ShowObject& object, double faintest_star, double opening_mm) {
@@ -215,6 +225,7 @@ void add_objects(const SiteSky& sky, const Place& site, const SkyLight& light, U
   for (std::size_t i = 0; i < objects.size(); ++i) {
     const ShowObject& object = objects[i];
     if (bright_moon && drowns_in_moonlight(object)) continue;
+    if (!fits_twilight(object, light.sun_altitude)) continue;
     Eigen::Vector3d place = object.direction;
     if (object.star >= 0)
       place += years * stars()[static_cast<std::size_t>(object.star)].proper_motion;

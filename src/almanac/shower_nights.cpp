@@ -25,7 +25,8 @@
 // hour or none (International Meteor Organization, 2025 Meteor Shower Calendar: it lists their ZHR
 // as variable), and an outburst cannot be promised.
 // What spoils it: too few meteors where their number decides and this sky would not give the next
-// better grade with the radiant overhead at the peak, without Moon or twilight; else what leaves
+// better grade with the radiant overhead at the peak, without Moon or twilight, unless these take
+// half of them or more; else what leaves
 // least, of Moon, twilight, the altitude (its sine) and the hour's distance from the peak: of those
 // whose own grade is the verdict, or, where the number decides, of those whose own grade is not
 // good if there are any, so that a radiant 30 degrees high takes no blame from the Moon.
@@ -298,7 +299,9 @@ SiteShower judge(const SiteSky& sky, double limit, const ShowerPeak& peak, Date 
   if (row.verdict == Verdict::good) return row;
   const bool rate_decides = by_rate == row.verdict;
   const double overhead = zhr * std::pow(shower.population_index, limit - dark_limit);
-  if (rate_decides && grade_of_rate(overhead) >= row.verdict) {
+  // Where the Moon or twilight takes most of them, people ask for that, few as they are.
+  const double taken = std::min(moon, twilight);
+  if (rate_decides && grade_of_rate(overhead) >= row.verdict && taken > 0.5) {
     row.spoiler = Spoiler::few_meteors;
     return row;
   }

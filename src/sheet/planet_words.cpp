@@ -79,8 +79,13 @@ std::string window_words(const Teller& c, const PlanetWindow& w, bool brief = fa
   const bool climbs = w.highest && *w.highest - w.from > later;
   const bool from_dusk = w.begins != WindowEdge::height, to_dawn = w.ends != WindowEdge::height;
   if (from_dusk && to_dawn) {
-    if (!w.highest)
-      return c.words("planet-words.all-night-best", {{"place", place_words(c, w.at_best, false)}});
+    if (!w.highest) {
+      // Without a transit in it, it stands highest at an end, if not when it is best looked at.
+      const Horizontal* highest = &w.at_best;
+      for (const Horizontal* end : {&w.at_from, &w.at_to})
+        if (end->altitude > highest->altitude) highest = end;
+      return c.words("planet-words.all-night-best", {{"place", place_words(c, *highest, false)}});
+    }
     return c.words(
         "planet-words.all-night-highest",
         {{"time", clock(c, *w.highest)}, {"place", place_words(c, *w.at_highest, false)}});
@@ -91,10 +96,11 @@ std::string window_words(const Teller& c, const PlanetWindow& w, bool brief = fa
       if (length <= longest_length) return beside_the_sun(c, w, true, length, brief);
     }
     const std::string place = place_words(c, w.at_from, true);
-    return climbs ? c.words("planet-words.nightfall-highest",
-                            {{"place", place}, {"time", clock(c, *w.highest)}})
-                  : c.words("planet-words.nightfall-sets",
-                            {{"place", place}, {"time", clock(c, w.sets.value_or(w.to))}});
+    if (climbs)
+      return c.words("planet-words.nightfall-highest",
+                     {{"place", place}, {"time", clock(c, *w.highest)}});
+    return c.words(w.sets ? "planet-words.nightfall-sets" : "planet-words.nightfall-low",
+                   {{"place", place}, {"time", clock(c, w.sets.value_or(w.to))}});
   }
   if (w.ends == WindowEdge::twilight) {
     if (w.sunrise) {
@@ -120,7 +126,7 @@ std::string with_dates(const Teller& c, const std::string& phrase, const std::op
   };
   const bool late = first && day_of(*first) > 1;
   const bool early = last && day_of(*last) < c.days;
-  if (late && early && *first == *last)
+  if (first && last && *first == *last)
     return c.words("planet-words.on", {{"phrase", phrase}, {"day", day_words(*first)}});
   if (late && early)
     return c.words("planet-words.between",

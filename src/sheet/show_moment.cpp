@@ -31,7 +31,7 @@ std::optional<ShowMoment> session_moment(const BlockContext& c, const SiteSky& s
       if (dusk && *dusk > at)
         at = session.to ? std::max(at, std::min(*dusk, instant(*session.to))) : *dusk;
       if (sky.altitude(Body::sun, at) > sun_rise_altitude) continue;
-      found = ShowMoment{date, at, true};
+      found = ShowMoment{date, at, true, false};
       break;  // its dates ascend
     }
   }
@@ -53,11 +53,11 @@ ShowMoment show_moment(const BlockContext& c) {
       rank_nights(c.ephemeris, c.year, dates, {}, Aim::any, &c.happenings);
   // Where no night has any darkness, none is better than the charts' own.
   if (ranks.empty() || ranks.front().dark_rounded == 0)
-    return {c.evening().date, c.evening().moment, false};
+    return {c.evening().date, c.evening().moment, false, false};
   const Date best = ranks.front().date;
   const Night& night = nights[static_cast<std::size_t>((best - nights.front().date).count())];
   const ChartHour& hour = c.year.place.chart_hours[static_cast<std::size_t>(month - 1)];
-  return {best, evening_moment(sky, c.year.place.zone, hour, night).moment, false};
+  return {best, evening_moment(sky, c.year.place.zone, hour, night).moment, false, true};
 }
 
 }  // namespace duskleaf

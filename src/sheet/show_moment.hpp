@@ -9,6 +9,7 @@ struct ShowMoment {
   Date evening;
   Ut at;
   bool session;  // one of the group's own
+  bool dark;     // where it is none: the month's best night, which has dark hours
 };
 /// The month's first session by date, from its beginning on: when the Sun is 12 degrees down,
 /// within the session's hours, where the Sun has set by then. Without one the month's best night

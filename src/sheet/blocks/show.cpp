@@ -155,7 +155,10 @@ double draw_group(const BlockContext& c, const Group& group, std::string_view ti
   Style quiet = cell;
   quiet.ink = c.theme.soft;
   const double pitch = cell.size_pt * mm_per_pt * 1.17;
-  const double takes_x = room.right() - 18.5, where_right = takes_x - 1.5;
+  double takes_width = 18.5;
+  for (const ShowItem* item : group)
+    takes_width = std::max(takes_width, set.width(opening_text(c, *item), quiet));
+  const double takes_x = room.right() - takes_width, where_right = takes_x - 1.5;
   // Above its things where the groups stand side by side, else before them.
   const double first_x = beside ? room.x : room.x + 16.5;
   double y = room.y;
@@ -190,10 +193,13 @@ double draw_show(const BlockContext& c, const BlockOptions& options, const Box& 
   Setter set(c, out);
   double y =
       area.y + set.heading(area.x, area.y, area.width, c.words("show.title"),
-                           c.words(when.session ? "show.aside" : "show.aside-best",
-                                   {{"weekday", c.words.weekday_short(weekday_of(moment.date()))},
-                                    {"date", c.words.day_month(moment.date())},
-                                    {"time", c.words.time(moment)}}));
+                           c.words(when.dark ? "show.aside-best" : "show.aside",
+                                   {{"weekday", c.words.weekday_short(weekday_of(when.evening))},
+                                    {"date", c.words.day_month(when.evening)},
+                                    {"time", moment.date() == when.evening
+                                                 ? c.words.time(moment)
+                                                 : c.words("show.after-midnight",
+                                                           {{"time", c.words.time(moment)}})}}));
   if (items.empty())
     return y + set.paragraph(area.x, y, area.width, c.words("show.nothing"), set.body()) - area.y +
            0.8;
