@@ -184,8 +184,11 @@ double draw_constellations(const BlockContext& c, const BlockOptions& options, c
   Setter set(c, out);
   const EveningSky& evening = c.evening();
   const CivilMinute moment = c.year.place.zone.civil(evening.moment);
+  const int left_out = options.number("leave-out");
+  // The table's key stands beside the table alone.
+  const bool table_drawn = evening.shift != EveningShift::no_stars && left_out < 3;
   const std::string when =
-      c.words("constellations.aside",
+      c.words(table_drawn ? "constellations.aside" : "constellations.aside-plain",
               {{"date", c.words.day_month(moment.date())}, {"time", c.words.time(moment)}});
   double y =
       area.y + set.heading(area.x, area.y, area.width, c.words("constellations.title"), when);
@@ -196,7 +199,6 @@ double draw_constellations(const BlockContext& c, const BlockOptions& options, c
                                  : c.words("constellations.too-bright");
     return y + set.paragraph(area.x, y, area.width, text, set.body()) - area.y;
   }
-  const int left_out = std::stoi(options.get("leave-out"));
   const Style quiet{Face::condensed, c.theme.table_pt, c.theme.soft};
   std::vector<Run> rest;
   const auto list = [&](const std::string& title,

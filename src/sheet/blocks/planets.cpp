@@ -53,8 +53,12 @@ void draw_numbers(const BlockContext& c, Setter& set, const PlanetMonth& p, doub
 double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
                     std::vector<Mark>& out) {
   Setter set(c, out);
+  const std::vector<PlanetMonth> months = planet_month(c.ephemeris, c.year, c.month_index);
+  const bool any_seen = std::any_of(months.begin(), months.end(), [](const PlanetMonth& p) {
+    return p.sight != PlanetSight::not_visible;
+  });
   double y = area.y + set.heading(area.x, area.y, area.width, c.words("planets.title"),
-                                  c.words("planets.aside"));
+                                  any_seen ? c.words("planets.aside") : std::string());
   Style cell = set.table();
   cell.size_pt = c.theme.table_pt;
   Style head = cell, quiet = cell;
@@ -63,11 +67,13 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
   const double best_room = c.order.clock_12 ? 12 : 8.5;
   const double name_room = 12.5, text_x = area.x + name_room;
   const double text_room = right - best_back - best_room - text_x;
-  set.right(right - best_back, y + 2.2, c.words("planets.best"), head);
-  set.right(right - where_back, y + 2.2, c.words("planets.where"), head);
-  set.right(right - magnitude_back, y + 2.2, c.words("planets.magnitude"), head);
-  set.right(right - size_back, y + 2.2, c.words("planets.size"), head);
-  y += 3.0;
+  if (any_seen) {
+    set.right(right - best_back, y + 2.2, c.words("planets.best"), head);
+    set.right(right - where_back, y + 2.2, c.words("planets.where"), head);
+    set.right(right - magnitude_back, y + 2.2, c.words("planets.magnitude"), head);
+    set.right(right - size_back, y + 2.2, c.words("planets.size"), head);
+    y += 3.0;
+  }
   // Planets in turn that are out of sight for the same reason share a row; nothing to measure of
   // them, so that it has all of its width.
   std::string names, hidden;
@@ -82,7 +88,7 @@ double draw_planets(const BlockContext& c, const BlockOptions&, const Box& area,
     names.clear();
     hidden.clear();
   };
-  for (const PlanetMonth& p : planet_month(c.ephemeris, c.year, c.month_index)) {
+  for (const PlanetMonth& p : months) {
     const bool seen = p.sight != PlanetSight::not_visible;
     const std::string name = c.words("body." + std::string(body_name(p.planet)));
     const std::string sentence = planet_sentence(c, p);
