@@ -116,10 +116,7 @@ void search(double first, double end, std::vector<Found>& all) {
 }  // namespace
 
 int main(int argc, char** argv) {
-  if (argc != 2) return 2;
-  swe_set_ephe_path(const_cast<char*>("/usr/share/libswe/ephe"));
-  std::FILE* out = std::fopen(argv[1], "w");
-  if (!out) return 4;
+  std::FILE* out = open_output(argc, argv);
   std::fputs(
       "# Every least geocentric separation below 5.001 degrees, both 11.999 degrees or more from "
       "the "

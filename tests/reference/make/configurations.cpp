@@ -112,10 +112,7 @@ void search(double first, double end, std::vector<Found>& all) {
 }  // namespace
 
 int main(int argc, char** argv) {
-  if (argc != 2) return 2;
-  swe_set_ephe_path(const_cast<char*>("/usr/share/libswe/ephe"));
-  std::FILE* out = std::fopen(argv[1], "w");
-  if (!out) return 4;
+  std::FILE* out = open_output(argc, argv);
   std::fputs(
       "# Every configuration of the planets in the UT years 2020 to 2035: oppositions (value au), "
       "conjunctions, stations,\n# greatest elongations (value deg).\n",

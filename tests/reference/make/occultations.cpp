@@ -168,14 +168,8 @@ void encounter(std::FILE* out, const Target& target, double about) {
 }  // namespace
 
 int main(int argc, char** argv) {
-  if (argc != 2) {
-    std::fprintf(stderr, "usage: occultations OUT.csv\n");
-    return 2;
-  }
-  swe_set_ephe_path(const_cast<char*>("/usr/share/libswe/ephe"));
+  std::FILE* out = open_output(argc, argv);
   check_sidereal_time();
-  std::FILE* out = std::fopen(argv[1], "w");
-  if (!out) return 4;
   std::fputs(
       "# Occultations by the Moon of planets' centres and stars (V <= 3.5) at invented sites, "
       "2020-2035: all with a contact at which the\n"

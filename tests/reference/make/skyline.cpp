@@ -67,14 +67,8 @@ double excess(const Site& site, const std::vector<Point>& line, Vec sun, double 
 }  // namespace
 
 int main(int argc, char** argv) {
-  if (argc != 2) {
-    std::fprintf(stderr, "usage: skyline OUT.csv\n");
-    return 2;
-  }
-  swe_set_ephe_path(const_cast<char*>("/usr/share/libswe/ephe"));
+  std::FILE* out = open_output(argc, argv);
   check_sidereal_time();
-  std::FILE* out = std::fopen(argv[1], "w");
-  if (!out) return 4;
   std::fputs(
       "# When the top of the Sun first clears an invented skyline (azimuth:altitude, degrees) on a "
       "UT date and when it is last gone.\n"

@@ -81,14 +81,8 @@ void write(std::FILE* out, const Site* site, int planet, double about) {
 }  // namespace
 
 int main(int argc, char** argv) {
-  if (argc != 2) {
-    std::fprintf(stderr, "usage: sun_transits OUT.csv\n");
-    return 2;
-  }
-  swe_set_ephe_path(const_cast<char*>("/usr/share/libswe/ephe"));
+  std::FILE* out = open_output(argc, argv);
   check_sidereal_time();
-  std::FILE* out = std::fopen(argv[1], "w");
-  if (!out) return 4;
   std::fputs(
       "# Transits of Mercury and Venus over the Sun, 1972-2060, from the Earth's centre (site -) "
       "and from invented sites, the Sun up or\n"

@@ -125,6 +125,17 @@ inline void write_source(std::FILE* out, const char* generator) {
                generator);
 }
 
+// The file that the one argument names, to be written; ends the program where there is none.
+inline std::FILE* open_output(int argc, char** argv) {
+  std::FILE* out = argc == 2 ? std::fopen(argv[1], "w") : nullptr;
+  if (!out) {
+    std::fprintf(stderr, "usage: %s OUT.csv\n", argv[0]);
+    std::exit(2);
+  }
+  swe_set_ephe_path(const_cast<char*>("/usr/share/libswe/ephe"));
+  return out;
+}
+
 // Two ways to the sidereal time must agree, s.
 inline void check_sidereal_time() {
   double worst = 0;
