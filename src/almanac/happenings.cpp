@@ -56,9 +56,9 @@ SiteHappenings make_site_happenings(const YearEphemeris& ephemeris, const SiteYe
   for (const LunarEclipse& eclipse : sky_year.lunar_eclipses)
     site.lunar_eclipses.push_back(at_site(sky, eclipse));
   for (const SolarEclipse& eclipse : sky_year.solar_eclipses)
-    if (auto seen = at_site(sky, eclipse)) site.solar_eclipses.push_back(std::move(*seen));
+    if (const auto seen = at_site(sky, eclipse)) site.solar_eclipses.push_back(*seen);
   for (const SunTransit& transit : sky_year.sun_transits)
-    if (auto seen = at_site(sky, transit)) site.sun_transits.push_back(std::move(*seen));
+    if (const auto seen = at_site(sky, transit)) site.sun_transits.push_back(*seen);
   if (parts.looks) {
     site.meetings = meetings(sky, year, sky_year.approaches);
     site.showers = shower_nights(sky, year, sky_year.shower_peaks);

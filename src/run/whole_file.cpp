@@ -50,7 +50,7 @@ bool is_device_or_pipe(const fs::path& path) {
 
 }  // namespace
 
-WholeFile::WholeFile(fs::path path) : path_(target_of(path)) {
+WholeFile::WholeFile(const fs::path& path) : path_(target_of(path)) {
   make_folders(path_.parent_path());
   if (!is_device_or_pipe(path_)) part_ = part_beside(path_);
   stream_.open(part_.empty() ? path_ : part_, std::ios::binary | std::ios::trunc);

@@ -12,7 +12,7 @@ namespace duskleaf {
 class WholeFile {
  public:
   /// Folders on the way are made. Throws FileError.
-  explicit WholeFile(std::filesystem::path);
+  explicit WholeFile(const std::filesystem::path&);
   ~WholeFile();
   WholeFile(const WholeFile&) = delete;
   WholeFile& operator=(const WholeFile&) = delete;

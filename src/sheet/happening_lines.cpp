@@ -81,7 +81,7 @@ std::string HappeningWriter::target(const Target& target) const {
   if (target.star < 0) return std::string(target.name);
   const Star& star = stars()[static_cast<std::size_t>(target.star)];
   const std::string_view letter = star.bayer.empty() ? star.flamsteed : star.bayer;
-  const std::string designation =
+  std::string designation =
       std::string(letter) + "\u00A0" +
       std::string(constellations()[static_cast<std::size_t>(star.constellation)].genitive);
   if (star.name.empty()) return designation;

@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <fmt/format.h>
+#include <utility>
 #include <variant>
 
 namespace duskleaf {
@@ -124,11 +125,11 @@ bool counts_darkest(const std::vector<const Night*>& nights) {
 }
 
 bool has_skyline_times(const BlockContext& c) {
-  const auto [year, month] = c.year.span.month(c.month_index);
-  return std::any_of(
-      c.happenings.skyline.begin(), c.happenings.skyline.end(), [&](const SkylineDay& day) {
-        return year_of(day.date) == year && month_of(day.date) == month && (day.clears || day.gone);
-      });
+  const std::pair<int, int> month = c.year.span.month(c.month_index);
+  for (const SkylineDay& day : c.happenings.skyline)
+    if (std::pair(year_of(day.date), month_of(day.date)) == month && (day.clears || day.gone))
+      return true;
+  return false;
 }
 
 NightColumns night_columns(const BlockContext& c, const std::vector<const Night*>& nights,

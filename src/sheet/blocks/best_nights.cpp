@@ -148,7 +148,7 @@ std::string aside(const BlockContext& c, const Choice& choice, Angle dark_limit,
   std::string key = darkest ? "best-nights.darkest-" : "best-nights.aim-";
   key += aims[static_cast<std::size_t>(choice.aim)];
   if (brief) key += "-brief";
-  const std::string text = c.words(key, {{"n", c.words.number(-dark_limit.degrees(), 0)}});
+  std::string text = c.words(key, {{"n", c.words.number(-dark_limit.degrees(), 0)}});
   if (!choice.window) return text;
   return c.words("best-nights.aside-window",
                  {{"window", window_text(c, *choice.window)}, {"aim", text}});
@@ -171,7 +171,7 @@ bool too_bright(const BlockContext& c, const Choice& choice) {
 
 /// "Too bright at 19:00-21:00 all month. Darkest: Thu 1, 22:26-03:05."
 std::string none_dark_text(const BlockContext& c, const Choice& choice) {
-  const std::string text =
+  std::string text =
       c.words(too_bright(c, choice) ? "best-nights.too-bright" : "best-nights.never-dark",
               {{"window", window_text(c, *choice.window)}});
   const std::vector<NightRank> ranks =

@@ -22,7 +22,7 @@ namespace {
 using Group = std::vector<const ShowItem*>;
 
 std::string body_text(const BlockContext& c, Body body, Ut moment) {
-  const std::string name = c.words("body." + std::string(body_name(body)));
+  std::string name = c.words("body." + std::string(body_name(body)));
   const Tt t = to_tt(moment);
   switch (body) {
     case Body::moon: {
@@ -54,7 +54,7 @@ std::string body_text(const BlockContext& c, Body body, Ut moment) {
 /// "Albireo in Cygnus, double: gold and blue", "η in Cassiopeia, double".
 std::string double_text(const BlockContext& c, const ShowObject& o, const std::string& area) {
   const std::string letter(o.code.substr(0, o.code.rfind(' ')));
-  const std::string text =
+  std::string text =
       o.name.empty()
           ? c.words("show.plain-double", {{"letter", letter}, {"area", area}})
           : c.words("show.named-double",
