@@ -193,7 +193,7 @@ std::vector<Occultation> occultations(const SiteSky& sky, Ut from, Ut to) {
       // Over a year aberration and precession move it by less than path_bend.
       const Vector direction = apparent_direction(ephemeris, target, middle);
       add_visits(
-          path, [&](std::size_t) { return direction; }, visits);
+          path, [&](std::size_t) -> const Vector& { return direction; }, visits);
     } else if (target.sort == Target::Sort::body && target.body != Body::moon &&
                target.body != Body::sun) {
       add_visits(
