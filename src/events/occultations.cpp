@@ -151,7 +151,7 @@ void add_visits(const MoonPath& path, const F& direction, std::vector<Visit>& vi
   // The Moon and a target part by at most 4 degrees in a lap.
   const double near = std::cos(geocentric_reach + Angle::from_degrees(4.2).radians());
   for (std::size_t i = 0; i + 1 < path.times.size(); ++i) {
-    const Vector here = direction(i);
+    const Vector& here = direction(i);
     if (path.moon[i].dot(here) < near) continue;
     const Vector before = path.moon[i] - here, after = path.moon[i + 1] - direction(i + 1);
     const Vector moved = after - before;
