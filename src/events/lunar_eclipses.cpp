@@ -23,6 +23,7 @@
 
 #include "ephemeris/constants.hpp"
 #include "events/search.hpp"
+#include "events/syzygies.hpp"
 #include "sky/moon_look.hpp"
 
 namespace duskleaf {
@@ -30,7 +31,7 @@ namespace {
 
 constexpr double enlargement = 1.01;
 // Past 1.6 degrees of latitude at full Moon the penumbra is missed.
-constexpr double largest_latitude_degrees = 1.7;
+constexpr Angle largest_latitude = Angle::from_degrees(1.7);
 constexpr double half_span_days = 4.0 / 24.0, tolerance_days = 0.005 / 86400.0;
 
 struct Shadow {
@@ -132,26 +133,8 @@ std::string_view eclipse_name(LunarEclipseKind kind) {
 
 std::vector<LunarEclipse> lunar_eclipses(const YearEphemeris& ephemeris, Ut from, Ut to) {
   std::vector<LunarEclipse> found;
-  if (!(from < to)) return found;
-  SearchOptions options;
-  options.step = Days(1);
-  options.look_for_grazes = false;
-  options.falling = false;  // new Moons
-  options.tolerance = Seconds(60);
-  const auto opposition = [&](Ut t) {
-    const Tt tt = to_tt(t);
-    return sin(ephemeris.ecliptic_longitude(Body::sun, tt) -
-               ephemeris.ecliptic_longitude(Body::moon, tt));
-  };
-  // Greatest eclipse is within an hour of full Moon.
-  const Days margin(1.0 / 12.0);
-  const Ut first = std::max(from - margin, to_ut(ephemeris.from())),
-           last = std::min(to + margin, to_ut(ephemeris.to()));
-  for (const Crossing& full_moon : find_crossings(opposition, first, last, options)) {
-    const Tt about = to_tt(full_moon.at);
-    if (std::abs(ephemeris.ecliptic_latitude(Body::moon, about).degrees()) >
-        largest_latitude_degrees)
-      continue;
+  for (const Tt about :
+       syzygies_near_node(ephemeris, Syzygy::full_moon, largest_latitude, from, to)) {
     const std::optional<LunarEclipse> e = eclipse_near(ephemeris, about);
     if (e && e->greatest >= from && e->greatest < to) found.push_back(*e);
   }

@@ -16,13 +16,14 @@
 
 #include "events/besselian_elements.hpp"
 #include "events/search.hpp"
+#include "events/syzygies.hpp"
 
 namespace duskleaf {
 namespace {
 
 // Past 1.6 degrees of latitude at new Moon no part of the penumbra meets the Earth (common
 // practice: 1 degree 35').
-constexpr double largest_latitude_degrees = 1.7;
+constexpr Angle largest_latitude = Angle::from_degrees(1.7);
 constexpr double flattening = 1.0 / 298.257223563;  // WGS 84
 constexpr double swelling = 1.0 / ((1.0 - flattening) * (1.0 - flattening)) - 1.0;
 constexpr double half_span_hours = 4.0, tolerance_hours = 1e-7;
@@ -117,26 +118,8 @@ std::string_view eclipse_name(SolarEclipseKind kind) {
 
 std::vector<SolarEclipse> solar_eclipses(const YearEphemeris& ephemeris, Ut from, Ut to) {
   std::vector<SolarEclipse> found;
-  if (!(from < to)) return found;
-  SearchOptions options;
-  options.step = Days(1);
-  options.look_for_grazes = false;
-  options.falling = false;  // full Moons
-  options.tolerance = Seconds(60);
-  const auto elongation = [&](Ut t) {
-    const Tt tt = to_tt(t);
-    return sin(ephemeris.ecliptic_longitude(Body::moon, tt) -
-               ephemeris.ecliptic_longitude(Body::sun, tt));
-  };
-  // Greatest eclipse is within an hour of new Moon.
-  const Days margin(1.0 / 12.0);
-  const Ut first = std::max(from - margin, to_ut(ephemeris.from())),
-           last = std::min(to + margin, to_ut(ephemeris.to()));
-  for (const Crossing& new_moon : find_crossings(elongation, first, last, options)) {
-    const Tt about = to_tt(new_moon.at);
-    if (std::abs(ephemeris.ecliptic_latitude(Body::moon, about).degrees()) >
-        largest_latitude_degrees)
-      continue;
+  for (const Tt about :
+       syzygies_near_node(ephemeris, Syzygy::new_moon, largest_latitude, from, to)) {
     BesselianElements e = besselian_elements(ephemeris, whole_hour(about));
     double hour = greatest_hour(e);
     if (std::abs(hour) > 0.5) {
